@@ -1,0 +1,103 @@
+"""The same requests from a terminal: `python3 -m gasbasis restate --hold "Hg 1 ppb v/v" --owe "..."`."""
+from __future__ import annotations
+
+import argparse
+import json
+import sys
+
+from gasbasis.answer import answer
+
+FIGURE, NOT_UNDERSTOOD, DOUBTS_OPEN = 0, 2, 3
+
+
+def main(arguments: list[str] | None = None) -> int:
+    """Run one command. Exit status 0: a figure; 3: doubts open; 2: not understood."""
+    options = _parser().parse_args(arguments)
+    reply = json.loads(answer(json.dumps({"task": "restate", "sheet": _sheet(options), "usual": options.usual})))
+    if not reply["ok"]:
+        print(_problem_text(reply["error"]), file=sys.stderr)
+        return NOT_UNDERSTOOD
+    result = reply["answer"]
+    print(json.dumps(result, ensure_ascii=False, indent=1) if options.json else _text(result))
+    return _status(result)
+
+
+def _parser() -> argparse.ArgumentParser:
+    parser = argparse.ArgumentParser(prog="gasbasis", description="Restate a trace-gas concentration on another basis.")
+    commands = parser.add_subparsers(dest="command", required=True)
+    restate = commands.add_parser("restate", help="restate a held statement as an owed figure")
+    restate.add_argument("--hold", required=True, help='what you hold, as written: "NOx 142 ppm dry as NO2"')
+    restate.add_argument("--owe", required=True, help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
+    restate.add_argument("--gas", default="", help='the gas it was in: "12 %% H2O, 9.2 %% O2 dry, ambient O2 20.9 %%"')
+    restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
+    restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
+    restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")
+    return parser
+
+
+def _sheet(options: argparse.Namespace) -> dict:
+    settled = {}
+    for choice in options.settle:
+        doubt, equals, reading = choice.partition("=")
+        if not equals:
+            raise SystemExit(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
+        settled[doubt.strip()] = reading.strip()
+    return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "settled": settled}
+
+
+def _status(result: dict) -> int:
+    if result["figure"]:
+        return FIGURE
+    return NOT_UNDERSTOOD if result["problems"] else DOUBTS_OPEN
+
+
+def _text(result: dict) -> str:
+    lines: list[str] = []
+    if result["figure"]:
+        lines.append(result["figure"]["text"])
+    lines.extend(_problem_text(problem) for problem in result["problems"])
+    if result["spread"] and "low" in result["spread"]:
+        ends = result["spread"]
+        lines.append(f"{ends['low']['text']} to {ends['high']['text']} {ends['unit_text']}; {result['sentence']}")
+    for doubt in result["doubts"]:
+        lines.extend(_doubt_lines(doubt))
+    for step in result["working"]:
+        lines.extend(_step_lines(step))
+    return "\n".join(lines)
+
+
+def _problem_text(problem: dict) -> str:
+    where = f"{problem['field']}: " if problem["field"] else ""
+    return f"{where}{problem['message']} {problem['hint']}".strip()
+
+
+def _doubt_lines(doubt: dict) -> list[str]:
+    if doubt["state"] == "settled":
+        reading = next(reading for reading in doubt["readings"] if reading["id"] == doubt["chosen"])
+        because = f" (usual: {reading['usual_because']})" if reading["usual_because"] else ""
+        return [f"settled  {doubt['id']}={reading['id']}: {reading['label']}{because}"]
+    if doubt["state"] == "calm":
+        return [f"quiet    {doubt['id']}: {doubt['effect_text']}"]
+    lines = ["", f"doubt    {doubt['id']} ({doubt['effect_text']}): {doubt['question']}"]
+    for reading in doubt["readings"]:
+        usual = "  usual" if reading["usual_because"] else ""
+        lines.append(f"  {doubt['id']}={reading['id']}: {reading['label']}  {reading['text']}{usual}")
+    return lines
+
+
+def _step_lines(step: dict) -> list[str]:
+    lines = ["", f"{step['number']}. {step['title']}" + (f"  {step['factor_text']}" if step["factor_text"] else "")]
+    lines.extend(f"   {text}" for text in (step["formula_text"], step["substitution_text"]) if text)
+    if step["result"]:
+        lines.append(f"   = {step['result']['text']}")
+    lines.extend(f"     {plain(entry['symbol'])}: {entry['meaning']}, {entry['text']}, {entry['origin_text']}" for entry in step["inputs"])
+    lines.extend(f"   {text}" for text in (step["note"], step["source_text"]) if text)
+    return lines
+
+
+def plain(symbol: list) -> str:
+    return f"{symbol[1]}_{symbol[2]}" if symbol[2] else symbol[1]
+
+
+if __name__ == "__main__":
+    sys.exit(main())

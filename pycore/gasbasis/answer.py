@@ -1,0 +1,80 @@
+"""The one door the page uses: a request as JSON text in, an answer as JSON text out. Never raises."""
+from __future__ import annotations
+
+import json
+import traceback
+from typing import Callable, Mapping
+
+from gasbasis import __version__
+from gasbasis.errors import CoreError, NotUnderstood
+from gasbasis.language.edit import edit
+from gasbasis.records.catalogue import catalogue, search
+from gasbasis.records.restated import restated
+from gasbasis.records.sheet import read_sheet
+
+LONGEST_REQUEST = 200_000              # characters; a sheet is far below, a pasted file far above
+SIDES = ("hold", "gas", "owe", "limit")
+
+
+def answer(request: str) -> str:
+    """Answer one request. `{"ok": true, "answer": ...}` or `{"ok": false, "error": {kind, field, message, hint, span}}`."""
+    try:
+        result = {"ok": True, "answer": respond(_parsed(request))}
+    except CoreError as error:
+        result = {"ok": False, "error": error.as_json()}
+    except Exception as error:          # the door must not raise: what is left is a defect of ours
+        result = {"ok": False, "error": {
+            "kind": "defect", "field": "", "span": None, "message": f"gasbasis failed: {error!r}. Your inputs are kept.",
+            "hint": "Please report it with the texts you typed.", "detail": traceback.format_exc()}}
+    return json.dumps(result, ensure_ascii=False, allow_nan=False)
+
+
+def respond(request: Mapping) -> dict:
+    """The answer to a parsed request. Raises CoreError."""
+    task = request.get("task")
+    if task not in TASKS:
+        raise NotUnderstood(f"There is no task {task!r}.", hint=f"Tasks: {', '.join(TASKS)}.", field="task")
+    return TASKS[task](request)
+
+
+def _parsed(request: str) -> Mapping:
+    if len(request) > LONGEST_REQUEST:
+        raise NotUnderstood(f"The request has {len(request)} characters; {LONGEST_REQUEST} can be read.",
+                            hint="Paste one statement, not a whole file.", field="hold")
+    try:
+        data = json.loads(request)
+    except ValueError as error:
+        raise NotUnderstood(f"The request is not JSON: {error}.", hint="Send one JSON object.") from error
+    if not isinstance(data, Mapping):
+        raise NotUnderstood("The request must be one JSON object.", hint='For example {"task": "catalogue"}.')
+    return data
+
+
+def _restate(request: Mapping) -> dict:
+    return restated(read_sheet(request.get("sheet")), take_usual=request.get("usual") is True)
+
+
+def _edit(request: Mapping) -> dict:
+    texts = {name: request.get(name) for name in ("text", "side", "field", "to")}
+    for name, text in texts.items():
+        if not isinstance(text, str):
+            raise NotUnderstood(f"An edit needs '{name}' as text.", hint="Give side, field, text and to.", field=name)
+    if texts["side"] not in SIDES:
+        raise NotUnderstood(f"There is no side {texts['side']!r}.", hint=f"Sides: {', '.join(SIDES)}.", field="side")
+    return {"text": edit(**texts)}
+
+
+def _search(request: Mapping) -> dict:
+    what, text = request.get("what"), request.get("text")
+    if not isinstance(what, str) or not isinstance(text, str):
+        raise NotUnderstood("A search needs 'what' and 'text'.", hint="For example what 'species', text 'merc'.")
+    return {"found": search(what, text)}
+
+
+TASKS: Mapping[str, Callable[[Mapping], dict]] = {
+    "restate": _restate,
+    "edit": _edit,
+    "search": _search,
+    "catalogue": lambda request: catalogue(),
+    "version": lambda request: {"version": __version__},
+}

@@ -1,0 +1,68 @@
+"""The basis of a figure spelled out in words. No unit ever stands without it."""
+from __future__ import annotations
+
+from gasbasis.calculation.case import VOLUMETRIC, Case, kind_and_factor, stated_oxygen
+from gasbasis.calculation.leaves import kelvin_text
+from gasbasis.calculation.path import Drafting
+from gasbasis.language.basis import Species, Statement
+
+_PARTS = {"volume": "by volume", "mass": "by mass", "mass_by_volume": "mass in volume", None: ""}
+
+
+def unit_words(statement: Statement) -> str:
+    """A unit as we print it; parts say what they are counted by."""
+    unit = statement.unit
+    return f"{unit.text} {_PARTS[statement.parts_by]}".strip() if unit.kind == "parts" else unit.text
+
+
+def species_words(case: Case, entity: Species | None) -> str:
+    species = case.hold.species or case.owe.species
+    named = species.id if species else ""
+    if entity is not None and species is not None and entity.id != species.id:
+        return f"{named} as {entity.id}"
+    return named or (f"as {entity.id}" if entity else "")
+
+
+def basis_words(case: Case, water: str | None, draft: Drafting) -> tuple[str, ...]:
+    """The owed basis, part by part: conditions, water, oxygen, gas, model."""
+    words = []
+    kind, _ = kind_and_factor(case.owe)
+    if kind in VOLUMETRIC:
+        words.append(_conditions(case))
+    if case.owe.total_pressure is not None:
+        words.append(f"in {case.owe.total_pressure.number.text} {case.owe.total_pressure.unit.text}")
+    words.append(water if water is not None else "water: not stated, as held")
+    words.extend(_oxygen(case))
+    matrix = case.hold.matrix_gas or case.gas.matrix_gas or case.owe.matrix_gas
+    if kind == "mass_fraction" and matrix is not None:
+        words.append(_MATRIX[matrix.id])
+    if any(name.startswith("Z_") for name in draft.leaves):
+        words.append("ideal gas")
+    return tuple(words)
+
+
+_MATRIX = {"nitrogen": "in nitrogen", "dry_air": "in dry air", "combustion_gas": "in combustion gas",
+           "stated": "in a gas of stated molar mass", "composition": "in the stated gas"}
+
+
+def _conditions(case: Case) -> str:
+    owe, hold = case.owe, case.hold
+    if owe.actual_volume:
+        return "at the conditions of the gas as it flowed"
+    said = owe if owe.temperature is not None or owe.pressure is not None else hold
+    if said.temperature is None and said.pressure is None:
+        return "temperature and pressure: not stated, as held"
+    temperature = f"{kelvin_text(said.temperature)} K" if said.temperature else "temperature not stated"
+    pressure = f"{said.pressure.number.text} {said.pressure.unit.text}" if said.pressure else "pressure not stated"
+    return f"at {temperature}, {pressure}"
+
+
+def _oxygen(case: Case) -> list[str]:
+    owed, held = stated_oxygen(case.owe), stated_oxygen(case.hold)
+    if owed is not None:
+        return [f"at {owed.number.text} % O₂"]
+    if held is not None and case.owe.oxygen_meaning != "measured":
+        return [f"at {held.number.text} % O₂, as held"]
+    if case.hold.oxygen is not None:
+        return [f"at the measured oxygen, {case.hold.oxygen.number.text} %"]
+    return ["at the measured oxygen"] if case.owe.oxygen_meaning == "measured" else []

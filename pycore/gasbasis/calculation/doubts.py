@@ -1,0 +1,228 @@
+"""What a case leaves open: each rule looks at the case and raises at most one doubt.
+
+A doubt is raised only when the two sides differ in what they state, or when a relation on the way
+needs what is missing. Silence on both sides is carried over and printed.
+"""
+from __future__ import annotations
+
+from typing import Callable
+
+from gasbasis import facts
+from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_FRACTION, MASS_LIKE,
+                                       UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor, same_conditions,
+                                       stated_oxygen)
+from gasbasis.calculation.conditions import conditions_doubt, pressure_doubt, temperature_doubt
+from gasbasis.calculation.leaves import SIDE_TITLES, fixed_quantity
+from gasbasis.language.basis import (CORRECTED, DRY, MASS, MASS_BY_VOLUME, MEASURED, VOLUME, WET, Doubt, MatrixGas,
+                                     Reading)
+from gasbasis.language.species import find
+
+COMMON = "common practice, no source"
+_SIDES = ("hold", "owe")
+
+
+def raised(case: Case) -> list[Doubt]:
+    """The doubts a case raises as it stands, in the order a person would settle them."""
+    doubts = [*case.hold.ambiguities, *case.gas.ambiguities, *case.owe.ambiguities]
+    for rule in _RULES:
+        doubts.extend(rule(case))
+    return doubts
+
+
+def _parts_by(case: Case) -> list[Doubt]:
+    """ppm, ppb, % of what? Asked when the other side says, is of another kind, or the basis changes."""
+    unstated = [side for side in _SIDES if kind_and_factor(case.record(side))[0] == UNSTATED_PARTS]
+    if len(unstated) == 2 and not _basis_changes(case):
+        return []
+    if len(unstated) == 2:
+        unstated = ["hold"] if case.hold.parts_by is None else ["owe"]
+    return [_parts_doubt(case, side) for side in unstated]
+
+
+def _parts_doubt(case: Case, side: str) -> Doubt:
+    unit = case.record(side).unit.text
+    usual = "" if _trade_uses_all_three(case) else "gas analysers and gas limits count parts by volume (common practice)"
+    return Doubt(
+        f"{side}.parts_by", "parts by", f"Is '{unit}' in {SIDE_TITLES[side]} by volume, by mass, or mass in volume?",
+        "By mass the gas that carried it enters; mass in volume is the mass in a litre or cubic metre.",
+        (Reading(VOLUME, "by volume (amount of substance)", (("parts_by", VOLUME),), COMMON, usual),
+         Reading(MASS, "by mass", (("parts_by", MASS),), COMMON),
+         Reading(MASS_BY_VOLUME, "mass in volume", (("parts_by", MASS_BY_VOLUME),), COMMON)))
+
+
+def _trade_uses_all_three(case: Case) -> bool:
+    """Mercury surveys report ppb in all three ways, so none of them is usual."""
+    species = case.hold.species or case.owe.species
+    return species is None or (species.atoms is not None and any(element == "Hg" for element, _ in species.atoms))
+
+
+def _conditions(case: Case) -> list[Doubt]:
+    """The temperature and pressure a volume is counted at."""
+    doubts = []
+    hold_kind, owe_kind = (kind_and_factor(case.record(side))[0] for side in _SIDES)
+    both = hold_kind in VOLUMETRIC and owe_kind in VOLUMETRIC
+    for side, kind in zip(_SIDES, (hold_kind, owe_kind)):
+        if kind not in VOLUMETRIC or case.record(side).actual_volume:
+            continue
+        if both and same_conditions(case.hold, case.owe):
+            continue
+        if not both and not _needs_volume(hold_kind, owe_kind):
+            continue
+        statement = case.record(side)
+        if statement.temperature is None and statement.pressure is None:
+            doubts.append(conditions_doubt(side, statement))
+        elif statement.temperature is None:
+            doubts.append(temperature_doubt(side))
+        elif statement.pressure is None:
+            doubts.append(pressure_doubt(side))
+    return doubts
+
+
+def _needs_volume(hold_kind: str, owe_kind: str) -> bool:
+    """A volume's conditions enter whenever the other side is of a settled, non-volumetric kind."""
+    return UNSTATED_PARTS not in (hold_kind, owe_kind)
+
+
+def _water(case: Case) -> list[Doubt]:
+    """Wet or dry: asked when one side states it and the other does not, or oxygen is corrected."""
+    hold, owe = case.hold, case.owe
+    doubts = []
+    if hold.water is None and (owe.water is not None or _oxygen_changes(case)):
+        doubts.append(_water_doubt("hold", ""))
+    if owe.water is None and (hold.water is not None or _oxygen_changes(case)):
+        usual = "a figure at a reference oxygen is stated on dry gas" if stated_oxygen(owe) else ""
+        doubts.append(_water_doubt("owe", usual))
+    return doubts
+
+
+def _water_doubt(side: str, dry_because: str) -> Doubt:
+    return Doubt(
+        f"{side}.water", "water", f"Is {SIDE_TITLES[side].lower()} on wet or on dry gas?",
+        "Wet gas holds its water vapour, so the same species is a smaller share of it.",
+        (Reading(DRY, "dry", (("water", DRY),), COMMON, dry_because), Reading(WET, "wet", (("water", WET),), COMMON)))
+
+
+def _oxygen_meaning(case: Case) -> list[Doubt]:
+    """'at 9 % O2': measured in the gas, or already corrected to it. On the owed side it is what to correct to."""
+    hold, owe = case.hold, case.owe
+    if hold.oxygen is None or hold.oxygen_meaning is not None:
+        return []
+    if owe.oxygen is None and owe.oxygen_meaning is None and case.gas.oxygen is None:
+        return []
+    percent = hold.oxygen.number.text
+    return [Doubt(
+        "hold.oxygen_meaning", f"{percent} % O₂", f"Is {percent} % the oxygen measured, or the oxygen it is corrected to?",
+        "A measured oxygen is where the correction starts; a corrected value has had it already.",
+        (Reading(MEASURED, "measured in the gas", (("oxygen_meaning", MEASURED),), COMMON),
+         Reading(CORRECTED, "already corrected to it", (("oxygen_meaning", CORRECTED),), COMMON)))]
+
+
+def _owed_oxygen(case: Case) -> list[Doubt]:
+    """The held value is at a reference oxygen and the owed side is silent about it."""
+    held = stated_oxygen(case.hold)
+    if held is None or case.owe.oxygen is not None or case.owe.oxygen_meaning is not None:
+        return []
+    return [Doubt(
+        "owe.oxygen", "oxygen", f"You hold a value at {held.number.text} % O₂. Is the owed figure at the same?",
+        "Left at the reference oxygen the value stays; as measured, the correction is undone.",
+        (Reading("as_held", f"at {held.number.text} % O₂ too", (("oxygen", case.hold.oxygen), ("oxygen_meaning", CORRECTED)),
+                 COMMON),
+         Reading(MEASURED, "as measured in the gas", (("oxygen_meaning", MEASURED),), COMMON)))]
+
+
+def _oxygen_water(case: Case) -> list[Doubt]:
+    """Whether the measured oxygen was read wet or dry; in-situ probes read wet."""
+    if not _corrects_from_measured(case):
+        return []
+    hold, gas = case.hold, case.gas
+    side = "hold" if hold.oxygen is not None and hold.oxygen_meaning == MEASURED else "gas"
+    oxygen, water = (hold.oxygen, hold.oxygen_water or gas.oxygen_water) if side == "hold" else (gas.oxygen, gas.oxygen_water)
+    if oxygen is None or water is not None:
+        return []
+    usual = "measured with a value that is stated dry" if side == "hold" and hold.water == DRY else ""
+    return [Doubt(
+        f"{side}.oxygen_water", "oxygen read", f"Was the oxygen of {oxygen.number.text} % read in wet or in dry gas?",
+        "Extractive analysers behind a cooler read dry gas, probes in the duct read wet gas.",
+        (Reading(DRY, "dry", (("oxygen_water", DRY),), COMMON, usual),
+         Reading(WET, "wet", (("oxygen_water", WET),), COMMON)))]
+
+
+def _ambient_oxygen(case: Case) -> list[Doubt]:
+    """The ambient oxygen an oxygen correction counts from is the rule's own."""
+    if case.gas.ambient_oxygen is not None or not _oxygen_changes(case):
+        return []
+    readings = tuple(
+        Reading(datum.text, f"{datum.text} %", (("ambient_oxygen", fixed_quantity(datum.text, "%")),),
+                f"{facts.source(datum.source).title}, {datum.locator}")
+        for datum in facts.ambient_oxygens())
+    return [Doubt("gas.ambient_oxygen", "ambient oxygen", "Which oxygen content of ambient air does the rule count from?",
+                  "It is the A in (A − reference)/(A − measured); it matters most near ambient oxygen.", readings)]
+
+
+def _reported_as(case: Case) -> list[Doubt]:
+    """NOx, TOC and total sulphur have a mass only 'as' something."""
+    species = case.hold.species or case.owe.species
+    if species is None or not species.needs_reported_as:
+        return []
+    hold_kind, owe_kind = (kind_and_factor(case.record(side))[0] for side in _SIDES)
+    hold, owe = case.hold.reported_as, case.owe.reported_as
+    crosses = (hold_kind in MASS_LIKE) != (owe_kind in MASS_LIKE) and UNSTATED_PARTS not in (hold_kind, owe_kind)
+    counts_one = species.id == "NOx"                 # one nitrogen an entity: amounts are the same as NO or NO2
+    doubts = []
+    if hold is None and (owe is not None or crosses) and not (counts_one and hold_kind not in MASS_LIKE):
+        doubts.append(_as_doubt("hold", species))
+    if owe is None and (hold is not None or crosses) and owe_kind in MASS_LIKE and (hold is None or hold_kind in MASS_LIKE):
+        doubts.append(_as_doubt("owe", species))
+    return doubts if not (hold is None and len(doubts) == 2) else doubts[:1]
+
+
+_AS = {"NOx": ("NO2", "NO"), "total sulphur": ("S", "H2S", "SO2")}
+_AS_ORGANIC = ("C", "propane", "methane")
+
+
+def _as_doubt(side: str, species) -> Doubt:
+    readings = []
+    for name in _AS.get(species.id, _AS_ORGANIC):
+        usual = f"{species.name} is usually reported as {name}" if name == species.usual_reported_as else ""
+        readings.append(Reading(name, f"as {name}", (("reported_as", find(name)),), COMMON, usual))
+    return Doubt(f"{side}.reported_as", "reported as", f"As what is the {species.name} in {SIDE_TITLES[side]} reported?",
+                 f"{species.name} is a sum: its mass, and its count by carbon, depend on what it is reported as.",
+                 tuple(readings))
+
+
+def _matrix_gas(case: Case) -> list[Doubt]:
+    """A mass fraction is a share of the mass of a gas that has to be known."""
+    if case.hold.matrix_gas or case.gas.matrix_gas or case.owe.matrix_gas:
+        return []
+    kinds = [kind_and_factor(case.record(side))[0] for side in _SIDES]
+    if MASS_FRACTION not in kinds or (kinds[0] == kinds[1] and not _basis_changes(case)):
+        return []
+    readings = [Reading("nitrogen", "nitrogen", (("matrix_gas", MatrixGas("nitrogen")),), COMMON),
+                Reading("dry_air", "dry air", (("matrix_gas", MatrixGas("dry_air")),), COMMON)]
+    if case.gas.carbon_dioxide is not None:
+        readings.append(Reading("combustion_gas", "combustion gas of this oxygen and carbon dioxide",
+                                (("matrix_gas", MatrixGas("combustion_gas")),), COMMON))
+    return [Doubt("gas.matrix_gas", "gas", "Which gas carried it?",
+                  "Parts by mass are parts of the mass of that gas: the heavier it is, the fewer.", tuple(readings))]
+
+
+def _oxygen_changes(case: Case) -> bool:
+    held, owed = stated_oxygen(case.hold), stated_oxygen(case.owe)
+    if owed is not None:
+        return held is None or held.si != owed.si
+    return held is not None and case.owe.oxygen_meaning == MEASURED
+
+
+def _corrects_from_measured(case: Case) -> bool:
+    held, owed = stated_oxygen(case.hold), stated_oxygen(case.owe)
+    return _oxygen_changes(case) and (held is None) != (owed is None)
+
+
+def _basis_changes(case: Case) -> bool:
+    hold, owe = case.hold, case.owe
+    water = hold.water is not None and owe.water is not None and hold.water != owe.water
+    return water or _oxygen_changes(case)
+
+
+_RULES: tuple[Callable[[Case], list[Doubt]], ...] = (
+    _parts_by, _conditions, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)

@@ -1,0 +1,122 @@
+"""A path from the held value to the owed figure: leaves (what was typed, read or looked up) and steps.
+
+A path is data. The same path gives the figure with floats, the budget with `uncertainties` numbers
+and a column with array types, because every step is one call of one relation.
+"""
+from __future__ import annotations
+
+from dataclasses import dataclass
+from types import MappingProxyType
+from typing import Mapping
+
+from gasbasis.errors import CoreError
+from gasbasis.relations.relation import Relation
+
+TYPED, TABLE, READING, CONVENTION = "typed", "table", "reading", "convention"
+
+
+@dataclass(frozen=True)
+class Leaf:
+    """A number the path starts from, in SI, with the print of it and where it came from."""
+
+    name: str
+    value: float
+    text: str
+    unit_text: str
+    origin: str                        # TYPED | TABLE | READING | CONVENTION
+    origin_text: str
+    field: str = ""                    # the input it answers to: "hold.value", "gas.water_content"
+
+
+@dataclass(frozen=True)
+class Shown:
+    """How a step's result is printed: SI value / factor, and the unit's text."""
+
+    factor: float = 1.0
+    unit_text: str = ""
+
+
+@dataclass(frozen=True)
+class Step:
+    """One relation with the names its arguments are taken from. `through` is the argument that
+    carries the concentration; None for side steps such as the molar mass of the gas."""
+
+    relation: Relation
+    arguments: Mapping[str, str]
+    result: str
+    shown: Shown
+    label: str = ""
+    through: str | None = None
+    parts: tuple[tuple[str, tuple[tuple[str, str], ...]], ...] = ()   # label, arguments to swap to undo it
+    note: str = ""
+
+
+@dataclass(frozen=True)
+class Choice:
+    """A decision on the way that is no relation: shown in the working with its reason."""
+
+    title: str
+    reason: str
+    source: str = ""
+    before: int = 0                    # shown before the step with this index
+
+
+@dataclass(frozen=True)
+class Path:
+    leaves: Mapping[str, Leaf]
+    steps: tuple[Step, ...]
+    choices: tuple[Choice, ...]
+    held: str                          # the leaf that is the held value
+    held_factor: float                 # SI value of one held unit
+    figure: str                        # the name of the owed result, in SI
+    shown: Shown
+    basis: tuple[str, ...]             # the owed basis in words, part by part
+    species_text: str = ""
+
+
+def evaluate(path: Path, values: Mapping[str, object] = MappingProxyType({})) -> dict[str, object]:
+    """Every named result of the path. `values` replaces leaves (uncertain numbers, columns)."""
+    known: dict[str, object] = {name: leaf.value for name, leaf in path.leaves.items()}
+    known.update(values)
+    checked = not values
+    for step in path.steps:
+        arguments = {argument: known[name] for argument, name in step.arguments.items()}
+        known[step.result] = step.relation.value(**arguments) if checked else step.relation(**arguments)
+    return known
+
+
+def figure_value(path: Path) -> float:
+    """The figure in the owed unit."""
+    return evaluate(path)[path.figure] / path.shown.factor
+
+
+class Drafting:
+    """Collects leaves and steps while a path is being laid."""
+
+    def __init__(self) -> None:
+        self.leaves: dict[str, Leaf] = {}
+        self.steps: list[Step] = []
+        self.choices: list[Choice] = []
+
+    def leaf(self, leaf: Leaf) -> str:
+        self.leaves.setdefault(leaf.name, leaf)
+        return leaf.name
+
+    def step(self, step: Step) -> str:
+        if not any(done.result == step.result for done in self.steps):
+            self.steps.append(step)
+        return step.result
+
+    def choose(self, title: str, reason: str, source: str = "") -> None:
+        self.choices.append(Choice(title, reason, source, len(self.steps)))
+
+
+def with_field(path: Path, error: CoreError) -> CoreError:
+    """Give an error raised by a relation (its `field` is then an argument's name) the input to focus."""
+    for step in path.steps:
+        if error.field in step.arguments:
+            leaf = path.leaves.get(step.arguments[error.field])
+            if leaf and leaf.field:
+                error.field = leaf.field
+                break
+    return error

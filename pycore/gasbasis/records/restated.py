@@ -1,0 +1,170 @@
+"""A sheet restated: everything the page and the terminal show, as one record."""
+from __future__ import annotations
+
+import math
+from typing import Mapping
+
+from gasbasis.calculation.basis_words import unit_words
+from gasbasis.calculation.case import Case, make_case
+from gasbasis.calculation.leaves import SIDE_TITLES
+from gasbasis.calculation.outcomes import Settled, Spread, effect, reading_range, settle, spread
+from gasbasis.calculation.path import Path, figure_value, with_field
+from gasbasis.calculation.restate import lay
+from gasbasis.calculation.working import bars, working
+from gasbasis.errors import CoreError, Missing
+from gasbasis.language.basis import Doubt, Gas, Statement
+from gasbasis.language.gas import read_gas
+from gasbasis.language.numbers import half_last_digit, significant
+from gasbasis.language.statement import read_statement
+from gasbasis.records.sheet import Sheet
+from gasbasis.records.sides import side_record
+
+DIGITS = 4                             # significant digits of a figure without uncertainty
+
+_NEEDED = {"hold": ("What you hold is needed.", "Type or paste it as it was written, e.g. 'NOx 142 ppm dry'."),
+           "owe": ("What you owe is needed.", "Type the unit and basis, e.g. 'mg/m3 at 273.15 K, 101.3 kPa, dry'.")}
+
+
+def restated(sheet: Sheet, take_usual: bool = False) -> dict:
+    """All that follows from a sheet. Problems are listed, never raised, so that what is understood stays in view."""
+    hold, hold_problems = read_statement(sheet.hold, "hold")
+    gas, gas_problems = read_gas(sheet.gas)
+    owe, owe_problems = read_statement(sheet.owe, "owe")
+    problems = [*hold_problems, *gas_problems, *owe_problems, *_incomplete(hold, owe, {e.field for e in hold_problems + owe_problems})]
+    result: dict = {"figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": []}
+    settled = Settled(Case(hold, gas, owe), (), ())
+    if not problems:
+        try:
+            settled = settle(make_case(hold, gas, owe), sheet.settled, take_usual)
+            result |= _outcome(settled, sheet, hold.value.number.below)
+        except CoreError as error:
+            problems.append(error)
+    problems.extend(result.pop("problems", ()))
+    sides = {"hold": hold, "gas": gas, "owe": owe}
+    return {**{side: side_record(side, record, settled, problems) for side, record in sides.items()},
+            "problems": [error.as_json() for error in problems], **result}
+
+
+def _incomplete(hold: Statement, owe: Statement, fields: set[str]) -> list[CoreError]:
+    """What must be there before anything can be restated; silent where a reading problem says it already."""
+    missing: list[CoreError] = []
+    for side, statement in (("hold", hold), ("owe", owe)):
+        if not statement.text.strip():
+            message, hint = _NEEDED[side]
+            missing.append(Missing(message, hint=hint, field=side))
+    if hold.text.strip() and hold.value is None and not fields:
+        missing.append(Missing("A value with its unit is needed in You hold.", hint="For example '142 ppm' or '35 mg/m3'.",
+                               field="hold.value"))
+    if owe.text.strip() and owe.unit is None and not fields:
+        missing.append(Missing("A unit is needed in You owe.", hint="For example 'mg/m3' or 'ppb by volume'.",
+                               field="owe.unit"))
+    return missing
+
+
+def _outcome(settled: Settled, sheet: Sheet, below: bool) -> dict:
+    """Figure, spread, doubts and working of a readable case."""
+    found = spread(settled.case)
+    effects = {doubt.id: effect(doubt.id, found.outcomes) for doubt in settled.open}
+    calm = {doubt.id for doubt in settled.open if _is_calm(effects[doubt.id], found)}
+    asked = [doubt for doubt in settled.open if doubt.id not in calm]
+    doubts = _doubt_records(settled, sheet, found, effects, calm)
+    record: dict = {"doubts": doubts}
+    if not asked:
+        return record | _figure(settle_calm(settled), below)
+    return record | {"spread": _spread_record(settled, found), "sentence": _sentence(asked, effects),
+                     "problems": _shared_problem(found)}
+
+
+def settle_calm(settled: Settled) -> Case:
+    """The case with every remaining doubt at its usual, else first, reading: none of them shows in the figure."""
+    case = settled.case
+    for doubt in settled.open:
+        reading = next((reading for reading in doubt.readings if reading.usual_because), doubt.readings[0])
+        case = case.taking(doubt.id, reading)
+    return case
+
+
+def _figure(case: Case, below: bool) -> dict:
+    path: Path | None = None
+    try:
+        path = lay(case)
+        value = figure_value(path)
+    except CoreError as error:
+        return {"problems": [with_field(path, error) if path else error]}
+    number = ("< " if below else "") + significant(value, DIGITS)
+    basis = ", ".join(path.basis)
+    return {"figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,
+                       "species_text": path.species_text, "basis": basis,
+                       "text": f"{path.species_text} {number} {path.shown.unit_text} {basis}".strip()},
+            "working": working(path), "steps": bars(path)}
+
+
+def _is_calm(size: float, found: Spread) -> bool:
+    """A doubt is calm when it moves the figure by less than half its last printed digit."""
+    if any(outcome.problem for outcome in found.outcomes) or not found.values:
+        return False
+    smallest = min(found.values, key=abs)
+    return size * abs(smallest) < half_last_digit(significant(smallest, DIGITS))
+
+
+def _spread_record(settled: Settled, found: Spread) -> dict:
+    values = found.values
+    ends = {"low": min(values), "high": max(values)} if values else {}
+    return {**{end: {"value": value, "text": significant(value, DIGITS)} for end, value in ends.items()},
+            "unit_text": unit_words(settled.case.owe), "complete": found.complete, "counted": len(found.outcomes),
+            "readings": [{"settled": dict(outcome.readings),
+                          "label": outcome.label,
+                          "value": outcome.value,
+                          "text": "" if outcome.value is None else significant(outcome.value, DIGITS),
+                          "problem": outcome.problem.as_json() if outcome.problem else None}
+                         for outcome in found.outcomes]}
+
+
+def _sentence(asked: list[Doubt], effects: Mapping[str, float]) -> str:
+    ranked = sorted(asked, key=lambda doubt: -effects[doubt.id])
+    return "depends on: " + ", ".join(doubt.title for doubt in ranked)
+
+
+def _shared_problem(found: Spread) -> list[CoreError]:
+    """What is wrong under every reading is wrong whatever was meant."""
+    problems = [outcome.problem for outcome in found.outcomes]
+    return problems[:1] if problems and all(problems) else []
+
+
+def _doubt_records(settled: Settled, sheet: Sheet, found: Spread, effects: Mapping[str, float], calm: set[str]) -> list[dict]:
+    ranked = sorted(settled.open, key=lambda doubt: (doubt.id in calm, -effects[doubt.id]))
+    records = [_doubt_record(doubt, "calm" if doubt.id in calm else "open", None, sheet, found, effects[doubt.id])
+               for doubt in ranked]
+    records.extend(_doubt_record(doubt, "settled", reading.id, sheet, found, None) for doubt, reading in settled.taken)
+    return records
+
+
+def _doubt_record(doubt: Doubt, state: str, chosen: str | None, sheet: Sheet, found: Spread, size: float | None) -> dict:
+    readings = []
+    for reading in doubt.readings:
+        ends = reading_range(doubt.id, reading.id, found.outcomes) if state != "settled" else None
+        readings.append({"id": reading.id, "label": reading.label, "source": reading.source,
+                         "usual_because": reading.usual_because, "text": _range_text(ends),
+                         "figure": {"low": ends[0], "high": ends[1]} if ends else None})
+    usual = next((reading.id for reading in doubt.readings if reading.usual_because), None)
+    side = doubt.id.partition(".")[0]
+    return {"id": doubt.id, "side": side, "side_title": SIDE_TITLES.get(side, side), "title": doubt.title,
+            "question": doubt.question, "changes": doubt.changes, "state": state, "chosen": chosen, "usual": usual,
+            "effect_text": _effect_text(size, state), "note": sheet.notes.get(doubt.id, ""), "readings": readings}
+
+
+def _range_text(ends: tuple[float, float] | None) -> str:
+    if ends is None:
+        return ""
+    low, high = (significant(value, DIGITS) for value in ends)
+    return low if low == high else f"{low} to {high}"
+
+
+def _effect_text(size: float | None, state: str) -> str:
+    if size is None:
+        return ""
+    if state == "calm":
+        return f"no visible effect: {significant(100 * size, 1)} %" if size else "no effect"
+    if math.isinf(size):
+        return "changes the sign"
+    return f"up to {significant(100 * size, 2)} %" if size < 1 else f"up to × {significant(1 + size, 3)}"

@@ -1,0 +1,24 @@
+"""The register of relations: what a physics function means, its symbols, validity and citation."""
+from __future__ import annotations
+
+from types import MappingProxyType
+from typing import Mapping
+
+from gasbasis.relations import bases, gas_law, molar_mass
+from gasbasis.relations.molar_mass import molar_mass_of_mixture
+from gasbasis.relations.relation import Relation
+
+__all__ = ["get", "every", "molar_mass_of_mixture", "Relation"]
+
+_REGISTER: Mapping[str, Relation] = MappingProxyType(
+    {relation.id: relation for room in (gas_law, bases, molar_mass) for relation in room.RELATIONS})
+
+
+def get(relation_id: str) -> Relation:
+    """A relation by its id. Raises KeyError."""
+    return _REGISTER[relation_id]
+
+
+def every() -> tuple[Relation, ...]:
+    """All registered relations."""
+    return tuple(_REGISTER.values())

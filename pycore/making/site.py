@@ -1,0 +1,79 @@
+"""dist/: the page, its Python, the list of its files, and the service worker that knows that list."""
+from __future__ import annotations
+
+import hashlib
+import json
+import shutil
+from pathlib import Path
+
+from making.licences import licences_text
+from making.media import media_type
+from making.places import WEB, Places
+from making.policy import POLICY
+from making.runtime import Runtime
+from making.steps import BuildFailed
+
+ENGINE = ("pyodide.mjs", "pyodide.asm.mjs", "pyodide.asm.wasm")
+HEAD = '<meta charset="utf-8">'
+NOT_COPIED = ("sw.js",)
+
+
+def build_site(runtime: Runtime, places: Places) -> Path:
+    """Write dist/ anew and return it. The same inputs give the same bytes."""
+    fresh = places.dist.with_name(places.dist.name + ".new")
+    shutil.rmtree(fresh, ignore_errors=True)
+    shutil.copytree(WEB, fresh, ignore=shutil.ignore_patterns(*NOT_COPIED, ".*", "*.md"))
+    _write_page(fresh)
+    _write_runtime(fresh / "runtime", runtime, places)
+    (fresh / "licences.txt").write_text(licences_text(runtime, places), encoding="utf-8")
+    _write_service_worker(fresh)
+    shutil.rmtree(places.dist, ignore_errors=True)
+    fresh.rename(places.dist)
+    return places.dist
+
+
+def _write_page(site: Path) -> None:
+    page = site / "index.html"
+    text = page.read_text(encoding="utf-8")
+    if text.count(HEAD) != 1:
+        raise BuildFailed(f"web/index.html must hold {HEAD} once: the policy is put behind it.")
+    policy = f'{HEAD}\n<meta http-equiv="Content-Security-Policy" content="{POLICY}">'
+    page.write_text(text.replace(HEAD, policy), encoding="utf-8")
+
+
+def _write_runtime(folder: Path, runtime: Runtime, places: Places) -> None:
+    folder.mkdir()
+    for name in ENGINE:
+        shutil.copyfile(places.pyodide / name, folder / name)
+    for path in (runtime.stdlib, *runtime.wheels):
+        shutil.copyfile(path, folder / path.name)
+    parts = {"lockInfo": runtime.lock_info, "stdlib": runtime.stdlib.name,
+             "wheels": [{"file": wheel.name, "size": wheel.stat().st_size} for wheel in runtime.wheels],
+             "engine": {"file": "pyodide.asm.wasm", "size": (folder / "pyodide.asm.wasm").stat().st_size}}
+    (folder / "parts.js").write_text("/** Written by the build: what the worker loads. */\n"
+                                     f"export const PARTS = {json.dumps(parts, indent=1, sort_keys=True)};\n", encoding="utf-8")
+
+
+def assets(site: Path) -> list[dict]:
+    """Each file of the page with its size, SHA-256 and media type, sorted by path."""
+    rows = []
+    for path in sorted(site.rglob("*")):
+        if path.is_file() and path.name != "sw.js":
+            content = path.read_bytes()
+            rows.append({"path": path.relative_to(site).as_posix(), "size": len(content),
+                         "sha256": hashlib.sha256(content).hexdigest(), "type": media_type(path.name)})
+    return rows
+
+
+def _write_service_worker(site: Path) -> None:
+    rows = assets(site)
+    source = (WEB / "sw.js").read_text(encoding="utf-8")
+    total = hashlib.sha256(source.encode() + json.dumps(rows, sort_keys=True).encode() + POLICY.encode()).hexdigest()
+    for placeholder, value in (("@VERSION@", total[:16]), ("@POLICY@", POLICY)):
+        if source.count(f'"{placeholder}"') != 1:
+            raise BuildFailed(f'web/sw.js must hold "{placeholder}" once.')
+        source = source.replace(f'"{placeholder}"', json.dumps(value))
+    if source.count("/* @ASSETS@ */ []") != 1:
+        raise BuildFailed("web/sw.js must hold /* @ASSETS@ */ [] once.")
+    source = source.replace("/* @ASSETS@ */ []", json.dumps(rows, indent=1))
+    (site / "sw.js").write_text(source, encoding="utf-8")

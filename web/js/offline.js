@@ -1,0 +1,79 @@
+/**
+ * Registers the service worker, tells the page when it is ready offline, and asks before an update.
+ *
+ * @typedef {{phase: "unsupported"|"fetching"|"ready"|"failed", version: string, done: number, of: number,
+ *            checkedAt: string, message: string, update: boolean}} OfflineState
+ *   `update`: a newer version is kept and verified, and waits for the person's yes.
+ */
+
+/**
+ * Call it when the core is ready, so that fetching for later does not slow the first figure.
+ *
+ * @param {{onState?: (state: OfflineState) => void, beforeReload?: () => void | Promise<void>}} options
+ * @returns {{state: OfflineState, takeUpdate: () => void, check: () => void}}
+ */
+export function startOffline({ onState = () => {}, beforeReload = () => {} } = {}) {
+  /** @type {OfflineState} */
+  let state = { phase: "fetching", version: "", done: 0, of: 0, checkedAt: "", message: "", update: false };
+  /** @type {ServiceWorkerRegistration | null} */
+  let registration = null;
+  let reloading = false;
+
+  function change(patch) {
+    state = { ...state, ...patch };
+    onState(state);
+  }
+
+  function onNews({ data, source }) {
+    if (data?.type !== "offline") return;
+    if (registration && source !== registration.active && registration.active) return;   // a newer version being fetched
+    const checkedAt = data.phase === "ready" ? new Date().toISOString() : state.checkedAt;
+    change({ phase: data.phase, version: data.version, done: data.done, of: data.of, message: data.message, checkedAt });
+  }
+
+  /** A worker that waits is asked about, also when it was left waiting by an earlier visit. */
+  function watchForUpdate() {
+    const look = () => change({ update: Boolean(registration.waiting && registration.active) });
+    look();
+    registration.addEventListener("updatefound", () => {
+      registration.installing?.addEventListener("statechange", look);
+    });
+  }
+
+  function takeUpdate() {
+    if (!registration?.waiting) return;
+    reloading = true;
+    registration.waiting.postMessage({ type: "take-over" });
+  }
+
+  function check() {
+    registration?.active?.postMessage({ type: "check" });
+  }
+
+  async function onNewController() {
+    if (!reloading) return;
+    await beforeReload();
+    location.reload();
+  }
+
+  async function start() {
+    if (!("serviceWorker" in navigator)) {
+      change({ phase: "unsupported", message: "This browser keeps no copy of the page for use without a network." });
+      return;
+    }
+    navigator.serviceWorker.addEventListener("message", onNews);
+    navigator.serviceWorker.addEventListener("controllerchange", onNewController);
+    try {
+      registration = await navigator.serviceWorker.register(new URL("../sw.js", import.meta.url), { updateViaCache: "none" });
+    } catch (error) {
+      change({ phase: "failed", message: `The page could not be kept for use without a network: ${error.message ?? error}` });
+      return;
+    }
+    watchForUpdate();
+    registration.active?.postMessage({ type: "started" });
+    check();
+  }
+
+  start();
+  return { takeUpdate, check, get state() { return state; } };
+}

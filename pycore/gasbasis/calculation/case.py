@@ -1,8 +1,7 @@
 """One case: the held statement, the gas it was in and the owed statement, as far as they are settled."""
 from __future__ import annotations
 
-from dataclasses import dataclass, replace
-from types import MappingProxyType
+from dataclasses import dataclass, field, replace
 from typing import Mapping
 
 from gasbasis.errors import OutOfRange
@@ -28,7 +27,7 @@ class Case:
     hold: Statement
     gas: Gas
     owe: Statement
-    chosen: Mapping[str, str] = MappingProxyType({})     # "hold.parts_by" -> label of the reading taken
+    chosen: Mapping[str, str] = field(default_factory=dict)     # "hold.parts_by" -> label of the reading taken
 
     def record(self, side: str) -> Statement | Gas:
         return getattr(self, side)
@@ -40,7 +39,7 @@ class Case:
         left = tuple(doubt for doubt in record.ambiguities if doubt.id != doubt_id)
         changed = replace(record, **dict(reading.patch), ambiguities=left)
         chosen = {**self.chosen, **{f"{side}.{name}": reading.label for name, _ in reading.patch}}
-        return replace(self, **{side: changed}, chosen=MappingProxyType(chosen))
+        return replace(self, **{side: changed}, chosen=chosen)
 
 
 def make_case(hold: Statement, gas: Gas, owe: Statement) -> Case:

@@ -9,8 +9,8 @@ from dataclasses import dataclass
 from types import MappingProxyType
 from typing import Mapping
 
-from gasbasis.errors import CoreError
-from gasbasis.relations.relation import Relation
+from gasbasis.errors import OutOfRange
+from gasbasis.relations.relation import OutsideValidity, Relation
 
 TYPED, TABLE, READING, CONVENTION = "typed", "table", "reading", "convention"
 
@@ -78,11 +78,22 @@ def evaluate(path: Path, values: Mapping[str, object] = MappingProxyType({})) ->
     """Every named result of the path. `values` replaces leaves (uncertain numbers, columns)."""
     known: dict[str, object] = {name: leaf.value for name, leaf in path.leaves.items()}
     known.update(values)
-    checked = not values
     for step in path.steps:
         arguments = {argument: known[name] for argument, name in step.arguments.items()}
-        known[step.result] = step.relation.value(**arguments) if checked else step.relation(**arguments)
+        known[step.result] = step.relation(**arguments) if values else _checked(path, step, arguments)
     return known
+
+
+def _checked(path: Path, step: Step, arguments: Mapping[str, float]) -> float:
+    """The step's value; an error names the input as it was typed, and its field."""
+    try:
+        return step.relation.value(**arguments)
+    except OutsideValidity as error:
+        leaf = path.leaves.get(step.arguments[error.argument])
+        if leaf is None:
+            raise
+        meaning = step.relation.symbols[error.argument].meaning
+        raise OutOfRange(f"The {meaning} is {leaf.text} {leaf.unit_text}: {error.need}.", hint=error.hint, field=leaf.field) from error
 
 
 def figure_value(path: Path) -> float:
@@ -109,14 +120,3 @@ class Drafting:
 
     def choose(self, title: str, reason: str, source: str = "") -> None:
         self.choices.append(Choice(title, reason, source, len(self.steps)))
-
-
-def with_field(path: Path, error: CoreError) -> CoreError:
-    """Give an error raised by a relation (its `field` is then an argument's name) the input to focus."""
-    for step in path.steps:
-        if error.field in step.arguments:
-            leaf = path.leaves.get(step.arguments[error.field])
-            if leaf and leaf.field:
-                error.field = leaf.field
-                break
-    return error

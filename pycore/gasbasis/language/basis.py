@@ -32,6 +32,7 @@ class Number:
     text: str
     below: bool = False
     uncertainty: Uncertainty | None = None
+    thousands: Decimal | None = None   # the other reading of "1,234": its separator groups thousands
 
 
 @dataclass(frozen=True)

@@ -8,7 +8,7 @@ from gasbasis.calculation.basis_words import unit_words
 from gasbasis.calculation.case import Case, make_case
 from gasbasis.calculation.leaves import SIDE_TITLES
 from gasbasis.calculation.outcomes import Settled, Spread, effect, reading_range, settle, spread
-from gasbasis.calculation.path import Path, figure_value, with_field
+from gasbasis.calculation.path import figure_value
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.working import bars, working
 from gasbasis.errors import CoreError, Missing
@@ -30,7 +30,7 @@ def restated(sheet: Sheet, take_usual: bool = False) -> dict:
     hold, hold_problems = read_statement(sheet.hold, "hold")
     gas, gas_problems = read_gas(sheet.gas)
     owe, owe_problems = read_statement(sheet.owe, "owe")
-    problems = [*hold_problems, *gas_problems, *owe_problems, *_incomplete(hold, owe, {e.field for e in hold_problems + owe_problems})]
+    problems = [*hold_problems, *gas_problems, *owe_problems, *_incomplete(hold, owe)]
     result: dict = {"figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": []}
     settled = Settled(Case(hold, gas, owe), (), ())
     if not problems:
@@ -45,17 +45,17 @@ def restated(sheet: Sheet, take_usual: bool = False) -> dict:
             "problems": [error.as_json() for error in problems], **result}
 
 
-def _incomplete(hold: Statement, owe: Statement, fields: set[str]) -> list[CoreError]:
-    """What must be there before anything can be restated; silent where a reading problem says it already."""
+def _incomplete(hold: Statement, owe: Statement) -> list[CoreError]:
+    """What must be there before anything can be restated."""
     missing: list[CoreError] = []
     for side, statement in (("hold", hold), ("owe", owe)):
         if not statement.text.strip():
             message, hint = _NEEDED[side]
             missing.append(Missing(message, hint=hint, field=side))
-    if hold.text.strip() and hold.value is None and not fields:
+    if hold.text.strip() and hold.value is None:
         missing.append(Missing("A value with its unit is needed in You hold.", hint="For example '142 ppm' or '35 mg/m3'.",
                                field="hold.value"))
-    if owe.text.strip() and owe.unit is None and not fields:
+    if owe.text.strip() and owe.unit is None:
         missing.append(Missing("A unit is needed in You owe.", hint="For example 'mg/m3' or 'ppb by volume'.",
                                field="owe.unit"))
     return missing
@@ -85,12 +85,11 @@ def settle_calm(settled: Settled) -> Case:
 
 
 def _figure(case: Case, below: bool) -> dict:
-    path: Path | None = None
     try:
         path = lay(case)
         value = figure_value(path)
     except CoreError as error:
-        return {"problems": [with_field(path, error) if path else error]}
+        return {"problems": [error]}
     number = ("< " if below else "") + significant(value, DIGITS)
     basis = ", ".join(path.basis)
     return {"figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,

@@ -1,0 +1,170 @@
+"""Propagation of distributions by Monte Carlo (JCGM 101:2008), as a check on the budget."""
+from __future__ import annotations
+
+import math
+from array import array
+from dataclasses import dataclass
+from random import Random
+from statistics import fmean, pstdev
+from typing import Callable, Mapping, Sequence
+
+from gasbasis.calculation.fuse import fuse
+from gasbasis.calculation.path import Leaf, Path
+from gasbasis.errors import OutOfRange
+
+FEWEST, MOST = 200_000, 5_000_000
+_BLOCK = 10_000                        # trials a block (JCGM 101:2008, 7.9.4 takes the larger of 100/(1-p) and 10^4)
+_COVERAGE = 0.95
+_LARGEST_LOSS = 1e-3                   # share of draws outside a domain above which nothing is said
+_BINS = 40
+
+
+@dataclass(frozen=True)
+class Simulation:
+    trials: int
+    mean: float
+    standard_uncertainty: float
+    low: float                         # ends of the shortest 95 % interval
+    high: float
+    outside: int                       # draws outside a relation's domain, left out
+    stable: bool                       # the adaptive procedure came to rest (7.9)
+    counts: tuple[int, ...]            # histogram over equal bins
+    edges: tuple[float, float]
+
+
+def simulate(path: Path, seed: int, correlations: Mapping[tuple[str, str], float] | None = None,
+             progress: Callable[[int, int], None] = lambda done, of: None, most: int = MOST) -> Simulation:
+    """Draw the inputs until mean, u and interval are stable, FEWEST trials at least.
+
+    `correlations` maps pairs of leaf names to coefficients (Gaussian inputs only). Raises OutOfRange.
+    """
+    if not FEWEST <= most <= MOST:
+        raise OutOfRange(f"{most} trials were asked for; {FEWEST} to {MOST} can be run.", hint="Leave it at the usual number.",
+                         field="monte_carlo.trials")
+    leaves = [leaf for leaf in path.leaves.values() if leaf.standard_uncertainty]
+    figure = fuse(path, [leaf.name for leaf in leaves], checked=True)
+    draw = _drawing(leaves, correlations or {}, Random(seed))
+    values, blocks, outside, drawn = array("d"), [], 0, 0
+    stable = False
+    while drawn < most and not (stable and drawn >= FEWEST):
+        block = array("d", (figure(*draw()) for _ in range(_BLOCK)))
+        drawn += _BLOCK
+        good = array("d", (value for value in block if value == value))
+        outside += _BLOCK - len(good)
+        _refuse_loss(outside, drawn)
+        values.extend(good)
+        blocks.append(_summary(sorted(good)))
+        stable = _at_rest(blocks, pstdev(good))
+        progress(drawn, max(FEWEST, drawn))
+    ordered = sorted(values)
+    low, high = shortest_interval(ordered)
+    return Simulation(drawn, fmean(values), pstdev(values), low, high, outside, stable,
+                      _histogram(ordered), (ordered[0], ordered[-1]))
+
+
+def _refuse_loss(outside: int, drawn: int) -> None:
+    if outside > _LARGEST_LOSS * drawn:
+        raise OutOfRange(f"{outside} of {drawn} draws lie outside what the relations allow (more than 0.1 %).",
+                         hint="An uncertainty reaches beyond a physical bound, such as water below 0 % or oxygen above ambient. "
+                              "Check the largest ones.", field="uncertainty")
+
+
+def _drawing(leaves: Sequence[Leaf], correlations: Mapping[tuple[str, str], float], random: Random) -> Callable[[], list[float]]:
+    """A function that draws one set of inputs."""
+    gauss, uniform = random.gauss, random.uniform
+    rows = cholesky(correlation_matrix([leaf.name for leaf in leaves], correlations)) if correlations else None
+
+    def independent() -> list[float]:
+        return [one() for one in makers]
+
+    def correlated() -> list[float]:
+        normal = [gauss(0.0, 1.0) for _ in leaves]
+        return [leaf.value + leaf.standard_uncertainty * sum(a * z for a, z in zip(row, normal)) for leaf, row in zip(leaves, rows)]
+
+    def maker(leaf: Leaf) -> Callable[[], float]:
+        value, u = leaf.value, leaf.standard_uncertainty
+        if leaf.distribution == "rectangular":
+            half = u * math.sqrt(3.0)
+            return lambda: uniform(value - half, value + half)
+        if leaf.distribution == "triangular":
+            half = u * math.sqrt(6.0)
+            return lambda: random.triangular(value - half, value + half, value)
+        if math.isfinite(leaf.degrees_of_freedom):
+            freedom = leaf.degrees_of_freedom     # scaled and shifted t (JCGM 101:2008, 6.4.9)
+            return lambda: value + u * gauss(0.0, 1.0) / math.sqrt(random.gammavariate(freedom / 2, 2.0) / freedom)
+        return lambda: gauss(value, u)
+
+    makers = [maker(leaf) for leaf in leaves]
+    return correlated if rows else independent
+
+
+def correlation_matrix(names: Sequence[str], correlations: Mapping[tuple[str, str], float]) -> list[list[float]]:
+    """The full matrix of the stated coefficients. Raises OutOfRange outside -1..1."""
+    matrix = [[1.0 if a == b else 0.0 for b in names] for a in names]
+    for (first, second), coefficient in correlations.items():
+        if not -1.0 <= coefficient <= 1.0:
+            raise OutOfRange(f"A correlation of {coefficient:g} was given; it lies from -1 to 1.", hint="Check its sign and point.",
+                             field="correlations")
+        i, j = names.index(first), names.index(second)
+        matrix[i][j] = matrix[j][i] = coefficient
+    return matrix
+
+
+def cholesky(matrix: Sequence[Sequence[float]]) -> list[list[float]]:
+    """The lower triangle L with L L^T = matrix. Raises OutOfRange when it is not positive definite."""
+    size = len(matrix)
+    rows = [[0.0] * size for _ in range(size)]
+    for i in range(size):
+        for j in range(i + 1):
+            rest = matrix[i][j] - sum(rows[i][k] * rows[j][k] for k in range(j))
+            if i == j:
+                if rest <= 0.0:
+                    raise OutOfRange("The correlations contradict each other (the matrix is not positive definite).",
+                                     hint="Lower the coefficients between inputs that cannot all move together.",
+                                     field="correlations")
+                rows[i][i] = math.sqrt(rest)
+            else:
+                rows[i][j] = rest / rows[j][j]
+    return rows
+
+
+def shortest_interval(ordered: Sequence[float], coverage: float = _COVERAGE) -> tuple[float, float]:
+    """The shortest interval that holds the given share of sorted values (JCGM 101:2008, 5.3.4)."""
+    held = max(1, round(coverage * len(ordered)))
+    widths = ((ordered[start + held - 1] - ordered[start], start) for start in range(len(ordered) - held + 1))
+    _, start = min(widths)
+    return ordered[start], ordered[start + held - 1]
+
+
+def _summary(ordered: Sequence[float]) -> tuple[float, float, float, float]:
+    return fmean(ordered), pstdev(ordered), *shortest_interval(ordered)
+
+
+def _at_rest(blocks: Sequence[tuple[float, ...]], u: float) -> bool:
+    """Twice the standard deviation of each mean over the blocks is below the numerical tolerance (7.9.4)."""
+    if len(blocks) < 2:
+        return False
+    tolerance = numerical_tolerance(u)
+    return all(2.0 * pstdev(column) / math.sqrt(len(blocks) - 1) < tolerance for column in zip(*blocks))
+
+
+def numerical_tolerance(u: float) -> float:
+    """Half the last of two significant digits of u (JCGM 101:2008, 7.9.2)."""
+    return 0.0 if u == 0 else 0.5 * 10.0 ** (math.floor(math.log10(u)) - 1)
+
+
+def _histogram(ordered: Sequence[float]) -> tuple[int, ...]:
+    low, high = ordered[0], ordered[-1]
+    counts = [0] * _BINS
+    if high == low:
+        return tuple(counts)
+    scale = _BINS / (high - low)
+    for value in ordered:
+        counts[min(_BINS - 1, int((value - low) * scale))] += 1
+    return tuple(counts)
+
+
+def agrees(budget_low: float, budget_high: float, simulation: Simulation) -> bool:
+    """Whether the budget's interval is validated (JCGM 101:2008, clause 8): both ends within the tolerance."""
+    tolerance = numerical_tolerance(simulation.standard_uncertainty)
+    return abs(budget_low - simulation.low) <= tolerance and abs(budget_high - simulation.high) <= tolerance

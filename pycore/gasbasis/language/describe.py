@@ -1,0 +1,60 @@
+"""What each piece is called, one sentence on it, an example, and the usual choices: one table for page and terminal."""
+from __future__ import annotations
+
+from dataclasses import dataclass
+from typing import Mapping
+
+
+@dataclass(frozen=True)
+class Field:
+    title: str
+    help: str
+    example: str
+    choices: tuple[str, ...] = ()
+    numeric: bool = False
+
+
+FIELDS: Mapping[str, Field] = {
+    "species": Field("species", "What was measured, by name or formula; its molar mass is worked out from the formula.", "NOx"),
+    "value": Field("value", "The number with its unit, as it was written; '<' and '±' are kept.", "142 ppm", numeric=True),
+    "unit": Field("unit", "The unit the figure is owed in.", "mg/m3", ("mg/m3", "µg/m3", "ppm by volume", "ppb by volume", "ng/L", "µmol/mol")),
+    "parts_by": Field("parts by", "What the parts count: amounts (volume), masses, or mass in a volume.", "by volume",
+                      ("by volume", "by mass", "m/v")),
+    "temperature": Field("temperature", "The temperature the volume is counted at, not that of the gas in the duct.", "273.15 K",
+                         ("273.15 K", "15 °C", "20 °C", "25 °C", "60 °F", "68 °F"), numeric=True),
+    "pressure": Field("pressure", "The absolute pressure the volume is counted at.", "101.325 kPa",
+                      ("101.325 kPa", "101.3 kPa", "100 kPa", "1 atm", "14.73 psi"), numeric=True),
+    "conditions_word": Field("volume called", "A word such as normal or standard; it has several published meanings.", "normal"),
+    "actual_volume": Field("volume", "The volume as it was in the duct or line, at the gas's own temperature and pressure.", "actual"),
+    "water": Field("water", "Whether the value counts the water vapour in the gas (wet) or not (dry).", "dry", ("dry", "wet")),
+    "water_content": Field("water content", "The share of water vapour in the wet gas, by volume.", "12 % H2O", numeric=True),
+    "oxygen": Field("oxygen it is stated at", "The oxygen the value was measured at or is referred to.", "11 % O2",
+                    ("3 % O2", "6 % O2", "7 % O2", "11 % O2", "15 % O2"), numeric=True),
+    "oxygen_meaning": Field("that oxygen is", "Measured in the gas, or the reference the value was corrected to.", "corrected to 11 % O2"),
+    "oxygen_water": Field("oxygen read", "Whether the oxygen was read in dry or in wet gas.", "9.2 % O2 dry"),
+    "ambient_oxygen": Field("ambient oxygen", "The oxygen of ambient air the rule counts from.", "ambient O2 20.9 %",
+                            ("ambient O2 20.9 %", "ambient O2 20.95 %", "ambient O2 21 %"), numeric=True),
+    "reported_as": Field("reported as", "The entity the value is counted or weighed as.", "as NO2", ("as NO2", "as NO", "as C", "as propane", "as methane", "as S")),
+    "matrix_gas": Field("gas", "The gas that carried the species; parts by mass are parts of its mass.", "in nitrogen",
+                        ("in nitrogen", "in dry air", "in combustion gas")),
+    "total_pressure": Field("total pressure", "The pressure of the whole gas, for a partial pressure.", "in 1013 hPa", numeric=True),
+    "carbon_dioxide": Field("carbon dioxide", "The carbon dioxide of the gas, by volume.", "10.1 % CO2 dry", numeric=True),
+    "carbon_dioxide_water": Field("carbon dioxide read", "Whether it was read in dry or in wet gas.", "10.1 % CO2 dry"),
+    "coverage": Field("coverage factor", "The k of the stated expanded uncertainty.", "(k=2)", ("(k=1)", "(k=2)", "(k=3)")),
+}
+
+# Which pieces can be added to which side, in the order they are offered.
+ADDABLE: Mapping[str, tuple[str, ...]] = {
+    "hold": ("species", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as", "matrix_gas"),
+    "gas": ("water_content", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure"),
+    "owe": ("unit", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as"),
+    "limit": ("value", "temperature", "pressure", "water", "oxygen"),
+}
+# The gas line's own temperature and pressure are those of the gas as it flowed.
+GAS_HELP: Mapping[str, str] = {
+    "temperature": "The temperature of the gas as it flowed.", "pressure": "The absolute pressure of the gas as it flowed.",
+    "oxygen": "The oxygen measured in the gas, and whether it was read dry or wet.",
+}
+GAS_TITLES: Mapping[str, str] = {"temperature": "gas temperature", "pressure": "gas pressure", "oxygen": "oxygen measured"}
+GAS_CHOICES: Mapping[str, tuple[str, ...]] = {"temperature": (), "pressure": (), "oxygen": ()}
+GAS_EXAMPLES: Mapping[str, str] = {"temperature": "182 °C", "pressure": "1008 hPa", "oxygen": "9.2 % O2 dry"}

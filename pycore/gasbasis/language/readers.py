@@ -1,0 +1,445 @@
+"""The readers of a statement's parts. Each looks at the reader's place, takes what it knows and moves on, or declines."""
+from __future__ import annotations
+
+import re
+from dataclasses import replace
+from decimal import Decimal
+from typing import Callable
+
+from gasbasis.errors import NotUnderstood
+from gasbasis.language import tokens
+from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Species
+from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, uncertainty_at
+from gasbasis.language.species import find, match_at
+from gasbasis.language.units import unit
+
+Read = Callable[[object], bool]
+_PERCENT = re.compile(r"\s?(?:vol\.?-?\s?)?%(?:\s?\(?(?:v/v|vol\.?|v)\)?)?(?!\w)|\s?(?:percent|vol-%)(?!\w)", re.IGNORECASE)
+_READ_AS = re.compile(r"[\s,]*\(?\s?(?:(?:measured|read|on a?)\s)?(?P<water>dry|wet)(?:\sbasis)?\s?\)?(?![A-Za-z0-9])", re.IGNORECASE)
+_CONTENTS = (("oxygen", tokens.OXYGEN_NAME), ("water_content", tokens.WATER_NAME), ("carbon_dioxide", tokens.CARBON_DIOXIDE_NAME))
+
+
+# --- numbers with units ---
+
+def number_led(reader) -> bool:
+    """A number and what follows it: a concentration, a temperature, a pressure, a share of O2 or water."""
+    found = NUMBER.match(reader.text, reader.place)
+    if found is None:
+        return False
+    start, after = found.start(), found.end()
+    number = number_at(found, reader.original[start:after].strip())
+    after, number = _spread(reader, after, number)
+    for follow in (_share, _concentration, _molar_mass, _pressure, _temperature):
+        if follow(reader, number, start, after):
+            return True
+    if "value" not in reader.fields and "pending" not in reader.fields:
+        reader.fields["pending"] = (number, start, after)      # "Hg: 8.3 (ug/m3)": the unit may follow
+        reader.place = after
+        return True
+    reader.refuse(NotUnderstood(f"'{reader.original[start:after].strip()}' is a number without a unit that is known.",
+                                hint="Put its unit behind it, e.g. mg/m3, ppm, °C, kPa."), start, after)
+    reader.place = after
+    return True
+
+
+def _spread(reader, after: int, number: Number) -> tuple[int, Number]:
+    found = PLUS_MINUS.match(reader.text, _skip(reader.text, after))
+    if found is None:
+        return after, number
+    end = found.end()
+    return end, replace(number, uncertainty=uncertainty_at(found), text=reader.original[after - len(number.text):end].strip())
+
+
+def _skip(text: str, place: int, extra: str = "") -> int:
+    while place < len(text) and text[place] in " " + extra:
+        place += 1
+    return place
+
+
+def _share(reader, number: Number, start: int, after: int) -> bool:
+    """ "9.2 % O2", "14 % moisture", "11 % (dry) O2" """
+    percent = _PERCENT.match(reader.text, after)
+    if percent is None:
+        return False
+    ahead = re.compile(r"[\s]*(?:\((?:dry|wet)\)\s*|(?:dry|wet)\s+)?(?:ref\.?\s+|reference\s+|of\s+)?").match(reader.text, percent.end())
+    for field, name in _CONTENTS:
+        found = re.compile(name, re.IGNORECASE).match(reader.text, ahead.end())
+        if found:
+            said = ahead.group().lower()
+            water = DRY if "dry" in said else WET if "wet" in said else None
+            reference = CORRECTED if "ref" in said else None
+            return _take_share(reader, field, number, start, found.end(), water, reference)
+    return False
+
+
+def _take_share(reader, field: str, number: Number, start: int, end: int, water: str | None = None, meaning: str | None = None) -> bool:
+    quantity = Quantity(number, unit("%"))
+    end, read = _read_as(reader, field, end)
+    reader.take(field, quantity, start, end)
+    if field in ("oxygen", "carbon_dioxide") and (water or read):
+        reader.take(f"{field}_water", water or read, start, end)
+    meaning = meaning or reader.fields.pop("oxygen_ahead", None)
+    if field == "oxygen" and meaning:
+        reader.take("oxygen_meaning", meaning, start, end)
+    reader.place = end
+    return True
+
+
+def _read_as(reader, field: str, end: int) -> tuple[int, str | None]:
+    """Directly behind an oxygen in the gas, "dry" says how it was read; in a statement it is the statement's own."""
+    found = _READ_AS.match(reader.text, end)
+    bracketed = found and "(" in found.group()
+    if found is None or field == "water_content" or not (reader.side == "gas" or bracketed):
+        return end, None
+    return found.end(), found["water"].lower()
+
+
+def named_share(reader) -> bool:
+    """ "O2 9,2 %", "O2: 9.2 % dry", "moisture 14 %", "ambient O2 20.9 %", "ref. O2 11 %" """
+    for field, name in _CONTENTS:
+        found = re.compile(rf"(?P<ambient>ambient\s)?(?P<ref>ref(?:erence|\.)?\s)?(?P<said>(?:dry|wet)\s)?(?:{name})\s?(?:ref\.?\s?)?(?:content\s)?[:=]?\s?(?:of\s)?"
+                           rf"(?P<read>\((?:dry|wet)\)\s?)?", re.IGNORECASE).match(reader.text, reader.place)
+        number = NUMBER.match(reader.text, found.end()) if found else None
+        percent = _PERCENT.match(reader.text, _spread(reader, number.end(), _as_number(reader, number))[0]) if number else None
+        if percent is None:
+            continue
+        value = _spread(reader, number.end(), _as_number(reader, number))[1]
+        if found["ambient"]:
+            return _take(reader, "ambient_oxygen", Quantity(value, unit("%")), reader.place, percent.end())
+        words = (found["said"] or found["read"] or "").lower()
+        water = DRY if "dry" in words else WET if "wet" in words else None
+        meaning = CORRECTED if found["ref"] or re.search(r"\bref", found.group(), re.IGNORECASE) else None
+        return _take_share(reader, field, value, reader.place, percent.end(), water, meaning)
+    return False
+
+
+def _as_number(reader, found: re.Match) -> Number:
+    return number_at(found, reader.original[found.start():found.end()].strip())
+
+
+def _concentration(reader, number: Number, start: int, after: int) -> bool:
+    place = _skip(reader.text, after)
+    closing = reader.text.startswith(")", place)              # "(35.2 ± 1.1) mg/m3"
+    marks = concentration_unit(reader, _skip(reader.text, place + 1) if closing else place)
+    if marks is None:
+        return False
+    measured, end = marks
+    if "value" in reader.fields and measured.kind == "parts":
+        return False
+    reader.take("value", Quantity(number, measured), start, end)
+    reader.fields["unit"] = measured
+    reader.place = end
+    _late_spread(reader)
+    return True
+
+
+def _late_spread(reader) -> None:
+    """ "142 ppm ± 5 %": the spread behind the unit."""
+    found = PLUS_MINUS.match(reader.text, _skip(reader.text, reader.place))
+    value = reader.fields.get("value")
+    if found is None or value is None or value.number.uncertainty is not None:
+        return
+    uncertainty = uncertainty_at(found)
+    reader.fields["value"] = replace(value, number=replace(value.number, uncertainty=uncertainty))
+    piece = next(piece for piece in reader.pieces if piece.field == "value")
+    reader.pieces.remove(piece)
+    reader.pieces.append(replace(piece, text=reader.original[piece.span[0]:found.end()], span=(piece.span[0], found.end())))
+    reader.place = found.end()
+
+
+def _molar_mass(reader, number: Number, start: int, after: int) -> bool:
+    found = tokens.MOLAR_MASS.match(reader.text, _skip(reader.text, after))
+    if found is None:
+        return False
+    measured = unit("g/mol" if found.group() == "kg/kmol" else found.group())
+    return _take(reader, "matrix_gas", MatrixGas("stated", Quantity(number, measured)), reader.fields.pop("ahead", start), found.end())
+
+
+def _pressure(reader, number: Number, start: int, after: int) -> bool:
+    found = tokens.PRESSURE_UNIT.match(reader.text, _skip(reader.text, after))
+    if found is None:
+        return False
+    gauge = found["gauge"]
+    text = found.group()[:len(found.group()) - len(gauge or "")]
+    quantity = Quantity(_plausible(number, unit(text.strip()).factor, 2e4, 4e7), unit(text.strip()))
+    if gauge and "g" in gauge.lower().replace("gauge", "g"):
+        reader.refuse(NotUnderstood(f"'{reader.original[start:found.end()]}' is a gauge pressure.",
+                                    hint="Give the absolute pressure: gauge plus barometer."), start, found.end())
+        reader.place = found.end()
+        return True
+    inside = re.compile(r"\s?(?:in|of)\s(?=[\d.,])").match(reader.text, found.end())
+    if inside and "value" not in reader.fields and reader.side != "gas":
+        reader.take("value", quantity, start, found.end())
+        reader.fields["unit"] = quantity.unit
+        reader.fields["partial"] = True
+    elif reader.fields.get("partial"):
+        reader.take("total_pressure", quantity, start, found.end())
+    else:
+        reader.take("pressure", quantity, start, found.end())
+    reader.place = found.end()
+    return True
+
+
+def _temperature(reader, number: Number, start: int, after: int) -> bool:
+    found = tokens.TEMPERATURE_UNIT.match(reader.text, _skip(reader.text, after))
+    if found is None:
+        return False
+    letter = re.sub(r"[^CFKR]", "", found.group().upper().replace("DEG", "").replace("REES", "").replace("CELSIUS", "C").replace("KELVIN", "K"))[:1]
+    measured = unit({"C": "degC", "F": "degF", "K": "K", "R": "degR"}[letter])
+    return _take(reader, "temperature", Quantity(_plausible(number, measured.factor, 150.0, 2500.0, measured.offset), measured), start, found.end())
+
+
+def _plausible(number: Number, factor: float, low: float, high: float, offset: float = 0.0) -> Number:
+    """Where only one of the two readings of "101.325" is a possible pressure or temperature, it is the one."""
+    if number.thousands is None:
+        return number
+    fits = [low <= float(value) * factor + offset <= high for value in (number.decimal, number.thousands)]
+    if fits == [False, True]:
+        return replace(number, decimal=number.thousands, thousands=None)
+    return replace(number, thousands=None)
+
+
+# --- units of concentration ---
+
+def concentration_unit(reader, place: int):
+    """A unit of concentration at a place, taking what is glued to it as pieces. Returns (unit, end) or None."""
+    for read in (_mass_per_volume, _amount_per_volume, _plain_ratio, _parts):
+        found = read(reader, place)
+        if found is not None:
+            return found
+    return None
+
+
+def _volume(text: str) -> str:
+    plain = text.lower().replace("^", "").replace(" ", "").replace(".", "")
+    if plain in ("cm", "cbm", "cubicmetre", "cubicmetres", "cubicmeter", "cubicmeters"):
+        return "m3"
+    if plain in ("cf", "cft", "ft3", "cuft", "cubicfoot", "cubicfeet"):
+        return "ft3"
+    return text.replace("^", "")
+
+
+def _mass_per_volume(reader, place: int):
+    found = tokens.MASS_PER_VOLUME.match(reader.text, place)
+    if found is None:
+        return None
+    entity = found["entity"]
+    if entity and _species_or_none(entity) is None:
+        return None
+    count = {"million": "million ", "MM": "million ", "10^6": "million ", "106": "million "}.get(found["count"], f"{found['count'] or ''} ")
+    if found["count"] == "M":
+        count = "1000 "                                       # the gas trade's M
+    measured = unit(f"{found['mass']}/{count.lstrip()}{_volume(found['volume'])}")
+    if entity:
+        reader.take("reported_as", _species_or_none(entity), *found.span("entity"))
+    _called(reader, (found["called"] or "").lower().replace(".", ""), found.span("called"))
+    behind = (found["behind"] or "").strip(" ()").lower()
+    _called(reader, {"stp": "STP"}.get(behind, behind), found.span("behind"))
+    return measured, found.end()
+
+
+def _called(reader, word: str, span: tuple[int, int]) -> None:
+    """What a volume is called: normal, standard, dry, actual."""
+    if not word:
+        return
+    if "d" in word.replace("standard", "s").replace("std", "s"):
+        reader.take("water", DRY, *span)
+    if word == "STP":
+        reader.take("conditions_word", "STP", *span)
+    elif "actual" in word or word == "a":
+        reader.take("actual_volume", True, *span)
+    elif "n" in word.replace("standard", "s"):
+        reader.take("conditions_word", "normal", *span)
+    elif "s" in word:
+        reader.take("conditions_word", "standard", *span)
+    elif word == "r":
+        reader.take("conditions_word", "reference", *span)
+
+
+def _amount_per_volume(reader, place: int):
+    found = tokens.AMOUNT_PER_VOLUME.match(reader.text, place)
+    if found is None:
+        return None
+    _called(reader, (found["called"] or "").lower(), found.span("called"))
+    return unit(f"{found['amount']}/{_volume(found['volume'])}"), found.end()
+
+
+def _plain_ratio(reader, place: int):
+    for pattern in (tokens.MASS_PER_MASS, tokens.AMOUNT_PER_AMOUNT, tokens.VOLUME_PER_VOLUME):
+        found = pattern.match(reader.text, place)
+        if found is not None:
+            return unit(f"{found['top']}/{found['bottom'].replace('^', '')}"), found.end()
+    return None
+
+
+_BEFORE = {"vol": "volume", "v": "volume", "mol": "volume", "mole": "volume", "wt": "mass", "w": "mass", "mass": "mass", "m": "mass"}
+
+
+def _parts(reader, place: int):
+    found = tokens.PARTS.match(reader.text, place)
+    if found is None:
+        return None
+    measured = unit(re.sub("per ?cent", "percent", found["parts"].lower()))
+    glued = (found["glued"] or "").lower()
+    letters = glued.rstrip("d") if glued not in ("wd",) else "w"
+    by = _BEFORE.get((found["before"] or "").lower())
+    if glued:
+        by = "mass" if letters in ("w", "m") and not glued.startswith("v") else "volume"
+        if glued in ("vd", "dv"):
+            reader.take("water", DRY, *found.span("glued"))
+        if glued in ("vw", "wv"):
+            reader.take("water", WET, *found.span("glued"))
+    if found["glued_water"]:
+        reader.take("water", DRY if found["glued_water"].lower() == "d" else WET, *found.span("glued_water"))
+    if found["ending_dry"]:
+        reader.take("water", DRY, *found.span("ending_dry"))
+    if by:
+        reader.take("parts_by", by, *(found.span("glued") if glued else found.span("before")))
+    return measured, found.end()
+
+
+def unit_led(reader) -> bool:
+    """A unit without a number: on the owed side, or in a heading such as "NOx (ppm): 142"."""
+    marks = concentration_unit(reader, reader.place)
+    if marks is None:
+        return False
+    measured, end = marks
+    start = reader.place
+    reader.place = end
+    if "pending" in reader.fields:
+        number, began, _ = reader.fields.pop("pending")
+        reader.take("value", Quantity(number, measured), began, end)
+        reader.fields["unit"] = measured
+        return True
+    if reader.fields.get("unit") not in (None, measured):
+        reader.refuse(NotUnderstood(f"A second unit, '{reader.original[start:end]}'.", hint="Give one value in one unit."), start, end)
+        return True
+    reader.fields["unit"] = measured
+    reader.take("unit", measured, start, end)
+    return True
+
+
+# --- words ---
+
+def _word_reader(field: str, table) -> Read:
+    def read(reader) -> bool:
+        for value, pattern in table:
+            found = pattern.match(reader.text, reader.place)
+            if found:
+                return _take(reader, field, value, reader.place, found.end())
+        return False
+    return read
+
+
+def _take(reader, field: str, value: object, start: int, end: int) -> bool:
+    reader.take(field, value, start, end)
+    reader.place = end
+    return True
+
+
+parts_by = _word_reader("parts_by", tokens.PARTS_BY)
+water = _word_reader("water", tokens.WATER)
+conditions_word = _word_reader("conditions_word", tokens.CONDITIONS_WORD)
+actual_volume = _word_reader("actual_volume", ((True, tokens.ACTUAL),))
+matrix_gas = _word_reader("matrix_gas", tuple((MatrixGas(identity), pattern) for identity, pattern in tokens.MATRIX))
+
+
+def reported_as(reader) -> bool:
+    found = tokens.REPORTED_AS.match(reader.text, reader.place)
+    if found is None:
+        return False
+    name = re.sub(r"\s?(?:equivalent|carbon)$", "", found["name"]) or found["name"]
+    if name.lower() in ("carbon", "total"):
+        name = "C"
+    species = _species_or_none(name.rstrip(")")) or _species_or_none(found["name"].rstrip(")"))
+    if species is None:
+        return False
+    end = found.end() - (1 if found["name"].endswith(")") and "(" not in found["name"] else 0)
+    return _take(reader, "reported_as", species, reader.place, end)
+
+
+def _species_or_none(name: str) -> Species | None:
+    try:
+        return find(name)
+    except NotUnderstood:
+        return None
+
+
+def oxygen_meaning(reader) -> bool:
+    """ "corrected to", "ref.", "measured at": what the oxygen behind it is."""
+    for meaning, pattern in ((CORRECTED, tokens.CORRECTED), (MEASURED, tokens.MEASURED)):
+        found = pattern.match(reader.text, reader.place)
+        if found and re.compile(rf"[\d<.,]|{tokens.OXYGEN_NAME}", re.IGNORECASE).match(reader.text, found.end()):
+            reader.fields["oxygen_ahead"] = meaning
+            reader.place = found.end()
+            return True
+    return False
+
+
+def coverage(reader) -> bool:
+    """ "(k=2)": the coverage factor of the value's spread."""
+    found = tokens.COVERAGE.match(reader.text, reader.place)
+    value = reader.fields.get("value")
+    if found is None or value is None or value.number.uncertainty is None:
+        return False
+    factor = Decimal(found["k"].replace(",", "."))
+    uncertainty = replace(value.number.uncertainty, coverage_factor=factor)
+    reader.fields["value"] = replace(value, number=replace(value.number, uncertainty=uncertainty))
+    return _take(reader, "coverage", factor, reader.place, found.end())
+
+
+def stated_molar_mass(reader) -> bool:
+    found = tokens.STATED_MOLAR_MASS.match(reader.text, reader.place)
+    number = NUMBER.match(reader.text, found.end()) if found else None
+    if number is None or tokens.MOLAR_MASS.match(reader.text, _skip(reader.text, number.end())) is None:
+        return False
+    return _molar_mass(reader, _as_number(reader, number), found.start(), number.end())
+
+
+def species(reader) -> bool:
+    found = match_at(reader.text, reader.place)
+    if found is None:
+        return False
+    return _take(reader, "species", found[0], reader.place, found[1])
+
+
+def limit_word(reader) -> bool:
+    found = tokens.LIMIT_WORD.match(reader.text, reader.place)
+    if found is None or reader.side != "limit":
+        return False
+    reader.place = found.end()
+    return True
+
+
+STATEMENT: tuple[Read, ...] = (limit_word, named_share, stated_molar_mass, coverage, reported_as, oxygen_meaning, matrix_gas, number_led,
+                               actual_volume, water, conditions_word, parts_by, unit_led, species)
+
+
+def conclude(reader) -> None:
+    """What only the whole text decides: "O2 9.2 % dry" alone is a value of oxygen, and a lone number has no unit."""
+    if "value" not in reader.fields and reader.side != "owe":
+        for field, identity in (("oxygen", "O2"), ("water_content", "H2O"), ("carbon_dioxide", "CO2")):
+            if field in reader.fields and "species" not in reader.fields:
+                _as_value(reader, field, identity)
+                break
+    value = reader.fields.get("value")
+    if value is not None and value.unit.kind == "parts" and "parts_by" not in reader.fields and value.unit.id == "%":
+        measured = reader.fields.get("species")
+        if measured is not None and measured.id in ("O2", "CO2", "H2O"):
+            reader.fields["parts_by"] = "volume"              # oxygen, carbon dioxide and water in % are by volume: never asked
+    if "pending" in reader.fields:
+        number, start, end = reader.fields.pop("pending")
+        reader.refuse(NotUnderstood(f"'{number.text}' has no unit.", hint="Put its unit behind it, e.g. ppm or mg/m3."), start, end)
+
+
+def _as_value(reader, field: str, identity: str) -> None:
+    quantity = reader.fields.pop(field)
+    reader.fields.update(value=quantity, unit=quantity.unit, species=find(identity))
+    for index, piece in enumerate(reader.pieces):
+        if piece.field == field:
+            reader.pieces[index] = replace(piece, field="value")
+    said = reader.fields.pop(f"{field}_water", None)
+    if said:
+        reader.fields.setdefault("water", said)
+        reader.pieces = [replace(piece, field="water") if piece.field == f"{field}_water" else piece for piece in reader.pieces]
+

@@ -1,0 +1,136 @@
+"""Read a concentration statement: text in; pieces with their places, doubts in the text, and problems out.
+
+The reader walks through the normalised text and at each place tries a short list of readers. What
+none of them reads, and what is no connecting word, is a problem with its place: nothing is dropped.
+"""
+from __future__ import annotations
+
+from dataclasses import replace
+
+from gasbasis.errors import CoreError, NotUnderstood
+from gasbasis.language import readers
+from gasbasis.language.basis import Doubt, Piece, Quantity, Reading, Statement
+from gasbasis.language.normalise import normalise
+from gasbasis.language.tokens import CONNECTOR, WORD
+
+LONGEST = 2000                         # characters
+_COMMON = "common practice, no source"
+_UNDERSTOOD = ("Understood are: a species or formula, a number with a unit, a temperature and pressure, wet or dry, "
+               "'at 11 % O2', 'as NO2', 'by volume', 'in nitrogen'.")
+
+
+class Reader:
+    """What has been read so far of one text; a reader function adds to it and moves the place on."""
+
+    def __init__(self, text: str, side: str):
+        self.original, self.text, self.side = text, normalise(text), side
+        self.place = 0
+        self.fields: dict[str, object] = {}
+        self.pieces: list[Piece] = []
+        self.problems: list[CoreError] = []
+
+    def take(self, field: str, value: object, start: int, end: int) -> None:
+        """Record a piece. A second, different one for the same field is a problem."""
+        if field in self.fields and self.fields[field] != value:
+            first = next((piece.text for piece in self.pieces if piece.field == field), "")
+            self.problems.append(NotUnderstood(
+                f"'{self.original[start:end].strip()}' contradicts '{first}' before it.",
+                hint="Keep one of the two.", field=self.side, span=(start, end)))
+            return
+        self.fields[field] = value
+        span = _trimmed(self.original, start, end)
+        if span not in [piece.span for piece in self.pieces if piece.field == field]:
+            self.pieces.append(Piece(field, self.original[slice(*span)], span))
+
+    def refuse(self, error: CoreError, start: int, end: int) -> None:
+        self.problems.append(error.at(self.side, (start, end)))
+
+
+def _trimmed(text: str, start: int, end: int) -> tuple[int, int]:
+    """The span without blanks and loose punctuation at its ends; brackets stay when both are inside."""
+    while start < end and text[start] in " ,;\n\t":
+        start += 1
+    while end > start and text[end - 1] in " ,;\n\t":
+        end -= 1
+    inner = text[start:end]
+    if inner.startswith("(") and inner.count("(") > inner.count(")"):
+        start += 1
+    if inner.endswith(")") and inner.count(")") > inner.count("("):
+        end -= 1
+    return start, end
+
+
+def read_statement(text: str, side: str) -> tuple[Statement, tuple[CoreError, ...]]:
+    """The statement a text makes on a side ("hold", "owe", "limit"), and what could not be read of it."""
+    refusal = refuse_text(text, side)
+    if refusal is not None:
+        return Statement(text=text), (refusal,)
+    reader = Reader(text, side)
+    walk(reader, readers.STATEMENT)
+    readers.conclude(reader)
+    known = {name: value for name, value in reader.fields.items() if name in Statement.__dataclass_fields__}
+    statement = Statement(text=text, pieces=tuple(sorted(reader.pieces, key=lambda piece: piece.span)), **known)
+    return replace(statement, ambiguities=ambiguities(statement, side)), tuple(reader.problems)
+
+
+def refuse_text(text: str, side: str) -> CoreError | None:
+    """A text that is too long, or holds control characters, is not read at all."""
+    if len(text) > LONGEST:
+        return NotUnderstood(f"The text has {len(text):,} characters; {LONGEST:,} can be read.".replace(",", " "),
+                             hint="Paste one statement, not a whole document.", field=side)
+    for place, character in enumerate(text):
+        if ord(character) < 32 and character not in "\n\r\t" or character == "\x7f":
+            return NotUnderstood(f"The text holds a control character at place {place + 1}.",
+                                 hint="Type it anew, or paste it as plain text.", field=side, span=(place, place + 1))
+    return None
+
+
+def walk(reader: Reader, table) -> None:
+    """Try each reader at each place; step over connecting words; name what is left."""
+    text = reader.text
+    while reader.place < len(text):
+        if text[reader.place].isspace():
+            reader.place += 1
+            continue
+        start = reader.place
+        if any(read(reader) for read in table):
+            if reader.place <= start:
+                raise AssertionError(f"a reader did not move on at {start} of {text!r}")
+            continue
+        found = CONNECTOR.match(text, start)
+        if found is not None:
+            reader.place = found.end()
+            continue
+        word = WORD.match(text, start) or WORD.match(text, start + 1)
+        end = word.end() if word else start + 1
+        reader.refuse(_not_understood(reader.original[start:end]), start, end)
+        reader.place = end
+
+
+def _not_understood(word: str) -> NotUnderstood:
+    from gasbasis.language.species import search
+    near = search(word)[:3] if len(word) > 2 else []
+    hint = f"Did you mean {', '.join(entry['name'] for entry in near)}? " if near else ""
+    return NotUnderstood(f"'{word[:60]}' is not understood.", hint=hint + _UNDERSTOOD)
+
+
+def ambiguities(record, side: str) -> tuple[Doubt, ...]:
+    """Numbers whose only separator may be a decimal sign or group thousands."""
+    doubts = []
+    for field in ("value", "water_content", "oxygen", "carbon_dioxide"):
+        quantity = getattr(record, field, None)
+        if quantity is not None and quantity.number.thousands is not None:
+            doubts.append(_number_doubt(quantity, field, side))
+    return tuple(doubts)
+
+
+def _number_doubt(quantity: Quantity, field: str, side: str) -> Doubt:
+    number = quantity.number
+    readings = []
+    for identity, value, label in (("decimal", number.decimal, "decimal sign"), ("thousands", number.thousands, "thousands")):
+        settled = replace(quantity, number=replace(number, decimal=value, thousands=None, text=str(value)))
+        readings.append(Reading(identity, f"{value} ({label})", ((field, settled),), _COMMON))
+    return Doubt(f"{side}.number" if field == "value" else f"{side}.{field}_number", "decimal sign",
+                 f"Is '{number.text}' {number.decimal} or {number.thousands}?",
+                 "The separator is a decimal sign in one habit and groups thousands in the other: a factor of 1000.",
+                 tuple(readings))

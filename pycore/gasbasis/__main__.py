@@ -78,10 +78,12 @@ def _doubt_lines(doubt: dict) -> list[str]:
         return [f"settled  {doubt['id']}={reading['id']}: {reading['label']}{because}"]
     if doubt["state"] == "calm":
         return [f"quiet    {doubt['id']}: {doubt['effect_text']}"]
-    lines = ["", f"doubt    {doubt['id']} ({doubt['effect_text']}): {doubt['question']}"]
+    effect = f" ({doubt['effect_text']})" if doubt["effect_text"] else ""
+    lines = ["", f"doubt    {doubt['id']}{effect}: {doubt['question']}"]
     for reading in doubt["readings"]:
         usual = "  usual" if reading["usual_because"] else ""
-        lines.append(f"  {doubt['id']}={reading['id']}: {reading['label']}  {reading['text']}{usual}")
+        needs = f"  ({reading['problem']['message']})" if reading["problem"] else ""
+        lines.append(f"  {doubt['id']}={reading['id']}: {reading['label']}  {reading['text']}{usual}{needs}")
     return lines
 
 

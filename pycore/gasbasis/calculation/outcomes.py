@@ -142,6 +142,8 @@ def effect(doubt_id: str, outcomes: tuple[Outcome, ...]) -> float:
         others = tuple(sorted(item for item in outcome.readings.items() if item[0] != doubt_id))
         groups.setdefault(others, []).append(outcome.value)
         by_reading.setdefault(outcome.readings[doubt_id], []).append(outcome.value)
+    if not by_reading:
+        return 0.0                     # no figure under any reading: the problem is shown in its place
     largest = max((_ratio(values) for values in groups.values()), default=0.0)
     aligned = any(len(values) == len(by_reading) for values in groups.values())
     return largest if aligned else max(largest, _ratio([fmean(values) for values in by_reading.values()]))
@@ -158,3 +160,8 @@ def reading_range(doubt_id: str, reading_id: str, outcomes: tuple[Outcome, ...])
     """The smallest and the largest figure with this reading."""
     values = [o.value for o in outcomes if o.value is not None and o.readings.get(doubt_id) == reading_id]
     return (min(values), max(values)) if values else None
+
+
+def reading_problem(doubt_id: str, reading_id: str, outcomes: tuple[Outcome, ...]) -> CoreError | None:
+    """What stands in the way of a figure with this reading, at least in some combination."""
+    return next((o.problem for o in outcomes if o.problem is not None and o.readings.get(doubt_id) == reading_id), None)

@@ -5,12 +5,14 @@ none of them reads, and what is no connecting word, is a problem with its place:
 """
 from __future__ import annotations
 
+import re
 from dataclasses import replace
 
 from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language import readers
 from gasbasis.language.basis import Doubt, Piece, Quantity, Reading, Statement
 from gasbasis.language.normalise import normalise
+from gasbasis.language.species import find, search
 from gasbasis.language.tokens import CONNECTOR, WORD
 
 LONGEST = 2000                         # characters
@@ -108,7 +110,11 @@ def walk(reader: Reader, table) -> None:
 
 
 def _not_understood(word: str) -> NotUnderstood:
-    from gasbasis.language.species import search
+    if re.fullmatch(r"(?:[A-Z][a-z]?\d*){2,}|[A-Z][a-z]?\d+", word):   # meant as a formula: say what is wrong with it
+        try:
+            find(word)
+        except NotUnderstood as error:
+            return error
     near = search(word)[:3] if len(word) > 2 else []
     hint = f"Did you mean {', '.join(entry['name'] for entry in near)}? " if near else ""
     return NotUnderstood(f"'{word[:60]}' is not understood.", hint=hint + _UNDERSTOOD)

@@ -7,7 +7,7 @@ from typing import Mapping
 from gasbasis.calculation.basis_words import unit_words
 from gasbasis.calculation.case import Case, make_case
 from gasbasis.calculation.leaves import SIDE_TITLES
-from gasbasis.calculation.outcomes import Settled, Spread, effect, reading_range, settle, spread
+from gasbasis.calculation.outcomes import Settled, Spread, effect, reading_problem, reading_range, settle, spread
 from gasbasis.calculation.path import figure_value
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.working import bars, working
@@ -142,9 +142,11 @@ def _doubt_record(doubt: Doubt, state: str, chosen: str | None, sheet: Sheet, fo
     readings = []
     for reading in doubt.readings:
         ends = reading_range(doubt.id, reading.id, found.outcomes) if state != "settled" else None
+        problem = reading_problem(doubt.id, reading.id, found.outcomes) if state != "settled" else None
         readings.append({"id": reading.id, "label": reading.label, "source": reading.source,
                          "usual_because": reading.usual_because, "text": _range_text(ends),
-                         "figure": {"low": ends[0], "high": ends[1]} if ends else None})
+                         "figure": {"low": ends[0], "high": ends[1]} if ends else None,
+                         "problem": problem.as_json() if problem else None})
     usual = next((reading.id for reading in doubt.readings if reading.usual_because), None)
     side = doubt.id.partition(".")[0]
     return {"id": doubt.id, "side": side, "side_title": SIDE_TITLES.get(side, side), "title": doubt.title,
@@ -160,7 +162,7 @@ def _range_text(ends: tuple[float, float] | None) -> str:
 
 
 def _effect_text(size: float | None, state: str) -> str:
-    if size is None:
+    if size is None or (state == "open" and not size):
         return ""
     if state == "calm":
         return f"no visible effect: {significant(100 * size, 1)} %" if size else "no effect"

@@ -19,7 +19,7 @@ sys.dont_write_bytecode = True
 sys.path.insert(0, str(Path(__file__).resolve().parent / "pycore"))
 
 from making.places import Places  # noqa: E402  (the path must be set first)
-from making.steps import BuildFailed, say  # noqa: E402
+from making.steps import BuildFailed, one_at_a_time, say  # noqa: E402
 
 
 def build(places: Places = Places()):
@@ -27,13 +27,14 @@ def build(places: Places = Places()):
     from making import sizes, site, toolchain, wheel
     from making.runtime import build_runtime
     started = time.monotonic()
-    toolchain.venv()
-    toolchain.install_locked("build")
-    toolchain.install_locked("page")
-    built = wheel.build_wheel(places)
-    wheel.install_wheel(built)
-    runtime = build_runtime(built, places)
-    site.build_site(runtime, places)
+    with one_at_a_time(Places().work):
+        toolchain.venv()
+        toolchain.install_locked("build")
+        toolchain.install_locked("page")
+        built = wheel.build_wheel(places)
+        wheel.install_wheel(built)
+        runtime = build_runtime(built, places)
+        site.build_site(runtime, places)
     sizes.report(places.dist)
     say(f"built {places.dist.name}/ in {time.monotonic() - started:.1f} s")
     return runtime

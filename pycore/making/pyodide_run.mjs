@@ -9,6 +9,11 @@
 import { readFileSync, writeFileSync } from "node:fs";
 import { pathToFileURL } from "node:url";
 
+process.on("uncaughtException", (error) => {      // Node would print the engine's source, one line of a megabyte
+  console.error(String(error.message ?? error));
+  process.exit(1);
+});
+
 const job = JSON.parse(readFileSync(process.argv[2], "utf8"));
 const { loadPyodide } = await import(pathToFileURL(`${job.pyodide}/pyodide.mjs`).href);
 const lock = JSON.parse(readFileSync(`${job.pyodide}/pyodide-lock.json`, "utf8"));

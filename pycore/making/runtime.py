@@ -20,9 +20,8 @@ LEAVE_OUT = ["pint/testsuite/", "pint/default_en.txt", "pint/constants_en.txt", 
 
 # Modules of the standard library that must stay although no traced run imports them: they are
 # imported inside functions, when something rare happens.
-KEEP = ["base64", "binascii", "datetime", "decimal", "encodings.ascii", "encodings.idna", "encodings.latin_1", "encodings.utf_16",
-        "fractions", "hashlib", "json", "locale", "math", "random", "statistics", "textwrap", "traceback", "unicodedata", "zlib",
-        "pyodide.ffi", "pyodide.webloop", "linecache", "tokenize", "difflib", "csv", "string", "copy", "pprint", "heapq", "bisect"]
+KEEP = ["base64", "datetime", "decimal", "encodings.ascii", "encodings.latin_1", "hashlib", "json", "linecache", "locale",
+        "textwrap", "traceback", "unicodedata", "zlib"]
 
 
 @dataclass(frozen=True)
@@ -66,7 +65,7 @@ def in_pyodide(node_command: str, places: Places, *, script: str, call: str, arg
 
 def _whole_stdlib(node_command: str, places: Places) -> Path:
     folder = places.work / "stdlib"
-    stamp = Stamp(places.work / "stamps" / "stdlib", digest_of([places.pyodide / "python_stdlib.zip", INSIDE / "compiled.py"]))
+    stamp = Stamp(places.work / "stamps" / "stdlib", digest_of([places.pyodide / "python_stdlib.zip", INSIDE / "compiled.py", INSIDE / "install.py"]))
     if not stamp.fresh(folder / "stdlib.zip"):
         say("compiling the standard library with Pyodide's own Python")
         folder.mkdir(parents=True, exist_ok=True)

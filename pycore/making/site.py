@@ -20,7 +20,7 @@ NOT_COPIED = ("sw.js",)
 
 def build_site(runtime: Runtime, places: Places) -> Path:
     """Write dist/ anew and return it. The same inputs give the same bytes."""
-    fresh = places.dist.with_name(places.dist.name + ".new")
+    fresh = places.work / "site"
     shutil.rmtree(fresh, ignore_errors=True)
     shutil.copytree(WEB, fresh, ignore=shutil.ignore_patterns(*NOT_COPIED, ".*", "*.md"))
     _write_page(fresh)
@@ -28,12 +28,14 @@ def build_site(runtime: Runtime, places: Places) -> Path:
     (fresh / "licences.txt").write_text(licences_text(runtime, places), encoding="utf-8")
     _write_service_worker(fresh)
     shutil.rmtree(places.dist, ignore_errors=True)
-    fresh.rename(places.dist)
+    shutil.move(fresh, places.dist)
     return places.dist
 
 
 def _write_page(site: Path) -> None:
     page = site / "index.html"
+    if not page.exists():
+        raise BuildFailed("web/index.html is missing.")
     text = page.read_text(encoding="utf-8")
     if text.count(HEAD) != 1:
         raise BuildFailed(f"web/index.html must hold {HEAD} once: the policy is put behind it.")

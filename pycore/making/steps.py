@@ -1,12 +1,18 @@
 """Running commands, and not running them again while their inputs are the same."""
 from __future__ import annotations
 
+import contextlib
 import hashlib
 import os
 import subprocess
 import sys
 from pathlib import Path
-from typing import Iterable, Sequence
+from typing import Iterable, Iterator, Sequence
+
+try:
+    import fcntl
+except ImportError:                     # not on Windows; builds there are not guarded against each other
+    fcntl = None
 
 
 class BuildFailed(Exception):
@@ -46,6 +52,16 @@ def files_under(path: Path) -> list[Path]:
     if path.is_file():
         return [path]
     return [file for file in path.rglob("*") if file.is_file() and "__pycache__" not in file.parts]
+
+
+@contextlib.contextmanager
+def one_at_a_time(folder: Path) -> Iterator[None]:
+    """Hold the folder's lock: a second build waits for the first instead of writing into its files."""
+    folder.mkdir(parents=True, exist_ok=True)
+    with open(folder / "lock", "w") as lock:
+        if fcntl:
+            fcntl.flock(lock, fcntl.LOCK_EX)
+        yield
 
 
 class Stamp:

@@ -22,7 +22,7 @@ def venv() -> Path:
     if not _has_pip():
         say("making .venv")
         if not _make_venv():
-            _install_debian_packages("python3-venv", what="Python's venv module is missing")
+            install_debian_packages("python3-venv", what="Python's venv module is missing")
             if not _make_venv():
                 raise BuildFailed("The virtual environment could not be made. Run: python3 -m venv .venv")
     return VENV_PYTHON
@@ -38,7 +38,7 @@ def _make_venv() -> bool:
     return subprocess.run([sys.executable, "-m", "venv", VENV], capture_output=True).returncode == 0 and _has_pip()
 
 
-def _install_debian_packages(*packages: str, what: str) -> None:
+def install_debian_packages(*packages: str, what: str) -> None:
     """Install Debian packages when that is allowed; otherwise name the one command that does it."""
     command = f"apt-get install -y {' '.join(packages)}"
     root = hasattr(os, "geteuid") and os.geteuid() == 0
@@ -80,7 +80,7 @@ def node(places: Places) -> str:
     """The `node` command, with the pinned Pyodide installed beside it."""
     node_command, npm_command = shutil.which("node"), shutil.which("npm")
     if not node_command or not npm_command:
-        _install_debian_packages("nodejs", "npm", what="Node with npm is missing")
+        install_debian_packages("nodejs", "npm", what="Node with npm is missing")
         node_command, npm_command = shutil.which("node"), shutil.which("npm")
     lock = LOCKS / "package-lock.json"
     stamp = Stamp(ROOT / ".build" / "stamps" / "node", digest_of([LOCKS / "package.json", lock]))

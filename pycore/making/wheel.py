@@ -14,7 +14,7 @@ def build_wheel(places: Places) -> Path:
     """Build gasbasis-<version>-py3-none-any.whl into the work folder and return its path."""
     folder = places.work / "wheel"
     sources = [path for path in sorted(PACKAGE.rglob("*")) if path.is_file() and path.name != "facts.json" and "__pycache__" not in path.parts]
-    about = [ROOT / name for name in ("pyproject.toml", "README.md", "LICENSE") if (ROOT / name).exists()]
+    about = [ROOT / name for name in ("pyproject.toml", "LICENSE") if (ROOT / name).exists()]
     names = " ".join(path.relative_to(ROOT).as_posix() for path in sources)
     stamp = Stamp(places.work / "stamps" / "wheel",
                   digest_of([*sources, *about, MAKING / "wheel_hook.py", MAKING / "compile_facts.py"], names))

@@ -6,13 +6,17 @@ import hashlib
 import importlib._bootstrap_external as bootstrap
 import importlib.util
 import zipfile
+from typing import Callable
 
 DATE = (2026, 1, 1, 0, 0, 0)            # of every entry: an archive must not know when it was made
 
 
-def compiled(source: bytes, name: str) -> bytes:
+KEEP_DOCSTRINGS, DROP_DOCSTRINGS = 0, 2  # compile()'s optimisation levels; the second drops assert as well
+
+
+def compiled(source: bytes, name: str, level: int) -> bytes:
     """The .pyc of a module: checked by hash and never against a source, as there is none beside it."""
-    code = compile(source, name, "exec", dont_inherit=True, optimize=0)
+    code = compile(source, name, "exec", dont_inherit=True, optimize=level)
     return bytes(bootstrap._code_to_hash_pyc(code, importlib.util.source_hash(source), checked=False))
 
 
@@ -25,12 +29,12 @@ def pack(entries: dict[str, bytes], path: str) -> None:
             archive.writestr(info, entries[name])
 
 
-def as_compiled(files: dict[str, bytes], place: str) -> dict[str, bytes]:
+def as_compiled(files: dict[str, bytes], place: str, level_of: Callable[[str], int]) -> dict[str, bytes]:
     """The same files with each .py replaced by its .pyc. `place` is the name that tracebacks show."""
     entries = {}
     for name, content in files.items():
         if name.endswith(".py"):
-            entries[name + "c"] = compiled(content, f"{place}/{name}")
+            entries[name + "c"] = compiled(content, f"{place}/{name}", level_of(name))
         else:
             entries[name] = content
     return entries

@@ -9,12 +9,16 @@ import pkgutil
 import zipfile
 from pathlib import Path
 
-from compiled import as_compiled, pack, record
+from compiled import DROP_DOCSTRINGS, KEEP_DOCSTRINGS, as_compiled, pack, record
 
 SITE = Path("/lib/python3.14/site-packages")
 TAG = "cp314-none-any"
 NO_INDEX = "file:///no-index"           # whatever is not among our wheels must be missed, not fetched
 NOT_SHIPPED = ("INSTALLER", "REQUESTED", "direct_url.json", "PYODIDE_SOURCE", "PYODIDE_URL", "PYODIDE_SHA256")
+
+
+class NotLoadable(Exception):
+    """The list of what the wheel misses inside Pyodide."""
 
 
 async def install(argument: str) -> str:
@@ -24,7 +28,7 @@ async def install(argument: str) -> str:
     missing += [] if missing else _unmet_requirements(job["package"])
     missing += [] if missing else _unimportable(job["package"])
     if missing:
-        raise SystemExit("The wheel does not load inside Pyodide:\n" + "\n".join(f"  - {line}" for line in missing))
+        raise NotLoadable("The wheel does not load inside Pyodide:\n" + "\n".join(f"  - {line}" for line in missing))
     made = [_write_wheel(distribution, job["leave_out"]) for distribution in _installed()]
     return json.dumps(made)
 
@@ -96,7 +100,7 @@ def _write_wheel(distribution: importlib.metadata.Distribution, leave_out: list[
     folder = about.rpartition("/")[0]
     files.pop(f"{folder}/RECORD", None)
     files[about] = f"Wheel-Version: 1.0\nGenerator: gasbasis build\nRoot-Is-Purelib: true\nTag: {TAG}\n".encode()
-    entries = as_compiled(files, file_name)
+    entries = as_compiled(files, file_name, lambda path: KEEP_DOCSTRINGS)
     entries[f"{folder}/RECORD"] = record(entries, f"{folder}/RECORD")
     pack(entries, f"/out/{file_name}")
     return {"name": distribution.metadata["Name"], "version": distribution.version, "file": file_name}
@@ -106,6 +110,11 @@ def compile_stdlib(argument: str) -> str:
     """Compile the whole standard library as Pyodide ships it (/pyodide/python_stdlib.zip) into /out/stdlib.zip."""
     with zipfile.ZipFile("/pyodide/python_stdlib.zip") as archive:
         files = {name: archive.read(name) for name in archive.namelist() if not name.endswith("/")}
-    entries = as_compiled({name: content for name, content in files.items() if "__pycache__" not in name}, "python314.zip")
+    entries = as_compiled(files, "python314.zip", _level_in_stdlib)
     pack(entries, "/out/stdlib.zip")
     return json.dumps({"files": len(entries)})
+
+
+def _level_in_stdlib(path: str) -> int:
+    """Docstrings are a sixth of the library's size on the wire; Pyodide's own modules read theirs at boot."""
+    return KEEP_DOCSTRINGS if path.startswith(("_pyodide/", "pyodide/")) else DROP_DOCSTRINGS

@@ -85,3 +85,13 @@ def mass_fraction_from_mass_per_amount_of_gas(q, M_gas):
 def molar_volume(Z, R, T, p):
     """Volume of one mole of gas. [m3/mol]"""
     return Z * R * T / p
+
+
+def mass_concentration_from_molar_volume(x, M, V_m):
+    """Mass of a species in a volume of gas, by a rule's own molar volume. [kg/m3]"""
+    return x * M / V_m
+
+
+def amount_fraction_from_molar_volume(gamma, M, V_m):
+    """Amount of a species per amount of gas, by a rule's own molar volume. [mol/mol]"""
+    return gamma * V_m / M

@@ -13,6 +13,7 @@ _SYMBOLS: dict[str, Symbol] = {
     "x": AMOUNT_FRACTION, "w": MASS_FRACTION, "gamma": MASS_CONCENTRATION, "c": AMOUNT_CONCENTRATION,
     "p_i": PARTIAL_PRESSURE, "q": MASS_PER_AMOUNT, "p": PRESSURE, "T": TEMPERATURE, "Z": COMPRESSION_FACTOR,
     "R": GAS_CONSTANT, "M": MOLAR_MASS, "M_gas": GAS_MOLAR_MASS,
+    "V_m": Symbol("V", "m", "m3/mol", "molar volume of a gas", "m3/mol_g"),
     "p_1": marked(PRESSURE, "1", "pressure the volume is held at"), "p_2": marked(PRESSURE, "2", "pressure the volume is owed at"),
     "T_1": marked(TEMPERATURE, "1", "temperature the volume is held at"),
     "T_2": marked(TEMPERATURE, "2", "temperature the volume is owed at"),
@@ -23,6 +24,7 @@ _BOUNDS: dict[str, Bound] = {
     **{name: temperature_bound(name) for name in ("T", "T_1", "T_2")},
     **{name: pressure_bound(name) for name in ("p", "p_1", "p_2")},
     **{name: positive(name, "a molar mass is above zero", "Give it in g/mol, e.g. 'M 28.9 g/mol'.") for name in ("M", "M_gas")},
+    "V_m": positive("V_m", "a molar volume is above zero", "Give it in L/mol."),
 }
 
 
@@ -47,6 +49,9 @@ RELATIONS = (
     _relation(gas_law.amount_concentration_from_mass_concentration, "c", "Mass concentration to amount concentration"),
     _relation(gas_law.mass_concentration_at_conditions, "gamma", "Mass concentration at other temperature and pressure"),
     _relation(gas_law.amount_concentration_at_conditions, "c", "Amount concentration at other temperature and pressure"),
+    _relation(gas_law.molar_volume, "V_m", "Molar volume of the gas"),
+    _relation(gas_law.mass_concentration_from_molar_volume, "gamma", "Amount fraction to mass concentration by a stated molar volume"),
+    _relation(gas_law.amount_fraction_from_molar_volume, "x", "Mass concentration to amount fraction by a stated molar volume"),
     _relation(gas_law.mass_per_amount_of_gas_from_mass_fraction, "q", "Mass fraction to mass per amount of gas"),
     _relation(gas_law.mass_fraction_from_mass_per_amount_of_gas, "w", "Mass per amount of gas to mass fraction"),
 )

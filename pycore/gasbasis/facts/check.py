@@ -15,7 +15,7 @@ FIELDS: Mapping[str, Mapping[str, Any]] = {   # collection -> field -> default; 
     "atomic_weight": {"id": ..., "text": ..., "unit": ..., "uncertainty": ..., "source": ..., "locator": ..., "read": ..., "note": ""},
     "ambient_oxygen": {"id": ..., "text": ..., "unit": ..., "uncertainty": "", "source": ..., "locator": ..., "read": ..., "note": ""},
     "species": {"id": ..., "name": ..., "formula": None, "cas": None, "names": ..., "family": ..., "needs_reported_as": False,
-                "usual_reported_as": None, "note": "", "source": ..., "locator": ..., "read": ...},
+                "usual_reported_as": None, "reported_as": [], "note": "", "source": ..., "locator": ..., "read": ...},
     "reference_conditions": {"id": ..., "name": ..., "words": ..., "temperature": ..., "pressure": ..., "water": None,
                              "region": ..., "source": ..., "locator": ..., "read": ..., "note": ""},
     "rule_book": {"id": ..., "title": ..., "edition": ..., "clause": ..., "source": ..., "read": ..., "owe": ..., "words": ...,
@@ -66,6 +66,7 @@ def check(collections: Mapping[str, list[dict[str, Any]]], tables: Mapping[str, 
     if orphans:
         raise FactsError(f"Nobody cites the source '{orphans[0]}'.", hint="Cite it or take it out.")
     _check_species_names(collections["species"], tables.get("cautious_names", {}).get("names", ()))
+    _check_reported_as(collections["species"], {row["id"] for row in collections["atomic_weight"]})
 
 
 def complete(collection: str, row: Mapping[str, Any], common: Mapping[str, Any]) -> dict[str, Any]:
@@ -148,8 +149,8 @@ def _species(row: Mapping[str, Any]) -> None:
         raise FactsError(f"species {row['id']}: the check digit of the CAS number {row['cas']} is wrong.")
     if row["needs_reported_as"] and row["formula"] is not None:
         raise FactsError(f"species {row['id']}: a species with a formula needs no 'reported as'.")
-    if row["usual_reported_as"] and not row["needs_reported_as"]:
-        raise FactsError(f"species {row['id']}: has a usual 'reported as' but does not need one.")
+    if row["needs_reported_as"] != bool(row["reported_as"]) or row["usual_reported_as"] not in (None, *row["reported_as"][:1]):
+        raise FactsError(f"species {row['id']}: 'reported_as' lists what it is reported as, the usual one first, and only where it needs it.")
 
 
 def _conditions(row: Mapping[str, Any]) -> None:
@@ -199,14 +200,19 @@ def _check_species_names(rows: list[dict[str, Any]], cautious: Iterable[str]) ->
     """No name may mean two species. Cautious names count as written, all others in any case."""
     cautious = set(cautious)
     owner: dict[str, str] = {}
-    ids = {row["id"] for row in rows}
     for row in rows:
-        if row["usual_reported_as"] and row["usual_reported_as"] not in ids:
-            raise FactsError(f"species {row['id']}: usually reported as '{row['usual_reported_as']}', which is not in the table.")
         for name in {row["id"], row["name"], *row["names"]}:
             key = name if name in cautious else name.casefold()
             if owner.setdefault(key, row["id"]) != row["id"]:
                 raise FactsError(f"The name '{name}' belongs to two species: {owner[key]} and {row['id']}.")
+
+
+def _check_reported_as(rows: list[dict[str, Any]], elements: set[str]) -> None:
+    known = elements | {row["id"] for row in rows if row["formula"]}
+    for row in rows:
+        for id in row["reported_as"]:
+            if id not in known:
+                raise FactsError(f"species {row['id']}: is reported as '{id}', which is no element and no species with a formula.")
 
 
 _CHECKS = {"source": _source, "constant": _datum(None), "atomic_weight": _datum("atomic_weight"), "ambient_oxygen": _datum("percent"),

@@ -84,7 +84,7 @@ def student_t() -> Mapping[int, float]:
 @lru_cache(maxsize=None)
 def species() -> tuple[SpeciesRow, ...]:
     """Every species of the table."""
-    return tuple(SpeciesRow(**{**row, "names": tuple(row["names"])}) for row in _rows("species"))
+    return tuple(SpeciesRow(**{**row, "names": tuple(row["names"]), "reported_as": tuple(row["reported_as"])}) for row in _rows("species"))
 
 
 @lru_cache(maxsize=None)

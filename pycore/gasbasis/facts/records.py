@@ -49,7 +49,8 @@ class SpeciesRow:
     names: tuple[str, ...]             # what people type, beside the id and the name
     family: str
     needs_reported_as: bool            # its mass has no meaning without "as": NOx, TOC, total sulphur
-    usual_reported_as: str | None      # the id of the species it is usually reported as
+    usual_reported_as: str | None      # the species it is usually reported as
+    reported_as: tuple[str, ...]       # every species it is credibly reported as, the usual one first
     note: str
     source: str
     locator: str

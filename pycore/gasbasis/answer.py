@@ -9,8 +9,9 @@ from gasbasis import __version__
 from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.edit import edit
 from gasbasis.records.catalogue import catalogue, search
+from gasbasis.records.link import read_code, write_code
 from gasbasis.records.restated import restated
-from gasbasis.records.sheet import read_sheet
+from gasbasis.records.sheet import read_sheet, write_sheet
 
 LONGEST_REQUEST = 200_000              # characters; a sheet is far below, a pasted file far above
 SIDES = ("hold", "gas", "owe", "limit")
@@ -71,10 +72,28 @@ def _search(request: Mapping) -> dict:
     return {"found": search(what, text)}
 
 
+def _link(request: Mapping) -> dict:
+    figure = request.get("figure")
+    if not isinstance(figure, str):
+        raise NotUnderstood("A link carries the figure as it is shown, as text.", hint="Give 'figure', empty if there is none.", field="link")
+    code = write_code(read_sheet(request.get("sheet")), figure, with_names=request.get("with_names") is True)
+    return {"code": code, "length": len(code)}
+
+
+def _open(request: Mapping) -> dict:
+    code = request.get("code")
+    if not isinstance(code, str):
+        raise NotUnderstood("There is no link to open.", hint="Paste the whole link.", field="link")
+    opened = read_code(code)
+    return {"sheet": write_sheet(opened.sheet), "as_sent": opened.as_sent}
+
+
 TASKS: Mapping[str, Callable[[Mapping], dict]] = {
     "restate": _restate,
     "edit": _edit,
     "search": _search,
+    "link": _link,
+    "open": _open,
     "catalogue": lambda request: catalogue(),
     "version": lambda request: {"version": __version__},
 }

@@ -8,6 +8,7 @@ from pathlib import Path
 ROOT = Path(__file__).resolve().parents[2]
 LOCKS = ROOT / "locks"
 WEB = ROOT / "web"
+DEMO = ROOT / "demo"
 PACKAGE = ROOT / "pycore" / "gasbasis"
 MAKING = ROOT / "pycore" / "making"
 VENV = ROOT / ".venv"

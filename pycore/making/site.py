@@ -8,7 +8,7 @@ from pathlib import Path
 
 from making.licences import licences_text
 from making.media import media_type
-from making.places import WEB, Places
+from making.places import DEMO, WEB, Places
 from making.policy import POLICY
 from making.runtime import Runtime
 from making.steps import BuildFailed
@@ -24,9 +24,10 @@ def build_site(runtime: Runtime, places: Places) -> Path:
     shutil.rmtree(fresh, ignore_errors=True)
     shutil.copytree(WEB, fresh, ignore=shutil.ignore_patterns(*NOT_COPIED, ".*", "*.md"))
     _write_page(fresh)
+    _write_examples(fresh / "demo")
     _write_runtime(fresh / "runtime", runtime, places)
     (fresh / "licences.txt").write_text(licences_text(runtime, places), encoding="utf-8")
-    _write_service_worker(fresh)
+    write_service_worker(fresh)
     shutil.rmtree(places.dist, ignore_errors=True)
     shutil.move(fresh, places.dist)
     return places.dist
@@ -41,6 +42,13 @@ def _write_page(site: Path) -> None:
         raise BuildFailed(f"web/index.html must hold {HEAD} once: the policy is put behind it.")
     policy = f'{HEAD}\n<meta http-equiv="Content-Security-Policy" content="{POLICY}">'
     page.write_text(text.replace(HEAD, policy), encoding="utf-8")
+
+
+def _write_examples(folder: Path) -> None:
+    """The invented sheets, for the page to offer."""
+    folder.mkdir()
+    sheets = [json.loads(path.read_text(encoding="utf-8")) for path in sorted(DEMO.glob("*.json"))]
+    (folder / "sheets.json").write_text(json.dumps(sheets, ensure_ascii=False, sort_keys=True), encoding="utf-8")
 
 
 def _write_runtime(folder: Path, runtime: Runtime, places: Places) -> None:
@@ -67,7 +75,8 @@ def assets(site: Path) -> list[dict]:
     return rows
 
 
-def _write_service_worker(site: Path) -> None:
+def write_service_worker(site: Path) -> None:
+    """Write sw.js for the files that lie in the folder now."""
     rows = assets(site)
     source = (WEB / "sw.js").read_text(encoding="utf-8")
     total = hashlib.sha256(source.encode() + json.dumps(rows, sort_keys=True).encode() + POLICY.encode()).hexdigest()

@@ -69,6 +69,7 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
       change({ phase: "failed", message: `The page could not be kept for use without a network: ${error.message ?? error}` });
       return;
     }
+    if (!registration) return;         // service workers are blocked: nothing is kept, nothing is promised
     watchForUpdate();
     registration.active?.postMessage({ type: "started" });
     check();

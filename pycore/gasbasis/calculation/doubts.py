@@ -113,8 +113,8 @@ def _oxygen_meaning(case: Case) -> list[Doubt]:
     return [Doubt(
         "hold.oxygen_meaning", f"{percent} % O₂", f"Is {percent} % the oxygen measured, or the oxygen it is corrected to?",
         "A measured oxygen is where the correction starts; a corrected value has had it already.",
-        (Reading(MEASURED, "measured in the gas", (("oxygen_meaning", MEASURED),), COMMON),
-         Reading(CORRECTED, "already corrected to it", (("oxygen_meaning", CORRECTED),), COMMON)))]
+        (Reading(MEASURED, "measured", (("oxygen_meaning", MEASURED),), COMMON),
+         Reading(CORRECTED, "corrected to it", (("oxygen_meaning", CORRECTED),), COMMON)))]
 
 
 def _owed_oxygen(case: Case) -> list[Doubt]:
@@ -137,13 +137,12 @@ def _oxygen_water(case: Case) -> list[Doubt]:
     hold, gas = case.hold, case.gas
     side = "hold" if hold.oxygen is not None and hold.oxygen_meaning == MEASURED else "gas"
     oxygen, water = (hold.oxygen, hold.oxygen_water or gas.oxygen_water) if side == "hold" else (gas.oxygen, gas.oxygen_water)
-    if oxygen is None or water is not None:
-        return []
-    usual = "measured with a value that is stated dry" if side == "hold" and hold.water == DRY else ""
+    if oxygen is None or water is not None or (side == "hold" and hold.water == DRY):
+        return []                      # "142 ppm dry at 9.2 % O2": a statement's dry holds for its oxygen too
     return [Doubt(
         f"{side}.oxygen_water", "oxygen read", f"Was the oxygen of {oxygen.number.text} % read in wet or in dry gas?",
         "Extractive analysers behind a cooler read dry gas, probes in the duct read wet gas.",
-        (Reading(DRY, "dry", (("oxygen_water", DRY),), COMMON, usual),
+        (Reading(DRY, "dry", (("oxygen_water", DRY),), COMMON),
          Reading(WET, "wet", (("oxygen_water", WET),), COMMON)))]
 
 

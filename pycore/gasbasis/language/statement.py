@@ -104,9 +104,21 @@ def walk(reader: Reader, table) -> None:
             reader.place = found.end()
             continue
         word = WORD.match(text, start) or WORD.match(text, start + 1)
-        end = word.end() if word else start + 1
-        reader.refuse(_not_understood(reader.original[start:end]), start, end)
-        reader.place = end
+        reader.place = word.end() if word else start + 1
+        _leave(reader, start, reader.place)
+
+
+def _leave(reader: Reader, start: int, end: int) -> None:
+    """Name what is not understood; a word next to another unknown one joins it."""
+    last = reader.problems[-1] if reader.problems else None
+    if isinstance(last, Unknown) and not reader.original[last.span[1]:start].strip(" ,;()"):
+        start = last.span[0]
+        reader.problems.pop()
+    reader.refuse(_not_understood(reader.original[start:end]), start, end)
+
+
+class Unknown(NotUnderstood):
+    """Words none of the readers knows."""
 
 
 def _not_understood(word: str) -> NotUnderstood:
@@ -117,7 +129,7 @@ def _not_understood(word: str) -> NotUnderstood:
             return error
     near = search(word)[:3] if len(word) > 2 else []
     hint = f"Did you mean {', '.join(entry['name'] for entry in near)}? " if near else ""
-    return NotUnderstood(f"'{word[:60]}' is not understood.", hint=hint + _UNDERSTOOD)
+    return Unknown(f"'{word[:60]}' is not understood.", hint=hint + _UNDERSTOOD)
 
 
 def ambiguities(record, side: str) -> tuple[Doubt, ...]:

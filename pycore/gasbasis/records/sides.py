@@ -12,7 +12,7 @@ def side_record(side: str, record: Statement | Gas, settled: Settled, problems: 
     wrong = {problem.field.partition(".")[2] for problem in problems if problem.field.startswith(f"{side}.")}
     doubts = {doubt.id.partition(".")[2]: doubt for doubt in settled.open if doubt.id.startswith(f"{side}.")}
     taken = {doubt.id.partition(".")[2]: (doubt, reading) for doubt, reading in settled.taken if doubt.id.startswith(f"{side}.")}
-    pieces = [_stated(side, piece, wrong, doubts) for piece in record.pieces]
+    pieces = [_stated(side, piece, record, wrong, doubts) for piece in record.pieces]
     shown = {piece["field"] for piece in pieces}
     pieces.extend(_open(side, field, doubt) for field, doubt in doubts.items() if field not in shown)
     pieces.extend(_settled(side, field, doubt, reading) for field, (doubt, reading) in taken.items() if field not in shown)
@@ -25,10 +25,25 @@ def _covered_by(doubts: dict[str, Doubt], taken: dict) -> set[str]:
     return {"temperature", "pressure"} if "conditions" in doubts or "conditions" in taken else set()
 
 
-def _stated(side: str, piece: Piece, wrong: set[str], doubts: dict[str, Doubt]) -> dict:
+_PARTS = {"volume": "by volume", "mass": "by mass", "mass_by_volume": "mass in volume"}
+
+
+def _words(piece: Piece, record: Statement | Gas) -> str:
+    """The piece as understood where what was typed is a letter glued to a unit; else as typed."""
+    if len(piece.text) > 2:
+        return piece.text
+    value = getattr(record, piece.field, None)
+    if piece.field == "parts_by":
+        return _PARTS[value]
+    if piece.field == "reported_as":
+        return f"as {piece.text}"
+    return value if piece.field in ("water", "conditions_word") else "actual" if piece.field == "actual_volume" else piece.text
+
+
+def _stated(side: str, piece: Piece, record: Statement | Gas, wrong: set[str], doubts: dict[str, Doubt]) -> dict:
     state = "wrong" if piece.field in wrong else "open" if piece.field in doubts else "stated"
     doubt = doubts[piece.field].id if piece.field in doubts else _number_doubt(piece, doubts)
-    return {"field": piece.field, "text": piece.text, "span": list(piece.span), "state": "open" if doubt else state,
+    return {"field": piece.field, "text": _words(piece, record), "span": list(piece.span), "state": "open" if doubt else state,
             "doubt": doubt, **_described(side, piece.field)}
 
 

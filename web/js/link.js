@@ -1,0 +1,38 @@
+/** A link's code in the address: the sender's figure can be read at once, the sheet only by the core. */
+const HEAD = 4;
+
+/** The code behind #, whatever a mail program made of the sign. @param {string} address */
+export function codeIn(address) {
+  const fragment = address.replace(/%(25)*23/g, "#").split("#").slice(1).join("");
+  return /^[0-9][tz]/.test(fragment) ? fragment : "";
+}
+
+/** The figure as its sender saw it, unchecked. @param {string} code */
+export function figureAsSent(code) {
+  try {
+    const length = parseInt(code.slice(2, HEAD), 36);
+    const text = code.slice(HEAD, HEAD + length).replace(/-/g, "+").replace(/_/g, "/");
+    return new TextDecoder("utf-8", { fatal: true }).decode(Uint8Array.from(atob(text), (sign) => sign.charCodeAt(0)));
+  } catch {
+    return "";
+  }
+}
+
+/** Hand a link on: the share sheet where there is one, else the clipboard. @param {string} code */
+export async function handOn(code) {
+  const link = `${location.origin}${location.pathname}#${code}`;
+  if (navigator.share && matchMedia("(pointer: coarse)").matches) {
+    try {
+      await navigator.share({ url: link });
+      return "";
+    } catch (error) {
+      if (error.name === "AbortError") return "";
+    }
+  }
+  try {
+    await navigator.clipboard.writeText(link);
+    return `The link is copied: ${link}`;
+  } catch {
+    return `Copy this link: ${link}`;
+  }
+}

@@ -1,0 +1,164 @@
+/** Wiring: state, core, regions. Intentions come in at `dispatch`; what they mean is decided here and nowhere else. */
+import { createCore } from "./core-client.js";
+import { keepSheet, keepTheme, keptSheet, keptTheme } from "./keeping.js";
+import { codeIn, figureAsSent, handOn } from "./link.js";
+import { startOffline } from "./offline.js";
+import { button, part } from "./page.js";
+import { mountDoubts } from "./regions/doubts.js";
+import { mountFigure } from "./regions/figure.js";
+import { mountRuleBooks } from "./regions/rule-books.js";
+import { mountSide } from "./regions/side.js";
+import { mountStatus } from "./regions/status.js";
+import { mountSteps } from "./regions/steps.js";
+import { mountWorking } from "./regions/working.js";
+import { createState, emptySheet } from "./state.js";
+
+const TYPING_MS = 60;                  // a burst of keys is one question
+const $ = (id) => document.getElementById(id);
+
+const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer: null, busy: false, editing: null, catalogue: null, sent: null, before: null, notice: "",
+  core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
+const state = createState(first);
+const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
+let offline = null, typing = 0, ready = false;
+
+/** What was typed before this script ran counts; where nothing was, what was kept. */
+function typedAlready(kept) {
+  const typed = Object.fromEntries(["hold", "gas", "owe"].map((side) => [side, $(`${side}-text`).value]));
+  return Object.values(typed).some(Boolean) ? { ...kept, ...typed } : kept ?? {};
+}
+
+async function onReady() {
+  if (ready) return;
+  ready = true;
+  state.change({ catalogue: await core.ask({ task: "catalogue" }).catch(() => null) });
+  offline = startOffline({ onState: (now) => state.change({ offline: now }), beforeReload: () => keepSheet(state.get().sheet) });
+}
+
+function restate() {
+  state.change({ busy: true });
+  const { sheet } = state.get();
+  core.ask({ task: "restate", sheet: { schema: 1, ...sheet } }, { channel: "restate" }).then(
+    (answer) => state.change({ answer, busy: false, sent: agreeing(answer) }),
+    (error) => { if (error.problem?.kind !== "superseded") state.change({ busy: false, notice: `${error.message} ${error.problem?.hint ?? ""}` }); });
+}
+
+/** Whether this device arrives at the figure its sender saw. */
+function agreeing(answer) {
+  const { sent, sheet } = state.get();
+  if (!sent || sent.sheet !== sheet) return null;
+  return { ...sent, agrees: headline(answer) === sent.figure };
+}
+
+function headline(answer) {
+  if (answer.figure) return `${answer.figure.number_text} ${answer.figure.unit_text}`;
+  const spread = answer.spread;
+  return spread?.low ? `${spread.low.text} to ${spread.high.text} ${spread.unit_text}` : "";
+}
+
+function changeSheet(patch, wait = 0) {
+  const sheet = { ...state.get().sheet, ...patch };
+  state.change({ sheet });
+  keepSheet(sheet);
+  clearTimeout(typing);
+  if (wait) typing = setTimeout(restate, wait);
+  else restate();
+}
+
+async function edit({ side, field, to }) {
+  const { sheet, editing } = state.get();
+  try {
+    const { text } = await core.ask({ task: "edit", side, field, to, text: sheet[side] });
+    state.change({ editing: null });
+    changeSheet({ [side]: text });
+    document.querySelector(`#${side} [data-field="${CSS.escape(field)}"], #${side}-text`)?.focus();
+  } catch (error) {
+    state.change({ editing: { ...editing, problem: error.problem ?? { message: String(error), hint: "" } } });
+  }
+}
+
+function settle({ doubt, reading }) {
+  const settled = { ...state.get().sheet.settled };
+  if (reading === null) delete settled[doubt];
+  else settled[doubt] = reading;
+  state.change({ editing: null });
+  changeSheet({ settled });
+}
+
+function takeUsual() {
+  const open = state.get().answer.doubts.filter((doubt) => doubt.state === "open" && doubt.usual);
+  changeSheet({ settled: { ...state.get().sheet.settled, ...Object.fromEntries(open.map((doubt) => [doubt.id, doubt.usual])) } });
+}
+
+async function send() {
+  const { sheet, answer } = state.get();
+  try {
+    const { code } = await core.ask({ task: "link", sheet: { schema: 1, ...sheet }, figure: answer ? headline(answer) : "" });
+    state.change({ notice: await handOn(code) });
+  } catch (error) {
+    state.change({ notice: `${error.message} ${error.problem?.hint ?? ""}` });
+  }
+}
+
+/** A link replaces nothing in silence: what was on the page is offered back. */
+async function open(code) {
+  state.change({ sent: { figure: figureAsSent(code) } });
+  try {
+    const { sheet: opened, as_sent } = await core.ask({ task: "open", code });
+    const sheet = { ...emptySheet(), ...opened };
+    const here = state.get().sheet;
+    state.change({ sent: { figure: as_sent, sheet }, sheet, before: here.hold || here.owe ? here : null });
+    restate();
+  } catch (error) {
+    state.change({ sent: null, notice: `${error.message} ${error.problem?.hint ?? ""}` });
+    restate();
+  }
+  history.replaceState(null, "", location.pathname + location.search);
+}
+
+const INTENTIONS = {
+  text: ({ side, text }) => { state.change({ sent: null }); changeSheet({ [side]: text }, TYPING_MS); },
+  open: ({ side, field }) => {
+    const now = state.get().editing;
+    state.change({ editing: now?.side === side && now.field === field ? null : { side, field, problem: null } });
+  },
+  close: () => state.change({ editing: null }),
+  edit, settle, usual: takeUsual,
+  note: ({ doubt, text }) => changeSheet({ notes: { ...state.get().sheet.notes, [doubt]: text } }),
+  "rule-book": ({ book }) => changeSheet({ owe: book.owe, rule_book: book.id }),
+  notice: ({ text }) => state.change({ notice: text }),
+  restart: () => core.restart(),
+  update: () => offline?.takeUpdate(),
+  later: () => state.change({ offline: { ...state.get().offline, update: false } }),
+};
+const dispatch = (intention) => INTENTIONS[intention.type](intention);
+
+function mountTools() {
+  const more = $("more"), toggle = document.querySelector('[data-action="more"]');
+  toggle.addEventListener("click", () => { more.hidden = !more.hidden; toggle.setAttribute("aria-expanded", String(!more.hidden)); });
+  document.querySelector('[data-action="send"]').addEventListener("click", send);
+  document.querySelector('[data-action="clear"]').addEventListener("click", () => changeSheet(emptySheet()));
+  document.querySelector('[data-action="print"]').addEventListener("click", () => print());
+  const theme = part(more, "theme");
+  theme.value = keptTheme();
+  const show = () => { if (theme.value) document.documentElement.dataset.theme = theme.value; else delete document.documentElement.dataset.theme; };
+  theme.addEventListener("change", () => { keepTheme(theme.value); show(); });
+  show();
+  const back = button("Back to what was here before the link", () => { changeSheet(state.get().before); state.change({ before: null }); });
+  part(more, "demos").append(back);
+  state.subscribe(({ before }) => { back.hidden = !before; });
+  fetch(new URL("../demo/sheets.json", import.meta.url)).then((reply) => reply.json()).then((demos) => {
+    part(more, "demos").append(...demos.map((demo) => button(`Example: ${demo.title}`, () => { changeSheet({ ...emptySheet(), ...demo.sheet }); })));
+  }).catch(() => {});
+}
+
+const regions = [
+  ...["hold", "gas", "owe"].map((side) => mountSide($(side), side, dispatch)),
+  mountRuleBooks($("owe"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
+  mountSteps($("steps")), mountWorking($("working")), mountStatus($("status"), $("notice"), dispatch),
+];
+mountTools();
+state.subscribe((now) => { for (const region of regions) region(now); });
+const code = codeIn(location.href);
+if (code) open(code);
+else restate();

@@ -11,7 +11,7 @@ from gasbasis.facts.records import ABSTRACT, CONVENTION, EXACT, MEMORY, PRIMARY,
 TABLE = "table"                        # the key raw coefficient tables stand under
 FIELDS: Mapping[str, Mapping[str, Any]] = {   # collection -> field -> default; ... where the row must say it
     "source": {"id": ..., "title": ..., "edition": "", "read": ...},
-    "constant": {"id": ..., "text": ..., "unit": ..., "uncertainty": ..., "source": ..., "locator": ..., "read": ..., "note": ""},
+    "constant": {"id": ..., "text": ..., "unit": ..., "uncertainty": "", "source": ..., "locator": ..., "read": ..., "note": ""},
     "atomic_weight": {"id": ..., "text": ..., "unit": ..., "uncertainty": ..., "source": ..., "locator": ..., "read": ..., "note": ""},
     "ambient_oxygen": {"id": ..., "text": ..., "unit": ..., "uncertainty": "", "source": ..., "locator": ..., "read": ..., "note": ""},
     "species": {"id": ..., "name": ..., "formula": None, "cas": None, "names": ..., "family": ..., "needs_reported_as": False,
@@ -31,15 +31,12 @@ UNITS: Mapping[str, frozenset[str]] = {       # kind -> the units a number of th
     "molar_mass": frozenset({"g/mol", "kg/kmol", "kg/mol"}),
     "acceleration": frozenset({"m/s2"}),
     "temperature_gradient": frozenset({"K/m", "K/km"}),
-    "psychrometer": frozenset({"1/K"}),
-    "pure_number": frozenset({"1"}),
-    "mass_concentration_per_part": frozenset({"lb/scf per ppm", "mg/m3 per ppm", "lb m3/(ug ft3)"}),
+    "mass_concentration_per_part": frozenset({"lb/scf per ppm", "lb m3/(ug ft3)"}),
     "pitot": frozenset({"m/s (g/mol mmHg/(K mmH2O))^0.5", "ft/s (lb/lbmol inHg/(degR inH2O))^0.5"}),
     "water_vapour_volume": frozenset({"m3/mL", "m3/g", "ft3/mL", "ft3/g"}),
     "temperature_per_pressure": frozenset({"K/mmHg", "degR/inHg"}),
 }
-CONVENTIONS = {"molar_volume": "molar_volume", "factor": "mass_concentration_per_part", "temperature": "temperature",
-               "molar_mass": "molar_mass"}    # first word of a convention's name -> kind of its number
+CONVENTIONS = {"molar_volume": "molar_volume", "factor": "mass_concentration_per_part"}    # a convention's first word -> kind of its number
 WORDS = frozenset({"normal", "Nm3", "m3N", "standard", "Sm3", "scm", "scf", "dscm", "dscf", "sccm", "slm", "STP", "NTP", "ANR"})
 _TRUST = {PRIMARY: 3, SECONDARY: 2, ABSTRACT: 1, MEMORY: 0, CONVENTION: 3}
 _CAS = re.compile(r"([0-9]{2,7})-([0-9]{2})-([0-9])")
@@ -66,6 +63,7 @@ def check(collections: Mapping[str, list[dict[str, Any]]], tables: Mapping[str, 
     if orphans:
         raise FactsError(f"Nobody cites the source '{orphans[0]}'.", hint="Cite it or take it out.")
     _check_species_names(collections["species"], tables.get("cautious_names", {}).get("names", ()))
+    _check_usual(collections["rule_book"], {row["id"] for row in collections["reference_conditions"]})
     _check_reported_as(collections["species"], {row["id"] for row in collections["atomic_weight"]})
 
 
@@ -119,9 +117,11 @@ def _read_tag(name: str, read: str) -> None:
 
 def _number(name: str, text: str) -> None:
     try:
-        Decimal(text)
-    except (InvalidOperation, TypeError):
-        raise FactsError(f"{name}: '{text}' is not a number as text.") from None
+        as_printed = isinstance(text, str) and Decimal(text).is_finite()
+    except InvalidOperation:
+        as_printed = False
+    if not as_printed:
+        raise FactsError(f"{name}: '{text}' is not a number as text.", hint="A float has lost its printed digits.")
 
 
 def _unit(name: str, kind: str, unit: str) -> None:
@@ -205,6 +205,16 @@ def _check_species_names(rows: list[dict[str, Any]], cautious: Iterable[str]) ->
             key = name if name in cautious else name.casefold()
             if owner.setdefault(key, row["id"]) != row["id"]:
                 raise FactsError(f"The name '{name}' belongs to two species: {owner[key]} and {row['id']}.")
+
+
+def _check_usual(rows: list[dict[str, Any]], conditions: set[str]) -> None:
+    """The readings a rule-book suggests are the rule-book's own."""
+    for row in rows:
+        usual = row["usual"]
+        if usual.get("conditions") not in (None, *conditions):
+            raise FactsError(f"rule_book {row['id']}: there are no reference conditions '{usual['conditions']}'.")
+        if usual.get("ambient_oxygen") != (row["ambient_oxygen"] or [None])[0]:
+            raise FactsError(f"rule_book {row['id']}: its usual ambient oxygen is not its own ambient oxygen.")
 
 
 def _check_reported_as(rows: list[dict[str, Any]], elements: set[str]) -> None:

@@ -306,13 +306,39 @@ RESTS_ON_MEMORY = {
     "rule_book": {"eu_incineration", "eu_incineration_waste_oil", "us_hazardous_waste_7", "us_boiler_3", "us_turbine_15",
                   "us_mercury_utility", "china_thermal_power", "china_incineration", "japan_coal", "japan_gas", "japan_waste",
                   "india_incinerator", "eu_ambient_air", "uk_workplace_air", "gas_iso_mercury", "gas_normal", "gas_us_14696"},
+    "table": {"student_t", "f_factor_coefficients", "mercury_vapour dumarey", "f_factors municipal_waste"},
 }
+COEFFICIENT_TABLES = ("aga8_detail", "cautious_names", "confidence_intervals", "f_factor_coefficients", "f_factors", "iso6976_2016",
+                      "mercury_vapour", "student_t", "water_saturation")
+
+
+@dataclasses.dataclass(frozen=True)
+class Part:
+    """A coefficient table, or a row of it that says for itself how it was read."""
+
+    id: str
+    read: str
+
+
+def parts() -> list[Part]:
+    found = []
+    for name in COEFFICIENT_TABLES:
+        content = facts.table(name)
+        found += [Part(name, content["read"])] if "read" in content else []
+        found += [Part(f"{name} {row['id']}", row["read"]) for row in (*content.get("equations", ()), *content.get("fuels", ())) if "read" in row]
+    return found
+
+
+@pytest.mark.native
+def test_every_coefficient_table_is_looked_at():
+    from making.compile_facts import read_tables
+    assert sorted(read_tables(TABLES)[1]) == sorted(COEFFICIENT_TABLES)
 
 
 def test_rows_that_rest_on_memory_are_known():
     """The list may shrink when a row is read in a document; a row is added to it knowingly or not at all."""
     rows = {"constant": facts.constants().values(), "atomic_weight": facts.atomic_weights().values(), "ambient_oxygen": facts.ambient_oxygens(),
-            "species": facts.species(), "reference_conditions": facts.reference_conditions(), "rule_book": facts.rule_books()}
+            "species": facts.species(), "reference_conditions": facts.reference_conditions(), "rule_book": facts.rule_books(), "table": parts()}
     found = {name: {row.id for row in of_kind if row.read == "memory"} for name, of_kind in rows.items()}
     for name, ids in found.items():
         print(f"{name}: {len(ids)} of {len(rows[name])} rows rest on memory: {', '.join(sorted(ids)) or 'none'}")

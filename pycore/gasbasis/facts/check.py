@@ -73,7 +73,7 @@ def complete(collection: str, row: Mapping[str, Any], common: Mapping[str, Any])
     name = f"{collection} {row.get('id', '(no id)')}"
     given = {**{key: value for key, value in common.items() if key in fields}, **row}
     for key in given:
-        if key not in fields and key != "kind":
+        if key not in fields and (collection, key) != ("constant", "kind"):
             raise FactsError(f"{name}: the field '{key}' is not known.", hint=f"Known: {', '.join(fields)}.")
     for key, default in fields.items():
         if default is ... and given.get(key, "") in ("", None):

@@ -32,6 +32,8 @@ def number_led(reader) -> bool:
     for follow in (_share, _concentration, _molar_mass, _pressure, _temperature):
         if follow(reader, number, start, after):
             return True
+    if "value" not in reader.fields and "unit" in reader.fields:
+        return _take(reader, "value", Quantity(number, reader.fields["unit"]), start, after)   # "NOx (ppm): 142"
     if "value" not in reader.fields and "pending" not in reader.fields:
         reader.fields["pending"] = (number, start, after)      # "Hg: 8.3 (ug/m3)": the unit may follow
         reader.place = after

@@ -34,7 +34,7 @@ TEMPERATURE_UNIT = re.compile(r"(?:° ?[CFR]|deg\.? ?[CFR]|degrees? [CFR]|celsiu
 PARTS_BY = (
     ("volume", re.compile(r"\(?\s?(?:v/v|by\s?vol(?:ume)?|vol/vol|v/vol|volumetric|mol/mol|by\s?mole|molar|mol(?:e)?(?=\s|\)|,|;|$)|\(vol\.?\)|\(v\)|\(mol\))\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
     ("mass_by_volume", re.compile(r"\(?\s?(?:m/v|w/v|wt/vol|mass in volume|mass by volume|mass per volume)\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
-    ("mass", re.compile(r"\(?\s?(?:m/m|w/w|wt/wt|by\s?(?:mass|weight|wt\.?)|\(wt\.?\)|\(w\)|\(m\)|\(mass\))\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
+    ("mass", re.compile(r"\(?\s?(?:m/m|w/w|wt/wt|by\s?(?:mass|weight|wt\.?)|\(wt\.?\)|\(w\)|\(m\)|\(mass\)|wt\.?(?=\s|\)|,|;|$))\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
 )
 WATER = (
     ("dry", re.compile(r"(?:on\s)?(?:a\s)?(?:dry(?:\s(?:basis|gas|volume|flue gas))?|d\.b\.|db|tr\.|trocken)(?![A-Za-z0-9])", re.IGNORECASE)),
@@ -47,7 +47,7 @@ CONDITIONS_WORD = (
     ("standard", re.compile(r"(?:at |under )?(?:standard(?:\s(?:conditions|temperature and pressure|state))?|std\.? conditions)(?![A-Za-z0-9])", re.IGNORECASE)),
 )
 ACTUAL = re.compile(r"(?:at |under )?(?:actual|line|flue|duct|stack|operating)(?:\s(?:conditions|volume))(?![A-Za-z0-9])|\bactual\b", re.IGNORECASE)
-REPORTED_AS = re.compile(r"\(?\s?(?:(?:expressed|reported|measured|calculated|calc\.|given|counted)\s)?as:?\s+(?P<name>[A-Za-z0-9()\-]+(?:\s(?:equivalent|carbon))?)", re.IGNORECASE)
+REPORTED_AS = re.compile(r"\(?\s?(?:(?:expressed|reported|measured|calculated|calc\.|given|counted)\s)?(?:as|als):?\s+(?P<name>[A-Za-z0-9()\-]+(?:\s(?:equivalent|carbon))?)", re.IGNORECASE)
 OXYGEN_NAME = r"(?:O2|oxygen|oxygen content)(?![A-Za-z0-9])"
 WATER_NAME = r"(?:H2O|water(?: vapou?r)?|moisture|humidity)(?![A-Za-z0-9])"
 CARBON_DIOXIDE_NAME = r"(?:CO2|carbon dioxide)(?![A-Za-z0-9])"

@@ -90,8 +90,13 @@ class Watch:
 
     def over(self, page) -> None:
         page.on("pageerror", lambda error: self.problems.append(f"page error: {error}"))
-        page.on("console", lambda message: message.type == "error" and self.problems.append(f"console: {message.text}"))
+        page.on("console", self._look_at_message)
         page.on("request", self._look_at_host)
+
+    def _look_at_message(self, message) -> None:
+        asked_for_icon = message.location["url"].endswith("/favicon.ico")     # only documents without a head ask for it
+        if message.type == "error" and not asked_for_icon:
+            self.problems.append(f"console: {message.text}")
 
     def _look_at_host(self, request) -> None:
         address = urllib.parse.urlsplit(request.url)

@@ -15,7 +15,7 @@ from making.steps import say
 from making.toolchain import install_locked, node
 
 IN_PYODIDE = ("tests/core", "tests/published", "tests/contract")
-RUNNER = ("pytest", "_pytest", "pluggy", "iniconfig", "packaging", "pygments")
+RUNNER = ("pytest", "_pytest", "py.py", "pluggy", "iniconfig", "packaging", "pygments")
 
 
 def run_tests(runtime: Runtime, places: Places, chosen: list[str]) -> int:
@@ -54,6 +54,9 @@ def _gather_runner(folder: Path) -> None:
     shutil.rmtree(folder, ignore_errors=True)
     folder.mkdir(parents=True)
     for name in RUNNER:
-        shutil.copytree(library / name, folder / name, ignore=shutil.ignore_patterns("__pycache__"))
+        if name.endswith(".py"):
+            shutil.copyfile(library / name, folder / name)
+        else:
+            shutil.copytree(library / name, folder / name, ignore=shutil.ignore_patterns("__pycache__"))
     for about in library.glob("pytest-*.dist-info"):
         shutil.copytree(about, folder / about.name)

@@ -11,14 +11,17 @@ import json
 import os
 import pkgutil
 import sys
+import zipfile
+
+TRIMMED = "/lib/python314.zip"
 
 
 def run_tests(argument: str) -> str:
     """Import everything of the core on the trimmed library alone, then run pytest. Returns its status."""
     job = json.loads(argument)
     _import_all(job["package"])
-    sys.path += [job["runner"], job["rest"]]
-    importlib.invalidate_caches()
+    _append_rest(job["rest"])
+    sys.path.append(job["runner"])
     _guard(job["package"], job["rest"])
     os.chdir("/repository")
     import pytest
@@ -30,6 +33,16 @@ def _import_all(package: str) -> None:
     for module in pkgutil.walk_packages(importlib.import_module(package).__path__, package + "."):
         if not module.name.endswith(".__main__"):
             importlib.import_module(module.name)
+
+
+def _append_rest(rest: str) -> None:
+    """Put the whole library behind the trimmed one, also inside the packages of which the trimmed one has a part."""
+    with zipfile.ZipFile(TRIMMED) as archive:
+        packages = [name.removesuffix("/__init__.pyc").replace("/", ".") for name in archive.namelist() if name.endswith("/__init__.pyc")]
+    for name in packages:
+        importlib.import_module(name).__path__.append(f"{rest}/{name.replace('.', '/')}")
+    sys.path.append(rest)
+    importlib.invalidate_caches()
 
 
 def _guard(package: str, rest: str) -> None:

@@ -175,13 +175,9 @@ def _reported_as(case: Case) -> list[Doubt]:
     return doubts if not (hold is None and len(doubts) == 2) else doubts[:1]
 
 
-_AS = {"NOx": ("NO2", "NO"), "total sulphur": ("S", "H2S", "SO2")}
-_AS_ORGANIC = ("C", "propane", "methane")
-
-
 def _as_doubt(side: str, species) -> Doubt:
     readings = []
-    for name in _AS.get(species.id, _AS_ORGANIC):
+    for name in species.reported_as:
         usual = f"{species.name} is usually reported as {name}" if name == species.usual_reported_as else ""
         readings.append(Reading(name, f"as {name}", (("reported_as", find(name)),), COMMON, usual))
     return Doubt(f"{side}.reported_as", "reported as", f"As what is the {species.name} in {SIDE_TITLES[side]} reported?",

@@ -74,6 +74,7 @@ class Species:
     atoms: tuple[tuple[str, int], ...] | None
     cas: str | None = None
     needs_reported_as: bool = False    # NOx, TOC, total sulphur: mass has no meaning without "as"
+    reported_as: tuple[str, ...] = ()  # what it may be reported as, the usual first where there is one
     usual_reported_as: str | None = None
 
 

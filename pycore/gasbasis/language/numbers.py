@@ -13,8 +13,8 @@ from gasbasis.language.basis import Number, Uncertainty
 from gasbasis.language.normalise import normalise
 
 _DIGITS = r"(?:\d{1,3}(?:[ '][0-9]{3})+(?:[.,]\d+)?|\d{1,3}(?:[.,]\d{3}){2,}(?:[.,]\d+)?|\d{1,3}(?:,\d{3})+\.\d+|\d{1,3}(?:\.\d{3})+,\d+|\d+(?:[.,]\d+)?|[.,]\d+)"
-_POWER = r"(?:[eE][+-]?\d+(?![\dA-Za-z])|\s?[x·*]\s?10\s?\^?\s?\(?[+-]?\d+\)?)"
-PLAIN = rf"[+-]?(?:10\^[+-]?\d+|{_DIGITS}{_POWER}?)(?![\d])"
+_POWER = r"(?:[eE][+-]?\d+(?![\dA-Za-z])|\s?[x·*]\s?10\s?\^?\s?\(?[+⁺⁻-]?\d+\)?)"
+PLAIN = rf"[+-]?(?:10(?:\^[+-]?|⁻)\d+|{_DIGITS}{_POWER}?)(?![\d])"
 _BELOW = r"(?:<=?|≤|less than\s)"
 NUMBER = re.compile(rf"(?P<below>{_BELOW}\s*)?(?P<plain>{PLAIN})", re.IGNORECASE)
 PLUS_MINUS = re.compile(rf"(?:±|\+\s?/\s?-|\+-)\s*(?P<amount>{PLAIN})(?P<percent>\s*%)?")
@@ -69,6 +69,7 @@ def _decimal(plain: str) -> tuple[Decimal, Decimal | None]:
 
 
 def _split_power(plain: str) -> tuple[str, int]:
+    plain = plain.replace("⁻", "-" if re.search(r"[x·*]", plain) else "^-").replace("⁺", "")
     found = re.search(r"(?:[eE]|\s?[x·*]\s?10\s?\^?\s?\(?)([+-]?\d+)\)?$", plain)
     if re.fullmatch(r"[+-]?10\^[+-]?\d+", plain):
         sign = "-" if plain.startswith("-") else ""

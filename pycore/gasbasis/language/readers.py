@@ -205,7 +205,7 @@ def _plausible(number: Number, factor: float, low: float, high: float, offset: f
 
 def concentration_unit(reader, place: int):
     """A unit of concentration at a place, taking what is glued to it as pieces. Returns (unit, end) or None."""
-    for read in (_mass_per_volume, _amount_per_volume, _plain_ratio, _parts):
+    for read in (_power_notation, _mass_per_volume, _amount_per_volume, _plain_ratio, _parts):
         found = read(reader, place)
         if found is not None:
             return found
@@ -266,6 +266,13 @@ def _amount_per_volume(reader, place: int):
     return unit(f"{found['amount']}/{_volume(found['volume'])}"), found.end()
 
 
+def _power_notation(reader, place: int):
+    found = tokens.POWER_NOTATION.match(reader.text, place)
+    if found is None or (found["power"] == "3") != (found["bottom"] in ("m", "dm", "cm")):
+        return None
+    return unit(f"{found['top']}/{found['bottom']}{'3' if found['power'] == '3' else ''}"), found.end()
+
+
 def _plain_ratio(reader, place: int):
     for pattern in (tokens.MASS_PER_MASS, tokens.AMOUNT_PER_AMOUNT, tokens.VOLUME_PER_VOLUME):
         found = pattern.match(reader.text, place)
@@ -282,21 +289,19 @@ def _parts(reader, place: int):
     if found is None:
         return None
     measured = unit(re.sub("per ?cent", "percent", found["parts"].lower()))
-    glued = (found["glued"] or "").lower()
-    letters = glued.rstrip("d") if glued not in ("wd",) else "w"
-    by = _BEFORE.get((found["before"] or "").lower())
+    by, glued = _BEFORE.get((found["before"] or "").lower()), found["glued"] or ""
+    by_span = found.span("before")
     if glued:
-        by = "mass" if letters in ("w", "m") and not glued.startswith("v") else "volume"
-        if glued in ("vd", "dv"):
-            reader.take("water", DRY, *found.span("glued"))
-        if glued in ("vw", "wv"):
-            reader.take("water", WET, *found.span("glued"))
-    if found["glued_water"]:
-        reader.take("water", DRY if found["glued_water"].lower() == "d" else WET, *found.span("glued_water"))
+        letters, start = glued.lower(), found.start("glued")
+        water_at = next((index for index in (letters.find("d"), letters.rfind("w")) if index >= 0 and (letters[index] == "d" or "v" in letters)), None)
+        if water_at is not None:           # vd, dv, vw, wv, md: one letter is water, the rest what the parts count
+            reader.take("water", DRY if letters[water_at] == "d" else WET, start + water_at, start + water_at + 1)
+        by_span = (start + (1 if water_at == 0 else 0), found.end("glued") - (1 if water_at else 0))
+        by = "volume" if letters.strip("dw")[:1] == "v" or "vol" in letters or "mol" in letters else "mass"
     if found["ending_dry"]:
         reader.take("water", DRY, *found.span("ending_dry"))
     if by:
-        reader.take("parts_by", by, *(found.span("glued") if glued else found.span("before")))
+        reader.take("parts_by", by, *by_span)
     return measured, found.end()
 
 

@@ -8,9 +8,10 @@ from typing import Mapping
 
 from gasbasis import facts
 from gasbasis.errors import NotUnderstood
+from gasbasis.language import formula as formulas
 from gasbasis.language.basis import Species
 from gasbasis.language.normalise import normalise
-from gasbasis.physics import molar_mass as formulas
+from gasbasis.physics.molar_mass import molar_mass as summed
 
 _GRAM = 1e-3
 _ALIKE = 0.72
@@ -23,14 +24,20 @@ def _rows() -> Mapping[str, object]:
 
 @lru_cache(maxsize=1)
 def _exact_names() -> Mapping[str, str]:
-    """Spellings that count only in their exact case: formulas and short names such as NO, CO, As."""
-    return {name: row.id for row in facts.species() for name in (row.id, row.formula, *row.names) if name}
+    """Spellings in their exact case: ids and short names such as NO, CO, As. A formula several share is nobody's name."""
+    return {name: row.id for row in facts.species() for name in (row.id, *row.names)}
 
 
 @lru_cache(maxsize=1)
 def _loose_names() -> Mapping[str, str]:
-    """Spellings that count in any case: words of four letters and more, unless a formula reads the same."""
-    return {name.lower(): row.id for row in facts.species() for name in (row.name, *row.names) if len(name) > 3}
+    """Spellings that count in any case: all but the cautious ones, which are ordinary words when written otherwise."""
+    names = ((name, row.id) for row in facts.species() for name in (row.id, row.name, *row.names))
+    return {name.lower(): identity for name, identity in names if name.lower() not in _cautious()}
+
+
+@lru_cache(maxsize=1)
+def _cautious() -> frozenset[str]:
+    return frozenset(name.lower() for name in facts.cautious_names())
 
 
 def known(text: str) -> Species | None:
@@ -61,7 +68,7 @@ def find(text: str) -> Species:
 def _species(identity: str) -> Species:
     row = _rows()[identity]
     atoms = tuple(formulas.atoms(row.formula).items()) if row.formula else None
-    return Species(row.id, row.name, row.formula, atoms, row.cas, row.needs_reported_as, row.usual_reported_as)
+    return Species(row.id, row.name, row.formula, atoms, row.cas, row.needs_reported_as, tuple(row.reported_as), row.usual_reported_as)
 
 
 def _unknown(text: str, why: str) -> NotUnderstood:
@@ -74,34 +81,39 @@ def _unknown(text: str, why: str) -> NotUnderstood:
 def molar_mass(species: Species) -> tuple[float, str]:
     """The molar mass [kg/mol] and how it adds up, e.g. "32.06 + 2 × 15.999"."""
     weights = {element: facts.atomic_weight(element) for element, _ in species.atoms}
-    total = formulas.molar_mass(dict(species.atoms), {element: float(datum.number) for element, datum in weights.items()})
+    total = summed(dict(species.atoms), {element: float(datum.number) for element, datum in weights.items()})
     sums = [weights[element].text if number == 1 else f"{number} × {weights[element].text}" for element, number in species.atoms]
     return total * _GRAM, " + ".join(sums)
 
 
-def search(text: str) -> list[dict]:
+@lru_cache(maxsize=1)
+def _searched() -> tuple[tuple[tuple[str, ...], dict], ...]:
+    """Every species with the lower-case names it is found by."""
+    return tuple((tuple({name.lower() for name in (row.id, row.name, row.formula, row.cas, *row.names) if name}),
+                  {"id": row.id, "name": row.name, "formula": row.formula, "cas": row.cas}) for row in facts.species())
+
+
+@lru_cache(maxsize=256)
+def search(text: str) -> tuple[dict, ...]:
     """Species that a text may mean, best first: beginnings, then contained, then alike in spelling."""
     wanted = normalise(text).strip().lower()
     if not wanted:
-        return []
-    scored = []
-    for row in facts.species():
-        score = max(_score(wanted, name.lower()) for name in (row.id, row.name, row.formula or "", row.cas or "", *row.names) if name)
-        if score >= _ALIKE:
-            scored.append((-score, row.name, {"id": row.id, "name": row.name, "formula": row.formula, "cas": row.cas}))
-    return [entry for _, _, entry in sorted(scored, key=lambda item: item[:2])]
+        return ()
+    matcher = SequenceMatcher(None, "", wanted)
+    scored = [(-max(_score(wanted, name, matcher) for name in names), entry["name"], entry) for names, entry in _searched()]
+    return tuple(entry for score, _, entry in sorted(scored, key=lambda item: item[:2]) if -score >= _ALIKE)
 
 
-def _score(wanted: str, name: str) -> float:
+def _score(wanted: str, name: str, matcher: SequenceMatcher) -> float:
     if wanted == name:
         return 3.0
     if name.startswith(wanted):
         return 2.0 + len(wanted) / len(name)
     if len(wanted) > 2 and wanted in name:
         return 1.0 + len(wanted) / len(name)
-    if abs(len(wanted) - len(name)) > 3 or len(wanted) < 4:
+    if len(wanted) < 4 or abs(len(wanted) - len(name)) > 3 or len(set(wanted) & set(name)) < len(set(wanted)) - 2:
         return 0.0
-    matcher = SequenceMatcher(None, wanted, name)
+    matcher.set_seq1(name)
     return matcher.ratio() if matcher.quick_ratio() >= _ALIKE else 0.0
 
 

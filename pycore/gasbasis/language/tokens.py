@@ -16,6 +16,8 @@ MASS_PER_VOLUME = re.compile(
     rf"(?P<mass>{_MASS})(?:\s?(?P<entity>[A-Z][A-Za-z0-9]*))?\s?(?:/|\bper\b)\s?(?P<count>{_COUNT})?\s?(?P<called>{_CALLED})?[ .]?"
     rf"(?P<volume>{_CUBIC})(?P<behind>[ ]?\(?(?:N|n|stp|STP|S)\b\)?)?(?![A-Za-z0-9])")
 AMOUNT_PER_VOLUME = re.compile(rf"(?P<amount>{_AMOUNT})\s?(?:/|\bper\b)\s?(?P<called>N|S|n|s)?(?P<volume>{_CUBIC})(?![A-Za-z0-9])")
+# "mg m-3", "µg·m⁻³", "nmol mol⁻¹"
+POWER_NOTATION = re.compile(rf"(?P<top>{_MASS}|{_AMOUNT})[ ·.*]{{0,2}}(?P<bottom>m|L|l|mol|kg|dm|cm)(?:\^?-|⁻)(?P<power>[13])(?![A-Za-z0-9])")
 MASS_PER_MASS = re.compile(rf"(?P<top>{_MASS})\s?/\s?(?P<bottom>kg|mg|ug|g)(?![A-Za-z0-9])")
 AMOUNT_PER_AMOUNT = re.compile(rf"(?P<top>{_AMOUNT})\s?/\s?(?P<bottom>mmol|umol|kmol|mol)(?![A-Za-z0-9])")
 VOLUME_PER_VOLUME = re.compile(rf"(?P<top>{_SMALL_VOLUME})\s?/\s?(?P<bottom>m3|m\^3|L|l|mL|ml|dm3|cm3)(?![A-Za-z0-9])")
@@ -24,7 +26,7 @@ MOLAR_MASS = re.compile(r"(?:kg/kmol|g/mol|kg/mol)(?![A-Za-z0-9])")
 # ppm with what may be glued to it: v, w, m, d, in any usual order, or a bracket.
 PARTS = re.compile(
     r"(?P<before>vol|v|mol|mole|wt|w|mass|m)?[ .-]{0,2}(?P<parts>ppm|ppb|ppt|ppq|pphm|percent|per ?cent|%|‰|permil)"
-    r"(?P<glued>(?:vd|vw|dv|wv|vol|mol|wt|by ?vol|v|w|m)(?P<glued_water>d|w)?)?(?P<ending_dry>d(?=\b))?(?![A-Za-z0-9])", re.IGNORECASE)
+    r"(?P<glued>vd|vw|dv|wv|md|wd|vol|mol|wt|by ?vol|v|w|m)?(?P<ending_dry>d(?=\b))?(?![A-Za-z0-9])", re.IGNORECASE)
 
 PRESSURE_UNIT = re.compile(
     r"(?:mm ?Hg|in\.? ?Hg|inches (?:of )?(?:Hg|mercury)|mm ?H2O|mm ?WC|mm ?WS|in\.? ?H2O|in\.? ?w\.?c\.?|inWC|inWG|\"Hg|\"H2O|"

@@ -41,7 +41,7 @@ def _rule_book(book) -> dict:
 def search(what: str, text: str) -> list[dict]:
     """Entries of one list that a text may mean. Raises NotUnderstood for a list that is not searched."""
     if what == "species":
-        return species.search(text)[:12]
+        return list(species.search(text)[:12])
     if what == "rule_book":
         words = text.lower().split()
         return [_rule_book(book) for book in facts.rule_books()

@@ -1,0 +1,177 @@
+"""Doubts, carried silence, missing inputs and errors of the whole restatement, through the one door."""
+from __future__ import annotations
+
+import json
+
+import pytest
+
+from gasbasis.answer import answer
+
+
+def restate(hold: str, owe: str, gas: str = "", usual: bool = False, **settled: str) -> dict:
+    choices = {name.replace("__", "."): reading for name, reading in settled.items()}
+    request = {"task": "restate", "usual": usual, "sheet": {"hold": hold, "owe": owe, "gas": gas, "settled": choices}}
+    reply = json.loads(answer(json.dumps(request)))
+    assert reply["ok"], reply
+    return reply["answer"]
+
+
+def open_doubts(result: dict) -> list[str]:
+    return [doubt["id"] for doubt in result["doubts"] if doubt["state"] == "open"]
+
+
+# --- each doubt: raised, and not raised ---
+
+RAISED = [
+    ("hold.parts_by", dict(hold="SO2 1 ppm", owe="mg/m3 at 20 °C, 1 atm"), dict(hold="SO2 1 ppmv", owe="mg/m3 at 20 °C, 1 atm")),
+    ("owe.parts_by", dict(hold="SO2 1 umol/mol", owe="ppb"), dict(hold="SO2 1 umol/mol", owe="ppb by volume")),
+    ("hold.conditions", dict(hold="SO2 35 mg/m3", owe="ppm by volume"), dict(hold="SO2 35 mg/m3 at 20 °C, 1 atm", owe="ppm by volume")),
+    ("hold.conditions", dict(hold="SO2 35 mg/Nm3", owe="ppm by volume"), dict(hold="SO2 35 mg/Nm3", owe="ug/Nm3")),
+    ("owe.conditions", dict(hold="SO2 1 ppmv", owe="mg/m3"), dict(hold="SO2 1 ppmv", owe="ppb by volume")),
+    ("hold.pressure", dict(hold="SO2 35 mg/m3 at 20 °C", owe="mg/m3 at 0 °C, 101.3 kPa"), dict(hold="SO2 35 mg/m3 at 20 °C, 1 atm", owe="mg/m3 at 0 °C, 101.3 kPa")),
+    ("hold.temperature", dict(hold="SO2 35 mg/m3 at 1 atm", owe="ppm by volume"), dict(hold="SO2 35 mg/m3 at 1 atm, 20 °C", owe="ppm by volume")),
+    ("hold.water", dict(hold="CO 12 ppm", owe="ppm dry", gas="10 % H2O"), dict(hold="CO 12 ppm", owe="ppm")),
+    ("owe.water", dict(hold="CO 12 ppm dry", owe="ppm", gas="10 % H2O"), dict(hold="CO 12 ppm dry", owe="ppm dry")),
+    ("owe.reported_as", dict(hold="NOx 100 ppmv", owe="mg/m3 at 0 °C, 1 atm"), dict(hold="NOx 100 ppmv", owe="mg/m3 as NO2 at 0 °C, 1 atm")),
+    ("hold.reported_as", dict(hold="NOx 100 mg/m3 at 0 °C, 1 atm", owe="ppm by volume"), dict(hold="NOx 100 ppmv", owe="ppb by volume")),
+    ("gas.matrix_gas", dict(hold="Hg 1 ppbw", owe="ug/m3 at 20 °C, 1 atm"), dict(hold="Hg 1 ppbw in nitrogen", owe="ug/m3 at 20 °C, 1 atm")),
+    ("gas.ambient_oxygen", dict(hold="CO 50 mg/m3 dry, measured at 9 % O2", owe="mg/m3 dry, 11 % O2"),
+     dict(hold="CO 50 mg/m3 dry, measured at 9 % O2", owe="mg/m3 dry, 11 % O2", gas="ambient O2 21 %")),
+    ("hold.oxygen_meaning", dict(hold="CO 50 mg/m3 dry at 9 % O2", owe="mg/m3 dry, 11 % O2", gas="ambient O2 21 %, 10 % O2 dry"),
+     dict(hold="CO 50 mg/m3 dry corrected to 9 % O2", owe="mg/m3 dry, 11 % O2", gas="ambient O2 21 %")),
+    ("owe.oxygen", dict(hold="CO 50 mg/m3 dry corrected to 3 % O2", owe="mg/m3 dry", gas="9 % O2 dry, ambient O2 21 %"),
+     dict(hold="CO 50 mg/m3 dry corrected to 3 % O2", owe="mg/m3 dry, 3 % O2")),
+    ("gas.oxygen_water", dict(hold="CO 50 mg/m3 dry", owe="mg/m3 dry, 11 % O2", gas="9 % O2, 10 % H2O, ambient O2 21 %"),
+     dict(hold="CO 50 mg/m3 dry", owe="mg/m3 dry, 11 % O2", gas="9 % O2 dry, ambient O2 21 %")),
+    ("hold.number", dict(hold="Hg 1,234 ng/m3", owe="pg/L"), dict(hold="Hg 1,23 ng/m3", owe="pg/L")),
+]
+
+
+@pytest.mark.parametrize(("doubt", "case", "without"), RAISED, ids=[f"{row[0]}: {row[1]['hold']}" for row in RAISED])
+def test_a_doubt_is_raised(doubt: str, case: dict, without: dict) -> None:
+    result = restate(**case)
+    record = next(record for record in result["doubts"] if record["id"] == doubt)
+    assert record["state"] == "open" and len(record["readings"]) >= 2
+    assert all(reading["source"] for reading in record["readings"])
+    assert result["figure"] is None
+
+
+@pytest.mark.parametrize(("doubt", "case", "without"), RAISED, ids=[f"{row[0]}: {row[2]['hold']}" for row in RAISED])
+def test_a_doubt_is_not_raised(doubt: str, case: dict, without: dict) -> None:
+    assert doubt not in [record["id"] for record in restate(**without)["doubts"]]
+
+
+@pytest.mark.parametrize("text", ["O2 9 %", "CO2 12 %", "H2O 14 %"])
+def test_oxygen_carbon_dioxide_and_water_in_percent_are_never_asked(text: str) -> None:
+    assert restate(text, "mol/mol")["figure"]
+
+
+def test_spread_settle_and_take_the_usual() -> None:
+    case = dict(hold="NOx 142 ppm as NO2, dry", gas="9,2 % O2 dry, ambient O2 21 %", owe="mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2")
+    result = restate(**case)
+    assert result["sentence"] == "depends on: parts by" and result["spread"]["complete"]
+    by_volume = 142e-6 * 101300 * 46.005 / (8.314462618 * 273.15) * 1e3 * (21 - 3) / (21 - 9.2)     # by hand
+    doubt = next(doubt for doubt in result["doubts"] if doubt["id"] == "hold.parts_by")
+    assert next(reading for reading in doubt["readings"] if reading["id"] == "volume")["figure"]["low"] == pytest.approx(by_volume, rel=1e-6)
+    assert result["spread"]["low"]["value"] <= by_volume <= result["spread"]["high"]["value"]
+    settled = restate(**case, hold__parts_by="volume")
+    usual = restate(**case, usual=True)
+    assert settled["figure"]["value"] == usual["figure"]["value"] == pytest.approx(by_volume, rel=1e-6)
+    assert [doubt["state"] for doubt in usual["doubts"]] == ["settled"]
+
+
+def test_mercury_has_no_usual_parts() -> None:
+    result = restate("Hg 1 ppb", "ug/m3 at 20 °C, 1 atm", usual=True)
+    assert result["figure"] is None and "hold.parts_by" in open_doubts(result)
+
+
+def test_the_most_telling_doubt_comes_first() -> None:
+    result = restate("CO 50 ppm", "mg/m3 at 0 °C, 101.3 kPa, dry", gas="10 % H2O")
+    assert open_doubts(result) == ["hold.parts_by", "hold.water"]
+
+
+def test_a_doubt_without_visible_effect_is_listed_quietly() -> None:
+    # read as measured or as corrected, a dry value at 9 % goes to 11 % by the same factor
+    result = restate("CO 50 mg/m3 dry at 9 % O2", "mg/m3 dry, 11 % O2", gas="ambient O2 21 %")
+    assert [(doubt["id"], doubt["state"]) for doubt in result["doubts"]] == [("hold.oxygen_meaning", "calm")]
+    assert result["figure"]["value"] == pytest.approx(50 * 10 / 12)
+
+
+# --- silence is carried over, nothing unused is asked for ---
+
+def test_silence_on_both_sides_is_carried_and_printed() -> None:
+    figure = restate("Hg 1 ppb v/v", "ug/m3 at 20 °C, 1 atm")["figure"]
+    assert "water: not stated, as held" in figure["basis"] and "ideal gas" in figure["basis"]
+    assert "293.15 K, 1 atm" in figure["basis"]
+
+
+@pytest.mark.parametrize(("hold", "owe", "gas"), [
+    ("1 ng/m3", "pg/L", ""), ("dust 4.2 mg/m3 at 20 °C, 1 atm", "mg/m3 at 0 °C, 101.3 kPa", ""), ("1 ppm", "ppb", ""),
+    ("CO 50 mg/m3 dry", "mg/m3 dry", ""), ("CO 50 mg/m3 dry corrected to 3 % O2", "mg/m3 dry, 11 % O2", "ambient O2 21 %")])
+def test_nothing_is_asked_for_that_is_not_used(hold: str, owe: str, gas: str) -> None:
+    result = restate(hold, owe, gas)
+    assert result["figure"] and not result["doubts"]
+
+
+def test_never_a_bare_normal_or_standard_in_our_output() -> None:
+    result = restate("SO2 35 mg/Nm3", "mg/m3 at 20 °C, 1 atm", usual=True, hold__conditions="eu_stack")
+    assert result["figure"] and "N" not in result["figure"]["unit_text"] and "293.15 K" in result["figure"]["text"]
+
+
+# --- what is missing or impossible: the field, the need, the cure ---
+
+@pytest.mark.parametrize(("case", "field", "message"), [
+    (dict(hold="", owe="mg/m3"), "hold", "needed"),
+    (dict(hold="1 ppm", owe=""), "owe", "needed"),
+    (dict(hold="CO", owe="ppm"), "hold.value", "value with its unit"),
+    (dict(hold="1 ppm", owe="dry"), "owe.unit", "unit is needed"),
+    (dict(hold="1 ppmv", owe="mg/m3 at 20 °C, 1 atm"), "hold.species", "species is needed"),
+    (dict(hold="CO 1 ppmv wet", owe="ppm by volume, dry"), "gas.water_content", "Water content is needed"),
+    (dict(hold="CO 1 ppmv dry", owe="ppm by volume, dry, 3 % O2", gas="ambient O2 21 %"), "gas.oxygen", "measured oxygen is needed"),
+    (dict(hold="CO 1 ppmv", owe="mg/m3 at 0 K, 1 atm"), "owe.temperature", "absolute zero"),
+    (dict(hold="CO 1 ppmv", owe="mg/m3 at 20 °C, -5 kPa"), "owe.pressure", "above zero"),
+    (dict(hold="CO 1 ppmv wet", owe="ppm by volume, dry", gas="100 % H2O"), "gas.water_content", "not including, 100 %"),
+    (dict(hold="CO 1 ppmv dry", owe="ppm by volume, dry, 3 % O2", gas="21 % O2 dry, ambient O2 20.9 %"), "gas.oxygen", "below the ambient oxygen"),
+    (dict(hold="Hg 1 ppbw", owe="ug/m3 at 20 °C, 1 atm", gas="CH4 60, N2 10"), "gas.matrix_gas", "adds up to 70 %"),
+    (dict(hold="Hg 1 ppbw", owe="ug/m3 at 20 °C, 1 atm", gas="in combustion gas, 9 % O2 dry"), "gas.carbon_dioxide", "carbon dioxide"),
+    (dict(hold="NO 1 ppmv", owe="SO2 mg/m3 at 20 °C, 1 atm"), "owe.species", "You hold"),
+    (dict(hold="CO 1 Pa", owe="ppm by volume"), "gas.pressure", "total pressure"),
+    (dict(hold="dust 3 mg/m3 at 0 °C, 1 atm", owe="ppm by volume"), "hold.reported_as", "no molar mass"),
+    (dict(hold="CH4 1 ppmv as N", owe="ppm by volume as C"), "owe.reported_as", "share"),
+])
+def test_a_problem_names_field_need_and_cure(case: dict, field: str, message: str) -> None:
+    result = restate(**case)
+    assert result["figure"] is None
+    problem = next((problem for problem in result["problems"] if problem["field"].startswith(field.partition(".")[0]) and message in problem["message"]), None)
+    assert problem, result["problems"]
+    assert problem["field"] == field and problem["hint"]
+
+
+def test_a_value_below_detection_stays_below() -> None:
+    figure = restate("Hg < 0.5 ng/m3", "pg/L")["figure"]
+    assert figure["number_text"] == "< 0.5000"
+
+
+def test_a_negative_value_is_kept() -> None:
+    assert restate("CO -2 ppmv", "mg/m3 at 25 °C, 1 atm")["figure"]["value"] < 0
+
+
+def test_wet_oxygen_corrections_by_hand() -> None:
+    result = restate("CO 100 ppmv wet", "ppm by volume, dry, 11 % O2", gas="20 % H2O, wet O2 8 %, ambient O2 21 %")
+    assert result["figure"]["value"] == pytest.approx(100 / 0.8 * (21 - 11) / (21 - 8 / 0.8))
+
+
+def test_uncorrect_then_correct_by_hand() -> None:
+    result = restate("CO 100 mg/m3 dry corrected to 11 % O2", "mg/m3 dry", gas="9 % O2 dry, ambient O2 21 %", owe__oxygen="measured")
+    assert result["figure"]["value"] == pytest.approx(100 * (21 - 9) / (21 - 11))
+
+
+def test_the_working_adds_up_and_names_its_sources() -> None:
+    result = restate("NOx 142 ppmv as NO2, dry", "mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2", gas="9,2 % O2 dry, ambient O2 21 %")
+    steps = result["working"]
+    product = 142.0
+    for step in steps:
+        assert step["source_text"] and step["formula_text"] and step["substitution_text"]
+        assert all(entry["origin_text"] for entry in step["inputs"])
+        product *= step["factor"]
+    assert product == pytest.approx(result["figure"]["value"])

@@ -135,7 +135,7 @@ def test_never_a_bare_normal_or_standard_in_our_output() -> None:
     (dict(hold="Hg 1 ppbw", owe="ug/m3 at 20 °C, 1 atm", gas="CH4 60, N2 10"), "gas.matrix_gas", "adds up to 70 %"),
     (dict(hold="Hg 1 ppbw", owe="ug/m3 at 20 °C, 1 atm", gas="in combustion gas, 9 % O2 dry"), "gas.carbon_dioxide", "carbon dioxide"),
     (dict(hold="NO 1 ppmv", owe="SO2 mg/m3 at 20 °C, 1 atm"), "owe.species", "You hold"),
-    (dict(hold="CO 1 Pa", owe="ppm by volume"), "gas.pressure", "total pressure"),
+    (dict(hold="CO 1 Pa", owe="ppm by volume"), "hold.total_pressure", "total pressure"),
     (dict(hold="dust 3 mg/m3 at 0 °C, 1 atm", owe="ppm by volume"), "hold.reported_as", "no molar mass"),
     (dict(hold="CH4 1 ppmv as N", owe="ppm by volume as C"), "owe.reported_as", "share"),
 ])

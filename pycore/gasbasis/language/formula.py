@@ -37,8 +37,8 @@ def _group(text: str, start: int, closing: str) -> tuple[dict[str, int], int]:
             return (counts, place + 1) if text[place] == closing else (counts, place)
         if text[place] in "([":
             inner, place = _group(text, place + 1, ")" if text[place] == "(" else "]")
-            if text[place - 1] not in ")]":
-                return counts, place
+            if text[place - 1] not in ")]" or not inner:
+                return counts, place - 1
         else:
             inner, place = {found.group(): 1}, found.end()
         number = re.compile("[0-9]+").match(text, place)

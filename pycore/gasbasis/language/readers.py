@@ -344,11 +344,16 @@ def _take(reader, field: str, value: object, start: int, end: int) -> bool:
     return True
 
 
-parts_by = _word_reader("parts_by", tokens.PARTS_BY)
+_parts_word = _word_reader("parts_by", tokens.PARTS_BY)
 water = _word_reader("water", tokens.WATER)
 conditions_word = _word_reader("conditions_word", tokens.CONDITIONS_WORD)
 actual_volume = _word_reader("actual_volume", ((True, tokens.ACTUAL),))
 matrix_gas = _word_reader("matrix_gas", tuple((MatrixGas(identity), pattern) for identity, pattern in tokens.MATRIX))
+
+
+def parts_by(reader) -> bool:
+    """ "v/v", "by mass", ... - but a "mol/mol" with no unit before it is the unit itself."""
+    return not ("unit" not in reader.fields and reader.text.startswith("mol/mol", reader.place)) and _parts_word(reader)
 
 
 def reported_as(reader) -> bool:
@@ -429,6 +434,9 @@ def conclude(reader) -> None:
             if field in reader.fields and "species" not in reader.fields:
                 _as_value(reader, field, identity)
                 break
+    if reader.side == "hold" and "value" not in reader.fields and "unit" not in reader.fields and "pressure" in reader.fields:
+        _rename(reader, "pressure", "value")                  # "CO 1.2 Pa": the only number is the value
+        reader.fields["unit"] = reader.fields["value"].unit
     value = reader.fields.get("value")
     if value is not None and value.unit.kind == "parts" and "parts_by" not in reader.fields and value.unit.id == "%":
         measured = reader.fields.get("species")
@@ -440,13 +448,13 @@ def conclude(reader) -> None:
 
 
 def _as_value(reader, field: str, identity: str) -> None:
-    quantity = reader.fields.pop(field)
-    reader.fields.update(value=quantity, unit=quantity.unit, species=find(identity))
-    for index, piece in enumerate(reader.pieces):
-        if piece.field == field:
-            reader.pieces[index] = replace(piece, field="value")
-    said = reader.fields.pop(f"{field}_water", None)
-    if said:
-        reader.fields.setdefault("water", said)
-        reader.pieces = [replace(piece, field="water") if piece.field == f"{field}_water" else piece for piece in reader.pieces]
+    _rename(reader, field, "value")
+    reader.fields.update(unit=reader.fields["value"].unit, species=find(identity))
+    if f"{field}_water" in reader.fields:
+        _rename(reader, f"{field}_water", "water")
+
+
+def _rename(reader, field: str, to: str) -> None:
+    reader.fields[to] = reader.fields.pop(field)
+    reader.pieces = [replace(piece, field=to) if piece.field == field else piece for piece in reader.pieces]
 

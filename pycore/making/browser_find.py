@@ -46,3 +46,8 @@ def find_or_install() -> str:
         raise BuildFailed(f"No Chromium was found. Install one, or set {VARIABLE} to the path of one.")
     say(f"browser: {found}")
     return found
+
+
+def clean_environment() -> dict[str, str]:
+    """The environment without what would put other sources before the installed wheel."""
+    return {name: value for name, value in os.environ.items() if name != "PYTHONPATH"}

@@ -58,7 +58,8 @@ def in_pyodide(node_command: str, places: Places, *, script: str, call: str, arg
         "pyodide": str(places.pyodide), "stdlib": str(stdlib or places.pyodide / "python_stdlib.zip"), "script": script, "call": call,
         "argument": argument, "path": [*path, "/inside"], "result": str(result),
         "mounts": {place: str(root) for place, root in {"/inside": INSIDE, **mounts}.items()},
-        "env": {"SOURCE_DATE_EPOCH": WHEN, "PYTHONDONTWRITEBYTECODE": "1", "PYTHONHASHSEED": "0"}}))
+        "env": {"SOURCE_DATE_EPOCH": WHEN, "PYTHONDONTWRITEBYTECODE": "1", "PYTHONHASHSEED": "0",
+                "PYTHONNODEBUGRANGES": "1"}}))
     run([node_command, MAKING / "pyodide_run.mjs", job], why=why, show=show)
     return json.loads(result.read_text())
 

@@ -1,7 +1,6 @@
 """Every test: first the core's inside Pyodide on the trimmed build, then everything under CPython and in the browser."""
 from __future__ import annotations
 
-import os
 import shutil
 import subprocess
 import sys
@@ -21,9 +20,8 @@ RUNNER = ("pytest", "_pytest", "py.py", "pluggy", "iniconfig", "packaging", "pyg
 def run_tests(runtime: Runtime, places: Places, chosen: list[str]) -> int:
     """Run the tests and return the exit status. With pytest arguments, only what they choose, under CPython."""
     install_locked("test")
-    environment = {**os.environ, browser_find.VARIABLE: browser_find.find_or_install(), "GASBASIS_DIST": str(places.dist),
+    environment = {**browser_find.clean_environment(), browser_find.VARIABLE: browser_find.find_or_install(), "GASBASIS_DIST": str(places.dist),
                    "PYTHONDONTWRITEBYTECODE": "1"}
-    environment.pop("PYTHONPATH", None)          # the installed wheel is what is tested, not the sources
     started = time.monotonic()
     inside = 0 if chosen else run_inside_pyodide(runtime, places)
     say(f"\n== under CPython {sys.version.split()[0]} and in the browser")

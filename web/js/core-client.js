@@ -102,8 +102,9 @@ export function createCore({ onState = () => {} } = {}) {
       change({ stage: data.stage, done: data.done, of: data.of });
     } else if (data.type === "ready") {
       clearTimeout(watchdog);
-      change({ phase: "ready", version: data.version, stage: "ready", message: "" });
-      for (const question of [...pending.values()]) send(question);
+      state = { ...state, phase: "ready", version: data.version, stage: "ready", message: "" };
+      for (const question of [...pending.values()]) send(question);      // before onState, which may ask more
+      onState(state);
     } else if (data.type === "failed") {
       if (state.phase === "ready") replace(data.message);
       else giveUp(data.message);

@@ -29,6 +29,7 @@ def _parser() -> argparse.ArgumentParser:
     restate.add_argument("--hold", required=True, help='what you hold, as written: "NOx 142 ppm dry as NO2"')
     restate.add_argument("--owe", required=True, help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
     restate.add_argument("--gas", default="", help='the gas it was in: "12 %% H2O, 9.2 %% O2 dry, ambient O2 20.9 %%"')
+    restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
     restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
     restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
     restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")
@@ -42,7 +43,7 @@ def _sheet(options: argparse.Namespace) -> dict:
         if not equals:
             raise SystemExit(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
         settled[doubt.strip()] = reading.strip()
-    return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "settled": settled}
+    return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "rule_book": options.rule_book, "settled": settled}
 
 
 def _status(result: dict) -> int:
@@ -55,6 +56,7 @@ def _text(result: dict) -> str:
     lines: list[str] = []
     if result["figure"]:
         lines.append(result["figure"]["text"])
+        lines.extend(f"warning  {text}" for text in result["warnings"])
     lines.extend(_problem_text(problem) for problem in result["problems"])
     if result["spread"] and "low" in result["spread"]:
         ends = result["spread"]

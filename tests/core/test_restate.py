@@ -114,7 +114,7 @@ def test_nothing_is_asked_for_that_is_not_used(hold: str, owe: str, gas: str) ->
 
 
 def test_never_a_bare_normal_or_standard_in_our_output() -> None:
-    result = restate("SO2 35 mg/Nm3", "mg/m3 at 20 °C, 1 atm", usual=True, hold__conditions="eu_stack")
+    result = restate("SO2 35 mg/Nm3", "mg/m3 at 20 °C, 1 atm", usual=True, hold__conditions="273.15K-101.3kPa")
     assert result["figure"] and "N" not in result["figure"]["unit_text"] and "293.15 K" in result["figure"]["text"]
 
 
@@ -175,3 +175,49 @@ def test_the_working_adds_up_and_names_its_sources() -> None:
         assert all(entry["origin_text"] for entry in step["inputs"])
         product *= step["factor"]
     assert product == pytest.approx(result["figure"]["value"])
+
+
+# --- a chosen rule-book ---
+
+def with_rule(rule: str, usual: bool = True, **texts: str) -> dict:
+    reply = json.loads(answer(json.dumps({"task": "restate", "usual": usual, "sheet": {**texts, "rule_book": rule}})))
+    assert reply["ok"], reply
+    return reply["answer"]
+
+
+def test_a_rule_book_supplies_usual_readings_with_its_clause() -> None:
+    result = with_rule("eu_incineration", hold="CO 50 mg/Nm3, dry, measured at 9 % O2", owe="mg/m3 at 273.15 K, 101.3 kPa, dry, 11 % O2")
+    assert result["figure"]["value"] == pytest.approx(50 * (21 - 11) / (21 - 9))
+    usual = [reading["usual_because"] for doubt in result["doubts"] for reading in doubt["readings"] if reading["id"] == doubt["chosen"]]
+    assert len(usual) == 2 and all("2010/75/EU" in because for because in usual)
+
+
+def test_a_rules_own_molar_volume_is_used_and_its_difference_shown() -> None:
+    # 78.114 / 24.45 by hand; exact 24.4654 L/mol
+    result = with_rule("us_workplace_air", hold="benzene 1 ppm", owe="mg/m3")
+    assert result["figure"]["value"] == pytest.approx(78.114 / 24.45, rel=1e-5)
+    assert any("−0.063 %" in step["note"] for step in result["working"])
+    elsewhere = with_rule("us_workplace_air", hold="benzene 1 ppm", owe="mg/m3 at 20 °C, 1 atm")
+    assert elsewhere["figure"]["value"] == pytest.approx(78.114 / 24.05512, rel=1e-5)
+
+
+def test_a_one_sided_rule_corrects_only_above_its_reference() -> None:
+    text = dict(owe="mg/m3 at 273.15 K, 101.3 kPa, dry, 11 % O2", gas="ambient O2 21 %")
+    below = with_rule("eu_incineration_hazardous", hold="CO 50 mg/m3 dry at 273.15 K, 101.3 kPa, measured at 9 % O2", **text)
+    above = with_rule("eu_incineration_hazardous", hold="CO 50 mg/m3 dry at 273.15 K, 101.3 kPa, measured at 13 % O2", **text)
+    assert below["figure"]["value"] == 50 and any(step["title"] == "No oxygen correction" for step in below["working"])
+    assert above["figure"]["value"] == pytest.approx(50 * 10 / 8)
+
+
+def test_a_diluent_cap_takes_the_place_of_a_higher_oxygen() -> None:
+    result = with_rule("us_part_75_boiler", hold="SO2 50 ppmv dry", gas="17 % O2 dry", owe="ppm by volume, dry, 3 % O2")
+    assert result["figure"]["value"] == pytest.approx(50 * (20.9 - 3) / (20.9 - 14))
+
+
+def test_near_ambient_oxygen_is_warned_of() -> None:
+    result = restate("CO 50 mg/m3 dry", "mg/m3 dry, 11 % O2", gas="19.5 % O2 dry, ambient O2 21 %")
+    assert result["figure"] and "multiplies every error" in result["warnings"][0]
+
+
+def test_an_unknown_rule_book_is_named() -> None:
+    assert "There is no rule-book 'nowhere'" in with_rule("nowhere", hold="CO 1 ppmv", owe="ppb by volume")["problems"][0]["message"]

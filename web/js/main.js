@@ -6,6 +6,7 @@ import { startOffline } from "./offline.js";
 import { button, part } from "./page.js";
 import { mountDoubts } from "./regions/doubts.js";
 import { mountFigure } from "./regions/figure.js";
+import { mountKeys } from "./regions/keys.js";
 import { mountRuleBooks } from "./regions/rule-books.js";
 import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
@@ -28,10 +29,10 @@ function typedAlready(kept) {
   return Object.values(typed).some(Boolean) ? { ...kept, ...typed } : kept ?? {};
 }
 
-async function onReady() {
+function onReady() {
   if (ready) return;
   ready = true;
-  state.change({ catalogue: await core.ask({ task: "catalogue" }).catch(() => null) });
+  core.ask({ task: "catalogue" }).then((catalogue) => state.change({ catalogue }), (error) => state.change({ notice: error.message }));
   offline = startOffline({ onState: (now) => state.change({ offline: now }), beforeReload: () => keepSheet(state.get().sheet) });
 }
 
@@ -158,6 +159,7 @@ const regions = [
   mountSteps($("steps")), mountWorking($("working")), mountStatus($("status"), $("notice"), dispatch),
 ];
 mountTools();
+mountKeys($("keys"), $("figure"));
 state.subscribe((now) => { for (const region of regions) region(now); });
 const code = codeIn(location.href);
 if (code) open(code);

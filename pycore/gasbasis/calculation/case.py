@@ -5,6 +5,7 @@ from dataclasses import dataclass, field, replace
 from typing import Mapping
 
 from gasbasis.errors import OutOfRange
+from gasbasis.facts import RuleBook
 from gasbasis.language.basis import Gas, Quantity, Reading, Statement
 
 AMOUNT_FRACTION = "amount_fraction"
@@ -27,6 +28,7 @@ class Case:
     hold: Statement
     gas: Gas
     owe: Statement
+    rule: RuleBook | None = None
     chosen: Mapping[str, str] = field(default_factory=dict)     # "hold.parts_by" -> label of the reading taken
 
     def record(self, side: str) -> Statement | Gas:
@@ -42,7 +44,7 @@ class Case:
         return replace(self, **{side: changed}, chosen=chosen)
 
 
-def make_case(hold: Statement, gas: Gas, owe: Statement) -> Case:
+def make_case(hold: Statement, gas: Gas, owe: Statement, rule: RuleBook | None = None) -> Case:
     """Bring together what the statement itself says of its gas and what the gas line says.
 
     Raises OutOfRange when the two contradict each other.
@@ -60,7 +62,7 @@ def make_case(hold: Statement, gas: Gas, owe: Statement) -> Case:
         gas = replace(gas, ambient_oxygen=owe.ambient_oxygen)
     if owe.oxygen is not None and owe.oxygen_meaning is None:
         owe = replace(owe, oxygen_meaning="corrected")      # owed "at 11 % O2" can only be what to correct to
-    return Case(hold, gas, owe)
+    return Case(hold, gas, owe, rule)
 
 
 def kind_and_factor(statement: Statement) -> tuple[str, float]:

@@ -32,7 +32,7 @@ def _readings(word: str | None) -> tuple[Reading, ...]:
         label = f"{kelvin_text(temperature)} K, {pressure.number.text} {pressure.unit.text}"
         others = f" and {len(named) - 2} more" if len(named) > 2 else ""
         names = "; ".join(row.name for row in named[:2]) + others
-        readings.append(Reading(named[0].id, label, (("temperature", temperature), ("pressure", pressure)), names))
+        readings.append(Reading(label.replace(" ", "").replace(",", "-"), label, (("temperature", temperature), ("pressure", pressure)), names))
     return tuple(readings)
 
 

@@ -13,6 +13,7 @@ from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MA
                                        stated_oxygen)
 from gasbasis.calculation.conditions import conditions_doubt, pressure_doubt, temperature_doubt
 from gasbasis.calculation.leaves import SIDE_TITLES, fixed_quantity
+from gasbasis.calculation.rules import with_usual
 from gasbasis.language.basis import (CORRECTED, DRY, MASS, MASS_BY_VOLUME, MEASURED, VOLUME, WET, Doubt, MatrixGas,
                                      Reading)
 from gasbasis.language.species import find
@@ -26,7 +27,8 @@ def raised(case: Case) -> list[Doubt]:
     doubts = [*case.hold.ambiguities, *case.gas.ambiguities, *case.owe.ambiguities]
     for rule in _RULES:
         doubts.extend(rule(case))
-    return doubts
+    species = case.hold.species or case.owe.species
+    return [with_usual(doubt, case.rule, species) for doubt in doubts]
 
 
 def _parts_by(case: Case) -> list[Doubt]:
@@ -97,7 +99,7 @@ def _water(case: Case) -> list[Doubt]:
 
 def _water_doubt(side: str, dry_because: str) -> Doubt:
     return Doubt(
-        f"{side}.water", "water", f"Is {SIDE_TITLES[side].lower()} on wet or on dry gas?",
+        f"{side}.water", "water", f"Is the value in {SIDE_TITLES[side]} on wet or on dry gas?",
         "Wet gas holds its water vapour, so the same species is a smaller share of it.",
         (Reading(DRY, "dry", (("water", DRY),), COMMON, dry_because), Reading(WET, "wet", (("water", WET),), COMMON)))
 

@@ -72,6 +72,7 @@ class Path:
     shown: Shown
     basis: tuple[str, ...]             # the owed basis in words, part by part
     species_text: str = ""
+    warnings: tuple[str, ...] = ()
 
 
 def evaluate(path: Path, values: Mapping[str, object] = MappingProxyType({})) -> dict[str, object]:
@@ -108,6 +109,7 @@ class Drafting:
         self.leaves: dict[str, Leaf] = {}
         self.steps: list[Step] = []
         self.choices: list[Choice] = []
+        self.warnings: list[str] = []
 
     def leaf(self, leaf: Leaf) -> str:
         self.leaves.setdefault(leaf.name, leaf)
@@ -117,6 +119,13 @@ class Drafting:
         if not any(done.result == step.result for done in self.steps):
             self.steps.append(step)
         return step.result
+
+    def value(self, name: str) -> float:
+        """The value of a leaf, or of a result so far: what a choice has to look at."""
+        if name in self.leaves:
+            return self.leaves[name].value
+        step = next(step for step in self.steps if step.result == name)
+        return step.relation.value(**{argument: self.value(source) for argument, source in step.arguments.items()})
 
     def choose(self, title: str, reason: str, source: str = "") -> None:
         self.choices.append(Choice(title, reason, source, len(self.steps)))

@@ -8,8 +8,8 @@ from __future__ import annotations
 
 from dataclasses import dataclass, replace
 
-from gasbasis import relations
-from gasbasis.calculation import leaves, matrix
+from gasbasis import facts, relations
+from gasbasis.calculation import leaves, matrix, rules
 from gasbasis.calculation.basis_words import basis_words, species_words, unit_words
 from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_CONCENTRATION, MASS_FRACTION,
                                        MASS_LIKE, PARTIAL_PRESSURE, UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor,
@@ -17,10 +17,11 @@ from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MA
 from gasbasis.calculation.entity import entities_per, entity
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Path, Shown, Step
 from gasbasis.errors import Missing, OutOfRange
-from gasbasis.language.basis import DRY, WET, Species
+from gasbasis.language.basis import DRY, WET, Quantity, Species
 from gasbasis.language.numbers import significant
 
 MASS_PER_AMOUNT = "mass_per_amount_of_gas"
+NEAR_AMBIENT = 0.02                    # oxygen this close below ambient is warned of
 _SYMBOL = {AMOUNT_FRACTION: "x", MASS_FRACTION: "w", MASS_CONCENTRATION: "gamma", AMOUNT_CONCENTRATION: "c",
            PARTIAL_PRESSURE: "p_i", MASS_PER_AMOUNT: "q"}
 _DIRECT = {(AMOUNT_FRACTION, MASS_CONCENTRATION), (MASS_CONCENTRATION, AMOUNT_FRACTION),
@@ -86,6 +87,8 @@ class _Laying:
                                   hint="Say what was measured, e.g. 'Hg' or 'SO2', or type its formula.",
                                   field="hold.species")
                 return leaves.species_mass(draft, f"M_{self.place.entity.id}", self.place.entity, "hold.reported_as")
+            case "V_m":
+                return "V_m"
             case "M_gas":
                 return matrix.gas_molar_mass(draft, case, self.place.water)
         raise KeyError(argument)
@@ -131,12 +134,30 @@ class _Laying:
             return self.to_kind(kind)
         side = "owe" if kind in VOLUMETRIC and here.kind not in VOLUMETRIC or kind == PARTIAL_PRESSURE else self.place.side
         self.uses_partial_pressure = PARTIAL_PRESSURE in (here.kind, kind)
-        relation = relations.get(f"{kind}_from_{self.place.kind}")
+        relation = self.relation_between(self.place.kind, kind, side)
         through = next(iter(relation.symbols))
         arguments = {argument: self.place.name if argument == through else self.supply(argument, side)
                      for argument in relation.symbols}
         shown = self.owed_shown if kind == self.owed_kind else _SHOWN[kind]
         self.move(relation, arguments, through, shown, _LABEL[kind], kind=kind, side=side)
+
+    def relation_between(self, held: str, owed: str, side: str):
+        """The gas law, or the rule's own molar volume where it has one."""
+        if {held, owed} == {AMOUNT_FRACTION, MASS_CONCENTRATION}:
+            statement = self.case.record(side)
+            own = rules.molar_volume(self.case.rule, statement.temperature, statement.pressure)
+            if own is not None:
+                self.draft.leaf(Leaf("V_m", float(own.number) * 1e-3, own.text, own.unit, TABLE, f"the rule's own, {own.locator}"))
+                self.draft.choose("The rule's own molar volume", self.difference_from_exact(own, statement),
+                                  f"{self.case.rule.title}, {self.case.rule.clause}")
+                return relations.get(f"{owed}_from_molar_volume")
+        return relations.get(f"{owed}_from_{held}")
+
+    def difference_from_exact(self, own, statement) -> str:
+        exact = relations.get("molar_volume").value(Z=1.0, R=float(facts.constant("molar_gas_constant").number),
+                                                    T=statement.temperature.si, p=statement.pressure.si) * 1e3
+        percent = significant(100 * (float(own.number) / exact - 1), 2)
+        return f"{own.text} {own.unit} is used as the rule prints it; exact is {significant(exact, 6)} {own.unit}, a difference of {percent} %"
 
     def to_conditions(self) -> None:
         """Bring a volume from the held temperature and pressure to the owed ones."""
@@ -204,13 +225,29 @@ class _Laying:
                              {"A": ambient, "O_hold": self.oxygen_leaf("hold"), "O_owe": self.oxygen_leaf("owe")},
                              f"oxygen to {owed.number.text} %")
         elif owed is not None:
-            self.oxygen_step("corrected_to_reference_oxygen",
-                             {"A": ambient, "O_ref": self.oxygen_leaf("owe"), "O": matrix.oxygen_dry(self.draft, self.case)},
-                             f"oxygen to {owed.number.text} %")
+            self.correct_oxygen(ambient, owed)
         else:
             self.oxygen_step("uncorrected_from_reference_oxygen",
                              {"A": ambient, "O_ref": self.oxygen_leaf("hold"), "O": matrix.oxygen_dry(self.draft, self.case)},
                              "oxygen as measured")
+
+    def correct_oxygen(self, ambient: str, owed: Quantity) -> None:
+        """From the measured oxygen to the owed one, as far as the rule lets it."""
+        rule, measured = self.case.rule, matrix.oxygen_dry(self.draft, self.case)
+        oxygen = self.draft.value(measured)
+        if rule is not None and rule.one_sided and oxygen <= owed.si:
+            self.draft.choose("No oxygen correction", f"the rule corrects only above its reference oxygen of {owed.number.text} %",
+                              f"{rule.title}, {rule.clause}")
+            return
+        if rule is not None and rule.diluent_cap is not None and oxygen > float(rule.diluent_cap.number) / 100:
+            cap = rule.diluent_cap
+            self.draft.choose("Diluent cap", f"the measured oxygen is above the rule's cap; {cap.text} % is used in its place",
+                              f"{rule.title}, {cap.locator}")
+            measured = self.draft.leaf(Leaf("O_cap", float(cap.number) / 100, cap.text, "%", TABLE, f"{rule.title}, {cap.locator}"))
+        elif oxygen > self.draft.value(ambient) - NEAR_AMBIENT:
+            self.draft.warnings.append("The measured oxygen is within 2 % of ambient: the correction multiplies every error in it.")
+        self.oxygen_step("corrected_to_reference_oxygen", {"A": ambient, "O_ref": self.oxygen_leaf("owe"), "O": measured},
+                         f"oxygen to {owed.number.text} %")
 
     def oxygen_step(self, relation_id: str, arguments: dict[str, str], label: str) -> None:
         relation = relations.get(relation_id)
@@ -247,7 +284,7 @@ class _Laying:
             self.to_bases()
         return Path(self.draft.leaves, tuple(self.draft.steps), tuple(self.draft.choices), "held", self.held_factor,
                     self.place.name,
-                    self.owed_shown, basis_words(case, self.place.water, self.draft), species_words(case, self.place.entity))
+                    self.owed_shown, basis_words(case, self.place.water, self.draft), species_words(case, self.place.entity), tuple(self.draft.warnings))
 
     def needs_basis_change(self) -> bool:
         hold, owe = self.case.hold, self.case.owe

@@ -22,7 +22,7 @@ def catalogue() -> dict:
         "species": [{"id": row.id, "name": row.name, "formula": row.formula} for row in facts.species()],
         "conditions": [_conditions(row) for row in facts.reference_conditions()],
         "rule_books": [_rule_book(book) for book in facts.rule_books()],
-        "sources": [{"id": source.id, "title": source.title, "edition": source.edition, "read": source.read} for source in facts.sources()],
+        "sources": [{"id": source.id, "title": source.title, "edition": source.edition, "read": source.read} for source in facts.sources().values()],
         "cautions": list(CAUTIONS),
     }
 
@@ -34,8 +34,8 @@ def _conditions(row) -> dict:
 
 
 def _rule_book(book) -> dict:
-    return {"id": book.id, "title": book.title, "clause": book.clause, "edition": book.edition, "owe": book.owe, "note": book.note,
-            "read": book.read}
+    return {"id": book.id, "title": book.title, "clause": f"{book.edition}, {book.clause}", "owe": book.owe, "note": book.note,
+            "words": " ".join(book.words), "read": book.read}
 
 
 def search(what: str, text: str) -> list[dict]:
@@ -45,5 +45,5 @@ def search(what: str, text: str) -> list[dict]:
     if what == "rule_book":
         words = text.lower().split()
         return [_rule_book(book) for book in facts.rule_books()
-                if all(word in f"{book.title} {book.clause} {book.owe}".lower() for word in words)]
+                if all(word in f"{book.title} {book.edition} {book.clause} {book.owe} {' '.join(book.words)}".lower() for word in words)]
     raise NotUnderstood(f"'{what}' is not searched.", hint="Search 'species' or 'rule_book'.")

@@ -11,7 +11,9 @@ from gasbasis.calculation.outcomes import Settled, Spread, effect, reading_probl
 from gasbasis.calculation.path import figure_value
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.working import bars, working
-from gasbasis.errors import CoreError, Missing
+from gasbasis.calculation.rules import find_rule
+from gasbasis.errors import CoreError, Missing, NotUnderstood
+from gasbasis.facts import RuleBook
 from gasbasis.language.basis import Doubt, Gas, Statement
 from gasbasis.language.gas import read_gas
 from gasbasis.language.numbers import half_last_digit, significant
@@ -31,11 +33,11 @@ def restated(sheet: Sheet, take_usual: bool = False) -> dict:
     gas, gas_problems = read_gas(sheet.gas)
     owe, owe_problems = read_statement(sheet.owe, "owe")
     problems = [*hold_problems, *gas_problems, *owe_problems, *_incomplete(hold, owe)]
-    result: dict = {"figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": []}
+    result: dict = {"figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "warnings": []}
     settled = Settled(Case(hold, gas, owe), (), ())
     if not problems:
         try:
-            settled = settle(make_case(hold, gas, owe), sheet.settled, take_usual)
+            settled = settle(make_case(hold, gas, owe, _rule(sheet)), sheet.settled, take_usual)
             result |= _outcome(settled, sheet, hold.value.number.below)
         except CoreError as error:
             problems.append(error)
@@ -43,6 +45,15 @@ def restated(sheet: Sheet, take_usual: bool = False) -> dict:
     sides = {"hold": hold, "gas": gas, "owe": owe}
     return {**{side: side_record(side, record, settled, problems) for side, record in sides.items()},
             "problems": [error.as_json() for error in problems], **result}
+
+
+def _rule(sheet: Sheet) -> RuleBook | None:
+    if not sheet.rule_book:
+        return None
+    rule = find_rule(sheet.rule_book)
+    if rule is None:
+        raise NotUnderstood(f"There is no rule-book '{sheet.rule_book}'.", hint="Choose one from the list, or leave it out.", field="owe")
+    return rule
 
 
 def _incomplete(hold: Statement, owe: Statement) -> list[CoreError]:
@@ -95,7 +106,7 @@ def _figure(case: Case, below: bool) -> dict:
     return {"figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,
                        "species_text": path.species_text, "basis": basis,
                        "text": f"{path.species_text} {number} {path.shown.unit_text} {basis}".strip()},
-            "working": working(path), "steps": bars(path)}
+            "working": working(path), "steps": bars(path), "warnings": list(path.warnings)}
 
 
 def _is_calm(size: float, found: Spread) -> bool:

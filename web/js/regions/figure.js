@@ -31,7 +31,7 @@ function wording(state) {
   const count = open ? ` · ${open} ${open === 1 ? "doubt" : "doubts"} open` : "";
   if (answer?.figure) {
     const { species_text, number_text, unit_text, basis } = answer.figure;
-    return { head: `Figure${species_text ? ` · ${species_text}` : ""}${compared(sent)}`, value: `${number_text} ${unit_text}`, basis, sentence: "" };
+    return { head: `Figure${species_text ? ` · ${species_text}` : ""}${compared(sent)}`, value: `${number_text} ${unit_text}`, basis, sentence: answer.warnings.join(" ") };
   }
   if (answer?.spread?.low) {
     const { low, high, unit_text } = answer.spread;
@@ -39,7 +39,7 @@ function wording(state) {
     return { head: `Figure${count}${compared(sent)}`, value: `${range} ${unit_text}`, basis: "", sentence: answer.sentence };
   }
   if (sent && !answer) return { head: "Figure · as sent, not yet recomputed here", value: sent.figure, basis: "", sentence: "" };
-  const problem = answer?.problems.find((one) => state.sheet[one.field.split(".")[0]]?.trim());
+  const problem = answer?.problems.find((one) => one.field !== "hold" && one.field !== "owe" || one.kind !== "missing");
   return { head: `Figure${count}`, value: "—", basis: problem ? problem.message : answer ? "Type what you hold and what you owe." : "", sentence: "" };
 }
 

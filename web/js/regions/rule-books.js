@@ -18,7 +18,7 @@ export function mountRuleBooks(root, dispatch) {
   let books = [];
   const show = () => {
     const words = search.value.toLowerCase().split(/\s+/).filter(Boolean);
-    const found = books.filter((book) => words.every((word) => `${book.title} ${book.clause} ${book.owe}`.toLowerCase().includes(word)));
+    const found = books.filter((book) => words.every((word) => `${book.title} ${book.clause} ${book.owe} ${book.words}`.toLowerCase().includes(word)));
     keyed(list, found, (book) => book.id, (book) => entry(book), () => {});
   };
   search.addEventListener("input", show);

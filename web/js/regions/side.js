@@ -1,9 +1,6 @@
 /** One side of the sheet: the text line, and its pieces as another view of it. */
-import { button, cloned, keyed, part, say } from "../page.js";
+import { cloned, keyed, part, say } from "../page.js";
 import { mountEditor } from "./editor.js";
-
-// signs a phone's keypad lacks, put in at the caret
-const KEYS = [["±", " ± "], ["×10ⁿ", "×10^"], ["−", "−"], ["<", "< "], ["µ", "µ"], ["³", "³"], ["°C", " °C"], ["%", " %"]];
 
 /**
  * @param {HTMLElement} root @param {string} side @param {(intention: object) => void} dispatch
@@ -15,7 +12,6 @@ export function mountSide(root, side, dispatch) {
   const echo = part(root, "echo"), problems = part(root, "problems");
   problems.id = `${side}-problems`;
   line.setAttribute("aria-describedby", problems.id);
-  for (const [label, sign] of KEYS) root.querySelector(".keys").append(key(label, sign, line));
   line.addEventListener("input", () => { grow(line); dispatch({ type: "text", side, text: line.value }); });
   line.addEventListener("keydown", (event) => { if (event.key === "Enter") { event.preventDefault(); line.blur(); } });
   const editor = mountEditor(part(root, "editor"), side, dispatch);
@@ -26,7 +22,7 @@ export function mountSide(root, side, dispatch) {
     if (line.value !== text) { line.value = text; grow(line); }
     const record = state.answer?.[side];
     const known = record && record.text === text;       // an answer to an older text is not shown as this one's
-    const own = known ? state.answer.problems.filter((problem) => problem.field.split(".")[0] === side && !waits(problem, text)) : [];
+    const own = known ? state.answer.problems.filter((problem) => problem.field.split(".")[0] === side && !waits(problem, side)) : [];
     showProblems(problems, own);
     line.setAttribute("aria-invalid", String(own.some((problem) => problem.kind !== "missing")));
     showEcho(echo, text, own);
@@ -56,19 +52,9 @@ export function mountSide(root, side, dispatch) {
   }
 }
 
-/** "Type what you hold" is no error while the line is still empty. */
-function waits(problem, text) {
-  return problem.kind === "missing" && !text.trim();
-}
-
-function key(label, sign, line) {
-  const node = button(label, () => {
-    line.setRangeText(sign, line.selectionStart, line.selectionEnd, "end");
-    line.dispatchEvent(new Event("input", { bubbles: true }));
-    line.focus();
-  }, "key");
-  node.addEventListener("pointerdown", (event) => event.preventDefault());   // the line keeps the caret
-  return node;
+/** A line that is still empty is no error. */
+function waits(problem, side) {
+  return problem.kind === "missing" && problem.field === side;
 }
 
 function grow(line) {

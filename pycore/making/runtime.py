@@ -15,6 +15,10 @@ from making.wheel import WHEN
 PACKAGE_NAME = "gasbasis"
 INSIDE = MAKING / "inside"
 
+# Of every Python started here. Without column tables in the bytecode the page is half a megabyte smaller on
+# the wire; tracebacks keep their lines and lose their carets.
+SETTINGS = {"PYTHONHASHSEED": "0", "PYTHONNODEBUGRANGES": "1", "PYTHONDONTWRITEBYTECODE": "1", "SOURCE_DATE_EPOCH": WHEN}
+
 # Parts of published wheels that the page cannot use.
 LEAVE_OUT = ["pint/testsuite/", "pint/default_en.txt", "pint/constants_en.txt", "uncertainties/lib1to2/", "uncertainties/unumpy/"]
 
@@ -58,15 +62,14 @@ def in_pyodide(node_command: str, places: Places, *, script: str, call: str, arg
         "pyodide": str(places.pyodide), "stdlib": str(stdlib or places.pyodide / "python_stdlib.zip"), "script": script, "call": call,
         "argument": argument, "path": [*path, "/inside"], "result": str(result),
         "mounts": {place: str(root) for place, root in {"/inside": INSIDE, **mounts}.items()},
-        "env": {"SOURCE_DATE_EPOCH": WHEN, "PYTHONDONTWRITEBYTECODE": "1", "PYTHONHASHSEED": "0",
-                "PYTHONNODEBUGRANGES": "1"}}))
+        "env": SETTINGS}))
     run([node_command, MAKING / "pyodide_run.mjs", job], why=why, show=show)
     return json.loads(result.read_text())
 
 
 def _whole_stdlib(node_command: str, places: Places) -> Path:
     folder = places.work / "stdlib"
-    stamp = Stamp(places.work / "stamps" / "stdlib", digest_of([places.pyodide / "python_stdlib.zip", INSIDE / "compiled.py", INSIDE / "install.py"]))
+    stamp = Stamp(places.work / "stamps" / "stdlib", digest_of([places.pyodide / "python_stdlib.zip", INSIDE / "compiled.py", INSIDE / "install.py"], json.dumps(SETTINGS)))
     if not stamp.fresh(folder / "stdlib.zip"):
         say("compiling the standard library with Pyodide's own Python")
         folder.mkdir(parents=True, exist_ok=True)
@@ -79,7 +82,7 @@ def _whole_stdlib(node_command: str, places: Places) -> Path:
 def _compiled_wheels(node_command: str, published: tuple[Path, ...], tools: list[Path], places: Places) -> list[Path]:
     staged, made, tool_folder = (places.work / name for name in ("staged", "wheels", "tools"))
     stamp = Stamp(places.work / "stamps" / "wheels",
-                  digest_of([*published, *tools, INSIDE / "compiled.py", INSIDE / "install.py"], json.dumps(LEAVE_OUT)))
+                  digest_of([*published, *tools, INSIDE / "compiled.py", INSIDE / "install.py"], json.dumps([LEAVE_OUT, SETTINGS])))
     if not stamp.fresh(made):
         say("installing the wheels inside Pyodide with micropip, compiling them")
         for folder, sources in ((staged, published), (tool_folder, tools), (made, ())):

@@ -5,6 +5,7 @@ from decimal import Decimal
 
 from gasbasis import facts
 from gasbasis.calculation.case import Case
+from gasbasis.calculation.input_uncertainty import degrees_of_freedom, distribution, standard_uncertainty
 from gasbasis.calculation.path import CONVENTION, READING, TABLE, TYPED, Drafting, Leaf
 from gasbasis.errors import Missing
 from gasbasis.language.basis import Quantity, Species
@@ -25,7 +26,17 @@ def _origin(case: Case, field: str) -> tuple[str, str]:
 def from_quantity(draft: Drafting, case: Case, name: str, quantity: Quantity, field: str) -> str:
     """A typed quantity, printed as it was typed."""
     origin, origin_text = _origin(case, field)
-    return draft.leaf(Leaf(name, quantity.si, quantity.number.text, quantity.unit.text, origin, origin_text, field))
+    return draft.leaf(Leaf(name, quantity.si, quantity.number.text, quantity.unit.text, origin, origin_text, field,
+                           **uncertain(quantity, field)))
+
+
+def uncertain(quantity: Quantity, field: str) -> dict:
+    """What a leaf keeps of a quantity's uncertainty. Raises OutOfRange by the quantity's field."""
+    try:
+        return {"standard_uncertainty": standard_uncertainty(quantity), "distribution": distribution(quantity),
+                "degrees_of_freedom": degrees_of_freedom(quantity), "unit_factor": quantity.unit.factor}
+    except OutOfRange as error:
+        raise error.at(field)
 
 
 def from_temperature(draft: Drafting, case: Case, name: str, quantity: Quantity, field: str) -> str:
@@ -33,7 +44,8 @@ def from_temperature(draft: Drafting, case: Case, name: str, quantity: Quantity,
     origin, origin_text = _origin(case, field)
     if quantity.unit.id != "K":
         origin_text += f" ({quantity.number.text} {quantity.unit.text})"
-    return draft.leaf(Leaf(name, quantity.si, kelvin_text(quantity), "K", origin, origin_text, field))
+    spread = uncertain(quantity, field) | {"unit_factor": 1.0}
+    return draft.leaf(Leaf(name, quantity.si, kelvin_text(quantity), "K", origin, origin_text, field, **spread))
 
 
 def kelvin_text(quantity: Quantity) -> str:

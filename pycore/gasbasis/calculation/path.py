@@ -5,6 +5,7 @@ and a column with array types, because every step is one call of one relation.
 """
 from __future__ import annotations
 
+import math
 from dataclasses import dataclass
 from types import MappingProxyType
 from typing import Mapping
@@ -26,6 +27,10 @@ class Leaf:
     origin: str                        # TYPED | TABLE | READING | CONVENTION
     origin_text: str
     field: str = ""                    # the input it answers to: "hold.value", "gas.water_content"
+    standard_uncertainty: float = 0.0  # in SI
+    distribution: str = "normal"       # normal | rectangular | triangular
+    degrees_of_freedom: float = math.inf
+    unit_factor: float = 1.0           # SI value of one printed unit, for printing an uncertainty beside the value
 
 
 @dataclass(frozen=True)

@@ -64,8 +64,11 @@ class _Laying:
         kind, factor = kind_and_factor(hold)
         self.held_factor = factor
         value = hold.value.si if hold.unit.kind != "parts" else float(hold.value.number.decimal) * factor
+        spread = leaves.uncertain(hold.value, "hold.value")
+        in_si = factor / hold.unit.factor              # parts by mass in volume count in kg/m3
+        spread |= {"standard_uncertainty": spread["standard_uncertainty"] * in_si, "unit_factor": factor}
         held = self.draft.leaf(Leaf("held", value, hold.value.number.text, unit_words(hold), "typed",
-                                    "typed in You hold", "hold.value"))
+                                    "typed in You hold", "hold.value", **spread))
         self.place = Place(held, kind, "hold", hold.water, entity(hold, self.species),
                            Shown(factor, unit_words(hold)))
         self.uses_partial_pressure = False

@@ -7,6 +7,7 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass
+from types import MappingProxyType
 from typing import Mapping
 
 from uncertainties import ufloat
@@ -14,10 +15,8 @@ from uncertainties import ufloat
 from gasbasis import facts
 from gasbasis.calculation.path import Leaf, Path, evaluate
 from gasbasis.errors import OutOfRange
-from gasbasis.language.basis import Quantity
 
 COVERAGE_FACTOR = 2.0                  # about 95 % for a Gaussian figure (JCGM 100:2008, 6.3.3)
-_DIVISOR = {"standard": 1.0, "rectangular": math.sqrt(3.0), "triangular": math.sqrt(6.0)}
 
 
 @dataclass(frozen=True)
@@ -43,33 +42,7 @@ class Budget:
         return self.coverage_factor * self.standard_uncertainty
 
 
-def standard_uncertainty(quantity: Quantity) -> float:
-    """The standard uncertainty of a quantity. [SI unit of its kind; a temperature's is a difference]
-
-    Expanded needs its k; half-widths divide by sqrt 3 or sqrt 6 (JCGM 100:2008, 4.3.7 and 4.3.9).
-    """
-    stated = quantity.number.uncertainty
-    if stated is None:
-        return 0.0
-    amount = float(stated.amount)
-    if amount < 0:
-        raise OutOfRange(f"An uncertainty of {stated.amount} was given; it cannot be negative.", hint="Give its size.")
-    if stated.relative:
-        amount *= abs(float(quantity.number.decimal)) / 100.0
-    return amount / _divisor(stated) * quantity.unit.factor
-
-
-def _divisor(stated) -> float:
-    if stated.form != "expanded":
-        return _DIVISOR[stated.form]
-    factor = float(stated.coverage_factor)
-    if factor < 1:
-        raise OutOfRange(f"A coverage factor of {stated.coverage_factor} was given; k is at least 1.",
-                         hint="k = 2 is usual; k = 1 is a standard uncertainty.")
-    return factor
-
-
-def budget(path: Path, correlations: Mapping[tuple[str, str], float] = {}) -> Budget | None:
+def budget(path: Path, correlations: Mapping[tuple[str, str], float] = MappingProxyType({})) -> Budget | None:
     """The uncertainty budget of a path; None when no input carries an uncertainty.
 
     `correlations` maps pairs of leaf names to coefficients.

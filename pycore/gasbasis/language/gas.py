@@ -116,6 +116,6 @@ def _gas_word(reader) -> bool:
     return True
 
 
-_CLAUSES = (_ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
+_CLAUSES = (readers.late_spread, readers.coverage, _ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
             _gas_word, readers.number_led)
 

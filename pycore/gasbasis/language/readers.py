@@ -8,7 +8,7 @@ from typing import Callable
 
 from gasbasis.errors import NotUnderstood
 from gasbasis.language import tokens
-from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Species
+from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Species, Uncertainty
 from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, uncertainty_at
 from gasbasis.language.species import find, match_at
 from gasbasis.language.units import unit
@@ -45,11 +45,14 @@ def number_led(reader) -> bool:
 
 
 def _spread(reader, after: int, number: Number) -> tuple[int, Number]:
+    """ "35.2 ± 1.1" before the unit; a % behind it is the unit's, unless a unit of concentration follows: "50 ± 5 % mg/m3"."""
     found = PLUS_MINUS.match(reader.text, _skip(reader.text, after))
     if found is None:
         return after, number
-    end = found.end()
-    return end, replace(number, uncertainty=uncertainty_at(found), text=reader.original[after - len(number.text):end].strip())
+    uncertainty = uncertainty_at(found)
+    if uncertainty.relative and not tokens.MASS_PER_VOLUME.match(reader.text, _skip(reader.text, found.end())):
+        return found.end("amount"), replace(number, uncertainty=replace(uncertainty, relative=False))
+    return found.end(), replace(number, uncertainty=uncertainty)
 
 
 def _skip(text: str, place: int, extra: str = "") -> int:
@@ -131,22 +134,38 @@ def _concentration(reader, number: Number, start: int, after: int) -> bool:
     reader.take("value", Quantity(number, measured), start, end)
     reader.fields["unit"] = measured
     reader.place = end
-    _late_spread(reader)
     return True
 
 
-def _late_spread(reader) -> None:
-    """ "142 ppm ± 5 %": the spread behind the unit."""
-    found = PLUS_MINUS.match(reader.text, _skip(reader.text, reader.place))
-    value = reader.fields.get("value")
-    if found is None or value is None or value.number.uncertainty is not None:
-        return
-    uncertainty = uncertainty_at(found)
-    reader.fields["value"] = replace(value, number=replace(value.number, uncertainty=uncertainty))
-    piece = next(piece for piece in reader.pieces if piece.field == "value")
-    reader.pieces.remove(piece)
-    reader.pieces.append(replace(piece, text=reader.original[piece.span[0]:found.end()], span=(piece.span[0], found.end())))
-    reader.place = found.end()
+def late_spread(reader) -> bool:
+    """ "142 ppm ± 5 %", "20 °C ± 2 K", "9.2 % O2 ± 0.2 %": a spread behind the quantity it belongs to."""
+    found = PLUS_MINUS.match(reader.text, reader.place)
+    quantity = reader.fields.get(reader.last)
+    if found is None or quantity is None or quantity.number.uncertainty is not None:
+        return False
+    uncertainty, end = uncertainty_at(found), found.end()
+    if not uncertainty.relative:
+        uncertainty, end = _in_unit_of(quantity, uncertainty, reader, end)
+    reader.amend(replace(quantity, number=replace(quantity.number, uncertainty=uncertainty)), end)
+    return True
+
+
+def _in_unit_of(quantity: Quantity, uncertainty: Uncertainty, reader, end: int) -> tuple[Uncertainty, int]:
+    """A spread with a unit of its own, brought to the quantity's: "20 °C ± 1.8 °F"."""
+    for pattern in (tokens.TEMPERATURE_UNIT, tokens.PRESSURE_UNIT, tokens.MASS_PER_VOLUME, tokens.PARTS):
+        found = pattern.match(reader.text, _skip(reader.text, end))
+        own = _unit_or_none(found.group()) if found else None
+        if own is not None and own.kind == quantity.unit.kind:
+            scale = Decimal(repr(own.factor)) / Decimal(repr(quantity.unit.factor))
+            return replace(uncertainty, amount=uncertainty.amount * scale), found.end()
+    return uncertainty, end
+
+
+def _unit_or_none(text: str):
+    try:
+        return unit(text)
+    except NotUnderstood:
+        return None
 
 
 def _molar_mass(reader, number: Number, start: int, after: int) -> bool:
@@ -388,16 +407,27 @@ def oxygen_meaning(reader) -> bool:
     return False
 
 
+_FORMS = (("rectangular", re.compile(r"\(?\s?(?:rect(?:angular|\.)?|half-?width|limits?|uniform)\s?\)?(?![A-Za-z])", re.IGNORECASE)),
+          ("triangular", re.compile(r"\(?\s?triang(?:ular|\.)?\s?\)?(?![A-Za-z])", re.IGNORECASE)),
+          ("standard", re.compile(r"\(?\s?(?:standard uncertainty|std\.? unc\.?|1\s?(?:s|σ|sd))\s?\)?(?![A-Za-z])", re.IGNORECASE)),
+          ("expanded", re.compile(r"\(?\s?(?:2\s?(?:s|σ|sd)|95\s?%(?:\s?(?:CI|confidence))?)\s?\)?(?![A-Za-z])", re.IGNORECASE)))
+
+
 def coverage(reader) -> bool:
-    """ "(k=2)": the coverage factor of the value's spread."""
-    found = tokens.COVERAGE.match(reader.text, reader.place)
-    value = reader.fields.get("value")
-    if found is None or value is None or value.number.uncertainty is None:
+    """ "(k=2)", "(rectangular)", "(1 s)", "(95 %)": what the spread of the quantity before it means."""
+    quantity = reader.fields.get(reader.last)
+    if quantity is None or quantity.number.uncertainty is None:
         return False
-    factor = Decimal(found["k"].replace(",", "."))
-    uncertainty = replace(value.number.uncertainty, coverage_factor=factor)
-    reader.fields["value"] = replace(value, number=replace(value.number, uncertainty=uncertainty))
-    return _take(reader, "coverage", factor, reader.place, found.end())
+    found = tokens.COVERAGE.match(reader.text, reader.place)
+    if found:
+        changed = replace(quantity.number.uncertainty, coverage_factor=Decimal(found["k"].replace(",", ".")))
+    else:
+        form, found = next(((name, match) for name, pattern in _FORMS if (match := pattern.match(reader.text, reader.place))), (None, None))
+        if found is None:
+            return False
+        changed = replace(quantity.number.uncertainty, form=form, coverage_factor=Decimal(2) if form == "expanded" else None)
+    reader.amend(replace(quantity, number=replace(quantity.number, uncertainty=changed)), found.end())
+    return True
 
 
 def stated_molar_mass(reader) -> bool:
@@ -423,7 +453,7 @@ def limit_word(reader) -> bool:
     return True
 
 
-STATEMENT: tuple[Read, ...] = (limit_word, named_share, stated_molar_mass, coverage, reported_as, oxygen_meaning, matrix_gas, number_led,
+STATEMENT: tuple[Read, ...] = (limit_word, late_spread, named_share, stated_molar_mass, coverage, reported_as, oxygen_meaning, matrix_gas, number_led,
                                actual_volume, water, conditions_word, parts_by, unit_led, species)
 
 

@@ -30,6 +30,7 @@ class Reader:
         self.fields: dict[str, object] = {}
         self.pieces: list[Piece] = []
         self.problems: list[CoreError] = []
+        self.last = ""                 # the field of the quantity read last: a spread behind it is its own
 
     def take(self, field: str, value: object, start: int, end: int) -> None:
         """Record a piece. A second, different one for the same field is a problem."""
@@ -40,9 +41,20 @@ class Reader:
                 hint="Keep one of the two.", field=self.side, span=(start, end)))
             return
         self.fields[field] = value
+        if isinstance(value, Quantity):
+            self.last = field
         span = _trimmed(self.original, start, end)
         if span not in [piece.span for piece in self.pieces if piece.field == field]:
             self.pieces.append(Piece(field, self.original[slice(*span)], span))
+
+    def amend(self, quantity: Quantity, end: int) -> None:
+        """The quantity read last, with what stood behind it up to `end`; its piece grows by that."""
+        self.fields[self.last] = quantity
+        index = max(index for index, piece in enumerate(self.pieces) if piece.field == self.last)
+        start, _ = self.pieces[index].span
+        start, end = _trimmed(self.original, start, end)
+        self.pieces[index] = Piece(self.last, self.original[start:end], (start, end))
+        self.place = max(self.place, end)
 
     def refuse(self, error: CoreError, start: int, end: int) -> None:
         self.problems.append(error.at(self.side, (start, end)))

@@ -40,6 +40,11 @@ def build(places: Places = Places()):
     return runtime
 
 
+def only_build(arguments: argparse.Namespace) -> int:
+    build()
+    return 0
+
+
 def serve(arguments: argparse.Namespace) -> int:
     from making import server
     build()
@@ -60,15 +65,17 @@ def bench(arguments: argparse.Namespace) -> int:
 def main() -> int:
     parser = argparse.ArgumentParser(description=__doc__, formatter_class=argparse.RawDescriptionHelpFormatter)
     commands = parser.add_subparsers(dest="command", required=True)
-    commands.add_parser("build", help="build dist/").set_defaults(run=lambda arguments: build() and 0)
+    commands.add_parser("build", help="build dist/").set_defaults(run=only_build)
     serving = commands.add_parser("serve", help="build and serve the page on this machine")
     serving.add_argument("--port", type=int, help="the first port to try")
     serving.set_defaults(run=serve)
     testing = commands.add_parser("test", help="build and run every test")
-    testing.add_argument("pytest", nargs=argparse.REMAINDER, help="passed on to pytest; without them every test runs")
     testing.set_defaults(run=test)
     commands.add_parser("bench", help="build and measure the page").set_defaults(run=bench)
-    arguments = parser.parse_args()
+    arguments, further = parser.parse_known_args()
+    arguments.pytest = further
+    if further and arguments.run is not test:
+        parser.error(f"not understood: {' '.join(further)}")
     try:
         return arguments.run(arguments)
     except BuildFailed as failure:

@@ -29,6 +29,8 @@ def _parser() -> argparse.ArgumentParser:
     restate.add_argument("--hold", required=True, help='what you hold, as written: "NOx 142 ppm dry as NO2"')
     restate.add_argument("--owe", required=True, help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
     restate.add_argument("--gas", default="", help='the gas it was in: "12 %% H2O, 9.2 %% O2 dry, ambient O2 20.9 %%"')
+    restate.add_argument("--limit", default="", help='the limit, with its own basis: "200 mg/m3"')
+    restate.add_argument("--rule", default="", help="the decision rule agreed, e.g. simple, guarded, three_way")
     restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
     restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
     restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
@@ -43,7 +45,9 @@ def _sheet(options: argparse.Namespace) -> dict:
         if not equals:
             raise SystemExit(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
         settled[doubt.strip()] = reading.strip()
-    return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "rule_book": options.rule_book, "settled": settled}
+    if options.rule:
+        settled["limit.decision_rule"] = options.rule
+    return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "limit": options.limit, "rule_book": options.rule_book, "settled": settled}
 
 
 def _status(result: dict) -> int:
@@ -58,6 +62,7 @@ def _text(result: dict) -> str:
         lines.append(result["figure"]["text"])
         lines.extend(f"warning  {text}" for text in result["warnings"])
     lines.extend(_problem_text(problem) for problem in result["problems"])
+    lines.extend(_verdict_lines(result["verdict"]))
     if result["spread"] and "low" in result["spread"]:
         ends = result["spread"]
         lines.append(f"{ends['low']['text']} to {ends['high']['text']} {ends['unit_text']}; {result['sentence']}")
@@ -66,6 +71,19 @@ def _text(result: dict) -> str:
     for step in result["working"]:
         lines.extend(_step_lines(step))
     return "\n".join(lines)
+
+
+def _verdict_lines(verdict: dict | None) -> list[str]:
+    if verdict is None:
+        return []
+    lines = [f"limit    {verdict['limit_text']}: {verdict['values_text']} is {verdict['sentence']}"]
+    if verdict["rule"] is None:
+        lines.extend(f"  --rule {rule['id']}: {rule['title']}: {', '.join(rule['words']) or rule['problem']['message']}" for rule in verdict["rules"])
+    turned = verdict["turned_round"]
+    if turned and "upper_text" in turned:
+        guarded = f"; guarded {turned['guarded_text']}" if "guarded_text" in turned else ""
+        lines.append(f"display  at the limit it shows {turned['upper_text']} {turned['unit_text']}{guarded}")
+    return lines
 
 
 def _problem_text(problem: dict) -> str:

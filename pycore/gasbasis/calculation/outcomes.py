@@ -11,6 +11,7 @@ from gasbasis.calculation.case import Case
 from gasbasis.calculation.doubts import raised
 from gasbasis.calculation.path import figure_value
 from gasbasis.calculation.restate import lay
+from gasbasis.calculation.stated_spread import spread_doubts
 from gasbasis.errors import CoreError
 from gasbasis.language.basis import Doubt, Reading
 
@@ -24,7 +25,12 @@ class Settled:
 
     case: Case
     taken: tuple[tuple[Doubt, Reading], ...]
-    open: tuple[Doubt, ...]
+    open: tuple[Doubt, ...]            # those that may move the figure
+
+    @property
+    def about_spread(self) -> tuple[Doubt, ...]:
+        """Open doubts that touch the uncertainty only."""
+        return tuple(spread_doubts(self.case))
 
 
 @dataclass(frozen=True)
@@ -55,7 +61,7 @@ def settle(case: Case, choices: Mapping[str, str], take_usual: bool = False) -> 
     taken: list[tuple[Doubt, Reading]] = []
     while True:
         doubts = raised(case)
-        for doubt in doubts:
+        for doubt in [*doubts, *spread_doubts(case)]:
             reading = _chosen(doubt, choices, take_usual)
             if reading is not None:
                 taken.append((doubt, reading))

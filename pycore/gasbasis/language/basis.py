@@ -19,7 +19,7 @@ class Uncertainty:
     amount: Decimal
     form: str = "expanded"            # standard | expanded | rectangular | triangular
     relative: bool = False            # percent of the value
-    points: bool = False              # percentage points, for a value that is itself a percentage
+    points: bool = False              # "± n %" of a value in %: whether it is points or of the value is settled
     coverage_factor: Decimal | None = None
     degrees_of_freedom: Decimal | None = None
 

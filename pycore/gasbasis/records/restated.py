@@ -10,6 +10,7 @@ from gasbasis.calculation.leaves import SIDE_TITLES
 from gasbasis.calculation.outcomes import Settled, Spread, effect, reading_problem, reading_range, settle, spread
 from gasbasis.calculation.path import figure_value
 from gasbasis.calculation.restate import lay
+from gasbasis.calculation.uncertainty import budget
 from gasbasis.calculation.working import bars, working
 from gasbasis.calculation.rules import find_rule
 from gasbasis.errors import CoreError, Missing, NotUnderstood
@@ -20,6 +21,7 @@ from gasbasis.language.numbers import half_last_digit, significant
 from gasbasis.language.statement import read_statement
 from gasbasis.records.sheet import Sheet
 from gasbasis.records.sides import side_record
+from gasbasis.records.worth import budget_record, verdict_record, worth_problem
 
 DIGITS = 4                             # significant digits of a figure without uncertainty
 
@@ -32,8 +34,9 @@ def restated(sheet: Sheet, take_usual: bool = False) -> dict:
     hold, hold_problems = read_statement(sheet.hold, "hold")
     gas, gas_problems = read_gas(sheet.gas)
     owe, owe_problems = read_statement(sheet.owe, "owe")
+    limit, limit_problems = read_statement(sheet.limit, "limit")
     problems = [*hold_problems, *gas_problems, *owe_problems, *_incomplete(hold, owe)]
-    result: dict = {"figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "warnings": []}
+    result: dict = {"verdict": None, "uncertainty": None, "figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "warnings": []}
     settled = Settled(Case(hold, gas, owe), (), ())
     if not problems:
         try:
@@ -42,7 +45,13 @@ def restated(sheet: Sheet, take_usual: bool = False) -> dict:
         except CoreError as error:
             problems.append(error)
     problems.extend(result.pop("problems", ()))
-    sides = {"hold": hold, "gas": gas, "owe": owe}
+    problems.extend(limit_problems)
+    if sheet.limit.strip() and not problems:
+        try:
+            result["verdict"] = verdict_record(settled, limit, sheet, take_usual)
+        except CoreError as error:
+            problems.append(worth_problem(error))
+    sides = {"hold": hold, "gas": gas, "owe": owe, "limit": limit}
     return {**{side: side_record(side, record, settled, problems) for side, record in sides.items()},
             "problems": [error.as_json() for error in problems], **result}
 
@@ -89,7 +98,7 @@ def _outcome(settled: Settled, sheet: Sheet, below: bool) -> dict:
 def settle_calm(settled: Settled) -> Case:
     """The case with every remaining doubt at its usual, else first, reading: none of them shows in the figure."""
     case = settled.case
-    for doubt in settled.open:
+    for doubt in (*settled.open, *settled.about_spread):
         reading = next((reading for reading in doubt.readings if reading.usual_because), doubt.readings[0])
         case = case.taking(doubt.id, reading)
     return case
@@ -101,9 +110,13 @@ def _figure(case: Case, below: bool) -> dict:
         value = figure_value(path)
     except CoreError as error:
         return {"problems": [error]}
-    number = ("< " if below else "") + significant(value, DIGITS)
-    basis = ", ".join(path.basis)
-    return {"figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,
+    found = budget(path)
+    worth = budget_record(found, path.shown.unit_text) if found else None
+    number = ("< " if below else "") + (worth["value_text"] if worth else significant(value, DIGITS))
+    plus_minus = f" ± {worth['expanded_text']}" if worth else ""
+    basis = ", ".join((*path.basis, *((f"U with k = {worth['coverage_text']}",) if worth else ())))
+    number += plus_minus
+    return {"uncertainty": worth, "figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,
                        "species_text": path.species_text, "basis": basis,
                        "text": f"{path.species_text} {number} {path.shown.unit_text} {basis}".strip()},
             "working": working(path), "steps": bars(path), "warnings": list(path.warnings)}
@@ -145,6 +158,7 @@ def _doubt_records(settled: Settled, sheet: Sheet, found: Spread, effects: Mappi
     ranked = sorted(settled.open, key=lambda doubt: (doubt.id in calm, -effects[doubt.id]))
     records = [_doubt_record(doubt, "calm" if doubt.id in calm else "open", None, sheet, found, effects[doubt.id])
                for doubt in ranked]
+    records.extend(_doubt_record(doubt, "calm", None, sheet, found, None) for doubt in settled.about_spread)
     records.extend(_doubt_record(doubt, "settled", reading.id, sheet, found, None) for doubt, reading in settled.taken)
     return records
 
@@ -174,7 +188,7 @@ def _range_text(ends: tuple[float, float] | None) -> str:
 
 def _effect_text(size: float | None, state: str) -> str:
     if size is None or (state == "open" and not size):
-        return ""
+        return "changes the uncertainty, not the figure" if state == "calm" else ""
     if state == "calm":
         return f"no visible effect: {significant(100 * size, 1)} %" if size else "no effect"
     if math.isinf(size):

@@ -1,0 +1,136 @@
+"""What a figure is worth, as records: its uncertainty with the budget, and the verdict at the limit."""
+from __future__ import annotations
+
+import math
+
+from gasbasis.calculation import conformity
+from gasbasis.calculation.conformity import NUMBER, Judged, judged, rule_doubt, turned_round
+from gasbasis.calculation.outcomes import Settled
+from gasbasis.calculation.uncertainty import Budget
+from gasbasis.calculation.verdict import ABOVE, BELOW, OUTSIDE, RULES, WITHIN, Verdict, risk_at_guard
+from gasbasis.errors import CoreError
+from gasbasis.language.basis import Statement
+from gasbasis.language.numbers import significant, with_uncertainty
+from gasbasis.records.sheet import Sheet
+
+_DIGITS = 4
+
+
+def budget_record(found: Budget, unit_text: str) -> dict:
+    """U with its k, and every input's part in it, biggest first."""
+    value_text, expanded_text = with_uncertainty(found.value, found.expanded_uncertainty)
+    freedom = found.degrees_of_freedom
+    return {
+        "value_text": value_text, "expanded_text": expanded_text, "unit_text": unit_text,
+        "standard_uncertainty": found.standard_uncertainty, "standard_text": significant(found.standard_uncertainty, 2),
+        "coverage_factor": found.coverage_factor, "coverage_text": significant(found.coverage_factor, 3),
+        "freedom_text": "" if math.isinf(freedom) else significant(freedom, 3),
+        "relative_text": f"{significant(100 * found.expanded_uncertainty / abs(found.value), 2)} %" if found.value else "",
+        "rows": [{"field": row.leaf.field, "input": _input(row.leaf), "value_text": f"{row.leaf.text} {row.leaf.unit_text}".strip(),
+                  "standard_text": f"{significant(row.leaf.standard_uncertainty / row.leaf.unit_factor, 2)} {row.leaf.unit_text}".strip(),
+                  "sensitivity_text": f"{significant(row.sensitivity * row.leaf.unit_factor, 3)} {unit_text} per {row.leaf.unit_text or '1'}",
+                  "contribution_text": f"{significant(row.contribution, 2)} {unit_text}", "contribution": row.contribution,
+                  "share": row.share, "share_text": f"{significant(100 * row.share, 2)} %", "distribution": row.leaf.distribution}
+                 for row in found.rows]}
+
+
+_INPUTS = {"hold.value": "held value", "gas.water_content": "water content", "gas.oxygen": "measured oxygen", "hold.oxygen": "oxygen it is stated at",
+           "gas.carbon_dioxide": "carbon dioxide", "gas.ambient_oxygen": "ambient oxygen", "gas.matrix_gas": "gas", "hold.temperature": "held temperature",
+           "hold.pressure": "held pressure", "gas.temperature": "gas temperature", "gas.pressure": "gas pressure"}
+
+
+def _input(leaf) -> str:
+    return _INPUTS.get(leaf.field, leaf.field.partition(".")[2].replace("_", " ") or leaf.name)
+
+
+def verdict_record(settled: Settled, limit: Statement, sheet: Sheet, take_usual: bool) -> dict:
+    """The verdict under the chosen rule, or under every rule; and the display reading at the limit. Raises CoreError."""
+    found = judged(settled, limit, sheet.settled, take_usual)
+    below = settled.case.hold.value.number.below
+    unit_text = conformity.unit_words(limit, settled.case.owe)
+    record = {
+        "unit_text": unit_text, "limit_text": _limit_text(found, unit_text), "compared_on": ", ".join(found.path.basis) if found.path else "",
+        "values_text": _values(found), "rule": found.chosen, "below": below,
+        "rules": [_rule_record(found, rule.id, unit_text, below) for rule in rule_doubt(found.limits).readings],
+        "number": sheet.settled.get(NUMBER, ""), "turned_round": _turned(found)}
+    return record | _headline(found, below) | ({"decision": _decision(found, unit_text)} if found.chosen and not found.spread_open else {})
+
+
+def _limit_text(found: Judged, unit_text: str) -> str:
+    low, high = found.limits.lower, found.limits.upper
+    if low is not None and high is not None:
+        return f"{significant(low, _DIGITS)} to {significant(high, _DIGITS)} {unit_text}"
+    return f"{'at most' if high is not None else 'at least'} {significant(high if high is not None else low, _DIGITS)} {unit_text}"
+
+
+def _values(found: Judged) -> str:
+    low, high = (significant(value, _DIGITS) for value in (min(found.spread.values), max(found.spread.values)))
+    return low if low == high else f"{low} to {high}"
+
+
+def _words(found: Judged, rule: str, below: bool) -> tuple[str, ...]:
+    """A "<" result is within when its bound is, else not decided: the bound is all that is known."""
+    words = found.words(rule)
+    return tuple(dict.fromkeys(word if word == WITHIN else "not decided" for word in words)) if below else words
+
+
+def _headline(found: Judged, below: bool) -> dict:
+    """One line: what is said whatever was meant, or what it depends on."""
+    rules = [found.chosen] if found.chosen else list(found.verdicts)
+    words = tuple(dict.fromkeys(word for rule in rules for word in _words(found, rule, below)))
+    if found.chosen and found.problems:
+        return {"words": "not decided", "shape": "open", "sentence": next(iter(found.problems.values())).message}
+    if len(words) == 1:
+        sure = "whatever was meant" if found.spread_open else "" if found.chosen else "under every decision rule"
+        place = " the limit" if words[0] in (WITHIN, ABOVE, BELOW) else ""
+        return {"words": words[0], "shape": _shape(words[0]), "sentence": f"{words[0]}{place} {sure}".strip()}
+    depends = ([] if found.chosen else ["decision rule"]) + (["the open doubts"] if found.spread_open else [])
+    return {"words": "not decided", "shape": "open", "sentence": f"depends on: {', '.join(depends)}" if depends else "not decided"}
+
+
+def _shape(words: str) -> str:
+    return "within" if words == WITHIN else "beyond" if words in (ABOVE, BELOW, OUTSIDE) else "open"
+
+
+def _rule_record(found: Judged, rule: str, unit_text: str, below: bool) -> dict:
+    described = RULES[rule]
+    problem = found.problems.get(rule)
+    return {"id": rule, "title": described.title, "help": described.help, "needs": described.needs, "source": described.source,
+            "words": list(_words(found, rule, below)), "problem": problem.as_json() if problem else None}
+
+
+def _decision(found: Judged, unit_text: str) -> dict:
+    """Raw value, what was taken off or kept free, the value compared, and the probability of conformity."""
+    if not found.verdicts.get(found.chosen):
+        return {}
+    verdict: Verdict = found.verdicts[found.chosen][0]
+    probability = verdict.probability_of_conformity
+    guard = verdict.guard_band
+    u = found.budget.standard_uncertainty if found.budget else None
+    return {"rule": verdict.rule, "raw_text": _values(found), "compared_text": significant(verdict.compared, _DIGITS),
+            "guard_text": f"{significant(abs(guard), 2)} {unit_text}" if guard else "",
+            "risk_text": f"{significant(100 * risk_at_guard(guard / u), 2)} %" if u and guard > 0 else "",
+            "probability_text": "" if probability is None else f"{significant(100 * probability, 3)} %",
+            "probability_note": "" if probability is None else "for a Gaussian figure (JCGM 106:2012, clause 7)"}
+
+
+def _turned(found: Judged) -> dict | None:
+    """What the display shows when the figure stands at the limit."""
+    if found.path is None:
+        return None
+    unit_text = found.path.leaves[found.path.held].unit_text
+    targets = {"lower": found.limits.lower, "upper": found.limits.upper}
+    readings = {side: turned_round(found.path, target) for side, target in targets.items() if target is not None}
+    record = {"unit_text": unit_text, **{f"{side}_text": significant(value, _DIGITS) for side, value in readings.items()}}
+    if found.budget and found.limits.upper is not None:
+        guarded = found.limits.upper - found.budget.expanded_uncertainty
+        record["guarded_text"] = significant(turned_round(found.path, guarded), _DIGITS)
+    return record
+
+
+def worth_problem(error: CoreError) -> CoreError:
+    """An error on the limit's basis is shown at the limit."""
+    if error.field.startswith("owe"):
+        error.field = "limit" + error.field[3:]
+    return error
+

@@ -12,7 +12,11 @@ FIGURE, NOT_UNDERSTOOD, DOUBTS_OPEN = 0, 2, 3
 
 def main(arguments: list[str] | None = None) -> int:
     """Run one command. Exit status 0: a figure; 3: doubts open; 2: not understood."""
-    options = _parser().parse_args(arguments)
+    parser = _parser()
+    options = parser.parse_args(arguments)
+    for choice in options.settle:
+        if "=" not in choice:
+            parser.error(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
     reply = json.loads(answer(json.dumps({"task": "restate", "sheet": _sheet(options), "usual": options.usual})))
     if not reply["ok"]:
         print(_problem_text(reply["error"]), file=sys.stderr)
@@ -41,9 +45,7 @@ def _parser() -> argparse.ArgumentParser:
 def _sheet(options: argparse.Namespace) -> dict:
     settled = {}
     for choice in options.settle:
-        doubt, equals, reading = choice.partition("=")
-        if not equals:
-            raise SystemExit(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
+        doubt, _, reading = choice.partition("=")
         settled[doubt.strip()] = reading.strip()
     if options.rule:
         settled["limit.decision_rule"] = options.rule

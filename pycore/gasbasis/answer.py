@@ -11,6 +11,7 @@ from gasbasis.language.edit import edit
 from gasbasis.records.catalogue import catalogue, search
 from gasbasis.records.link import read_code, write_code
 from gasbasis.records.restated import restated
+from gasbasis.records.simulated import simulated
 from gasbasis.records.sheet import read_sheet, write_sheet
 
 LONGEST_REQUEST = 200_000              # characters; a sheet is far below, a pasted file far above
@@ -33,7 +34,7 @@ def answer(request: str) -> str:
 def respond(request: Mapping) -> dict:
     """The answer to a parsed request. Raises CoreError."""
     task = request.get("task")
-    if task not in TASKS:
+    if not isinstance(task, str) or task not in TASKS:
         raise NotUnderstood(f"There is no task {task!r}.", hint=f"Tasks: {', '.join(TASKS)}.", field="task")
     return TASKS[task](request)
 
@@ -88,12 +89,17 @@ def _open(request: Mapping) -> dict:
     return {"sheet": write_sheet(opened.sheet), "as_sent": opened.as_sent}
 
 
+def _monte_carlo(request: Mapping) -> dict:
+    return simulated(read_sheet(request.get("sheet")), request.get("seed", 1), request.get("trials"), request.get("usual") is True)
+
+
 TASKS: Mapping[str, Callable[[Mapping], dict]] = {
     "restate": _restate,
     "edit": _edit,
     "search": _search,
     "link": _link,
     "open": _open,
+    "monte_carlo": _monte_carlo,
     "catalogue": lambda request: catalogue(),
     "version": lambda request: {"version": __version__},
 }

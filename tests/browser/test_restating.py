@@ -84,11 +84,12 @@ def test_every_reading_on_one_line_with_its_table(sheet):
 
 def test_the_examples_are_one_tap_away(sheet):
     page = sheet.page
-    page.get_by_role("button", name="More", exact=True).click()
-    page.get_by_role("button", name=re.compile("Example: Stack")).click()
+    page.get_by_role("button", name=re.compile("Stack")).click()
     expect(sheet.line("hold")).to_have_value(re.compile("NOx"))
     expect(sheet.value).to_contain_text("mg/m³")
-    page.get_by_role("button", name=re.compile("Example: Pipeline")).click()
+    page.get_by_role("button", name="More", exact=True).click()
+    page.get_by_role("button", name="Start a new sheet").click()
+    page.get_by_role("button", name=re.compile("Pipeline")).click()
     expect(sheet.value).to_contain_text("ppb")
 
 
@@ -124,3 +125,32 @@ def test_a_cut_link_says_so_and_changes_nothing(sheet, open_page, server):
     other = Sheet(open_page(viewport={"width": 390, "height": 844}), link[:-4]).open().ready()
     expect(other.page.locator("#notice")).to_contain_text("cut off or altered")
     expect(other.line("hold")).to_have_value("")
+
+
+LIMIT = dict(hold="NOx 142 ± 5 ppmv as NO2, dry", gas="9,2 ± 0.3 % O2 dry, ambient O2 21 %", owe="mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2")
+
+
+def test_uncertainty_budget_and_verdict(sheet):
+    page = sheet.write(**LIMIT).page
+    expect(sheet.value).to_have_text("444 ± 19 mg/m³")
+    expect(page.locator("#budget tbody tr")).to_have_count(2)
+    sheet.line("limit").fill("460 mg/m3")
+    verdict = page.locator('#figure [data-part="verdict"]')
+    expect(verdict).to_contain_text("depends on: decision rule")
+    page.locator("#verdict .reading", has_text="simple acceptance").click()
+    expect(verdict).to_contain_text("within the limit")
+    expect(verdict).to_have_attribute("data-shape", "within")
+    page.locator("#verdict .reading[aria-pressed=true]").click()
+    page.locator("#verdict .reading", has_text="guarded acceptance, w = U").click()
+    expect(verdict).to_contain_text("not shown within")
+    expect(page.locator('#verdict [data-part="turned"]')).to_contain_text("147.0 ppm by volume")
+
+
+def test_a_rule_that_needs_a_number_asks_for_it(sheet):
+    page = sheet.write(**LIMIT).page
+    sheet.line("limit").fill("400 mg/m3")
+    page.locator("#verdict .reading", has_text="subtract a percentage of the limit").click()
+    number = page.locator('#verdict input[data-part="number"]')
+    number.fill("20")
+    number.press("Tab")
+    expect(page.locator('#figure [data-part="verdict"]')).to_contain_text("within the limit")

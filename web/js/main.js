@@ -4,6 +4,7 @@ import { keepSheet, keepTheme, keptSheet, keptTheme } from "./keeping.js";
 import { codeIn, figureAsSent, handOn } from "./link.js";
 import { startOffline } from "./offline.js";
 import { button, part } from "./page.js";
+import { mountBudget } from "./regions/budget.js";
 import { mountDoubts } from "./regions/doubts.js";
 import { mountFigure } from "./regions/figure.js";
 import { mountKeys } from "./regions/keys.js";
@@ -11,6 +12,7 @@ import { mountRuleBooks } from "./regions/rule-books.js";
 import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
+import { mountVerdict } from "./regions/verdict.js";
 import { mountWorking } from "./regions/working.js";
 import { createState, emptySheet } from "./state.js";
 
@@ -25,7 +27,7 @@ let offline = null, typing = 0, ready = false;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
-  const typed = Object.fromEntries(["hold", "gas", "owe"].map((side) => [side, $(`${side}-text`).value]));
+  const typed = Object.fromEntries(["hold", "gas", "owe", "limit"].map((side) => [side, $(`${side}-text`).value]));
   return Object.values(typed).some(Boolean) ? { ...kept, ...typed } : kept ?? {};
 }
 
@@ -146,17 +148,19 @@ function mountTools() {
   theme.addEventListener("change", () => { keepTheme(theme.value); show(); });
   show();
   const back = button("Back to what was here before the link", () => { changeSheet(state.get().before); state.change({ before: null }); });
-  part(more, "demos").append(back);
+  part(more, "back").append(back);
   state.subscribe(({ before }) => { back.hidden = !before; });
   fetch(new URL("../demo/sheets.json", import.meta.url)).then((reply) => reply.json()).then((demos) => {
-    part(more, "demos").append(...demos.map((demo) => button(`Example: ${demo.title}`, () => { changeSheet({ ...emptySheet(), ...demo.sheet }); })));
+    const examples = $("examples");
+    part(examples, "demos").append(...demos.map((demo) => button(demo.title, () => changeSheet({ ...emptySheet(), ...demo.sheet }))));
+    state.subscribe(({ sheet }) => { examples.hidden = ["hold", "gas", "owe", "limit"].some((side) => sheet[side].trim()); });
   }).catch(() => {});
 }
 
 const regions = [
-  ...["hold", "gas", "owe"].map((side) => mountSide($(side), side, dispatch)),
+  ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
   mountRuleBooks($("owe"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
-  mountSteps($("steps")), mountWorking($("working")), mountStatus($("status"), $("notice"), dispatch),
+  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountBudget($("budget")), mountWorking($("working")), mountStatus($("status"), $("notice"), dispatch),
 ];
 mountTools();
 mountKeys($("keys"), $("figure"));

@@ -326,7 +326,7 @@ def _parts(reader, place: int):
 
 def unit_led(reader) -> bool:
     """A unit without a number: on the owed side, or in a heading such as "NOx (ppm): 142"."""
-    marks = concentration_unit(reader, reader.place)
+    marks = concentration_unit(reader, reader.place) or _owed_pressure(reader)
     if marks is None:
         return False
     measured, end = marks
@@ -343,6 +343,15 @@ def unit_led(reader) -> bool:
     reader.fields["unit"] = measured
     reader.take("unit", measured, start, end)
     return True
+
+
+def _owed_pressure(reader):
+    """ "Pa in 1013 hPa": a partial pressure is owed."""
+    found = tokens.PRESSURE_UNIT.match(reader.text, reader.place)
+    if found is None or reader.side != "owe" or "unit" in reader.fields or found["gauge"]:
+        return None
+    reader.fields["partial"] = True
+    return unit(found.group()), found.end()
 
 
 # --- words ---

@@ -12,13 +12,21 @@ def side_record(side: str, record: Statement | Gas, settled: Settled, problems: 
     wrong = {problem.field.partition(".")[2] for problem in problems if problem.field.startswith(f"{side}.")}
     doubts = {doubt.id.partition(".")[2]: doubt for doubt in settled.open if doubt.id.startswith(f"{side}.")}
     taken = {doubt.id.partition(".")[2]: (doubt, reading) for doubt, reading in settled.taken if doubt.id.startswith(f"{side}.")}
-    pieces = [_stated(side, piece, record, wrong, doubts) for piece in record.pieces]
+    pieces = [_stated(side, piece, record, wrong, doubts) for piece in record.pieces if not _told_elsewhere(piece, record)]
     shown = {piece["field"] for piece in pieces}
     pieces.extend(_open(side, field, doubt) for field, doubt in doubts.items() if field not in shown)
     pieces.extend(_settled(side, field, doubt, reading) for field, (doubt, reading) in taken.items() if field not in shown)
     covered = {piece["field"] for piece in pieces} | _covered_by(doubts, taken)
     return {"text": record.text, "pieces": pieces,
             "adds": [{"field": field, **_described(side, field)} for field in ADDABLE[side] if field not in covered]}
+
+
+def _told_elsewhere(piece: Piece, record: Statement | Gas) -> bool:
+    """ "9.2 % O2 dry" is one piece to the eye: how it was read needs no button of its own."""
+    if not piece.field.endswith(("_water", "_meaning")):
+        return False
+    whole = piece.field.rpartition("_")[0]
+    return any(other.field == whole and other.span[0] <= piece.span[0] and piece.span[1] <= other.span[1] for other in record.pieces)
 
 
 def _covered_by(doubts: dict[str, Doubt], taken: dict) -> set[str]:

@@ -23,7 +23,7 @@ def budget_record(found: Budget, unit_text: str) -> dict:
     return {
         "value_text": value_text, "expanded_text": expanded_text, "unit_text": unit_text,
         "standard_uncertainty": found.standard_uncertainty, "standard_text": significant(found.standard_uncertainty, 2),
-        "coverage_factor": found.coverage_factor, "coverage_text": significant(found.coverage_factor, 3),
+        "coverage_factor": found.coverage_factor, "coverage_text": f"{found.coverage_factor:.3g}",
         "freedom_text": "" if math.isinf(freedom) else significant(freedom, 3),
         "relative_text": f"{significant(100 * found.expanded_uncertainty / abs(found.value), 2)} %" if found.value else "",
         "rows": [{"field": row.leaf.field, "input": _input(row.leaf), "value_text": f"{row.leaf.text} {row.leaf.unit_text}".strip(),
@@ -49,18 +49,18 @@ def verdict_record(settled: Settled, limit: Statement, sheet: Sheet, take_usual:
     below = settled.case.hold.value.number.below
     unit_text = conformity.unit_words(limit, settled.case.owe)
     record = {
-        "unit_text": unit_text, "limit_text": _limit_text(found, unit_text), "compared_on": ", ".join(found.path.basis) if found.path else "",
+        "unit_text": unit_text, "limit_text": _limit_text(found, limit, unit_text), "compared_on": ", ".join(found.path.basis) if found.path else "",
         "values_text": _values(found), "rule": found.chosen, "below": below,
         "rules": [_rule_record(found, rule.id, unit_text, below) for rule in rule_doubt(found.limits).readings],
         "number": sheet.settled.get(NUMBER, ""), "turned_round": _turned(found)}
     return record | _headline(found, below) | ({"decision": _decision(found, unit_text)} if found.chosen and not found.spread_open else {})
 
 
-def _limit_text(found: Judged, unit_text: str) -> str:
-    low, high = found.limits.lower, found.limits.upper
-    if low is not None and high is not None:
-        return f"{significant(low, _DIGITS)} to {significant(high, _DIGITS)} {unit_text}"
-    return f"{'at most' if high is not None else 'at least'} {significant(high if high is not None else low, _DIGITS)} {unit_text}"
+def _limit_text(found: Judged, limit: Statement, unit_text: str) -> str:
+    typed = limit.value.number.text
+    if found.limits.lower is not None and found.limits.upper is not None:
+        return f"{typed} to {limit.upper_value.number.text} {unit_text}"
+    return f"{'at most' if found.limits.upper is not None else 'at least'} {typed} {unit_text}"
 
 
 def _values(found: Judged) -> str:

@@ -16,11 +16,15 @@ export function mountFigure(root, spoken, dispatch) {
     const sentence = part(root, "sentence");
     sentence.hidden = !words.sentence;
     say(sentence, words.sentence);
+    const verdict = part(root, "verdict"), judged = state.answer?.verdict;
+    verdict.hidden = !judged;
+    verdict.dataset.shape = judged?.shape ?? "";
+    say(verdict.querySelector("span"), judged ? `Limit ${judged.limit_text}: ${judged.sentence}` : "");
     const open = (state.answer?.doubts ?? []).filter((doubt) => doubt.state === "open");
     root.querySelector('[data-action="usual"]').hidden = !open.some((doubt) => doubt.usual);
     part(root, "to-doubts").hidden = !open.length;
     clearTimeout(timer);
-    timer = setTimeout(() => say(spoken, [words.value, words.basis, words.sentence].filter((text) => text && text !== "—").join(", ")), QUIET_MS);
+    timer = setTimeout(() => say(spoken, [words.value, words.basis, words.sentence, verdict.textContent.trim()].filter((text) => text && text !== "—").join(", ")), QUIET_MS);
   };
 }
 

@@ -1,0 +1,48 @@
+"""A Monte Carlo check of a settled sheet's uncertainty, as a record with its histogram."""
+from __future__ import annotations
+
+from gasbasis.calculation.monte_carlo import MOST, agrees, simulate
+from gasbasis.calculation.case import make_case
+from gasbasis.calculation.outcomes import settle
+from gasbasis.calculation.restate import lay
+from gasbasis.calculation.rules import find_rule
+from gasbasis.calculation.uncertainty import budget
+from gasbasis.errors import Missing, NotUnderstood
+from gasbasis.language.gas import read_gas
+from gasbasis.language.numbers import significant, with_uncertainty
+from gasbasis.language.statement import read_statement
+from gasbasis.records.restated import settle_calm
+from gasbasis.records.sheet import Sheet
+
+progress = None                        # a door may set a function (done, of) here; it is called after each block
+
+
+def simulated(sheet: Sheet, seed: object, trials: object, take_usual: bool) -> dict:
+    """Draw, compare with the budget, and return the histogram. Raises CoreError when there is no one figure to draw."""
+    if not isinstance(seed, int) or not (trials is None or isinstance(trials, int)):
+        raise NotUnderstood("Seed and trials are whole numbers.", hint="Leave them out for the usual ones.", field="monte_carlo")
+    path = lay(_settled_case(sheet, take_usual))
+    known = budget(path)
+    if known is None:
+        raise Missing("No input carries an uncertainty, so there is nothing to draw.",
+                      hint="Give one, e.g. '142 ± 5 ppm (k=2)'.", field="hold.value")
+    found = simulate(path, seed, progress=progress or (lambda done, of: None), most=MOST if trials is None else trials)
+    low, high = known.value - known.expanded_uncertainty, known.value + known.expanded_uncertainty
+    mean_text, half_text = with_uncertainty(found.mean, (found.high - found.low) / 2)
+    return {"trials": found.trials, "seed": seed, "mean": found.mean, "standard_uncertainty": found.standard_uncertainty,
+            "unit_text": path.shown.unit_text, "mean_text": mean_text, "half_text": half_text,
+            "low_text": significant(found.low, 4), "high_text": significant(found.high, 4), "low": found.low, "high": found.high,
+            "budget_low": low, "budget_high": high, "budget_low_text": significant(low, 4), "budget_high_text": significant(high, 4),
+            "outside": found.outside, "stable": found.stable, "agrees": agrees(low, high, found),
+            "counts": list(found.counts), "edges": list(found.edges)}
+
+
+def _settled_case(sheet: Sheet, take_usual: bool):
+    (hold, hold_problems), (gas, gas_problems), (owe, owe_problems) = (
+        read_statement(sheet.hold, "hold"), read_gas(sheet.gas), read_statement(sheet.owe, "owe"))
+    for problem in (*hold_problems, *gas_problems, *owe_problems):
+        raise problem
+    if hold.value is None or owe.unit is None:
+        raise Missing("A figure is needed before it can be drawn.", hint="Type what you hold and what you owe.", field="hold")
+    settled = settle(make_case(hold, gas, owe, find_rule(sheet.rule_book)), sheet.settled, take_usual)
+    return settle_calm(settled)

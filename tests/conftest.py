@@ -17,11 +17,13 @@ sys.path.append(str(ROOT / "pycore"))            # for `making`; at the end, so 
 PATIENCE_MS = 30_000
 
 
-def pytest_collection_modifyitems(items):
+def pytest_collection_modifyitems(config, items):
     """Tests that need a process, a browser or the file tree cannot run inside Pyodide."""
-    for item in items:
-        if IN_PYODIDE and item.get_closest_marker("native"):
-            item.add_marker(pytest.mark.skip(reason="needs a process, a browser or the file tree"))
+    if not IN_PYODIDE:
+        return
+    native = [item for item in items if item.get_closest_marker("native")]
+    config.hook.pytest_deselected(items=native)
+    items[:] = [item for item in items if not item.get_closest_marker("native")]
 
 
 @pytest.fixture(scope="session")

@@ -4,7 +4,6 @@ from __future__ import annotations
 import shutil
 import subprocess
 import sys
-import time
 from pathlib import Path
 
 from making import browser_find
@@ -22,14 +21,12 @@ def run_tests(runtime: Runtime, places: Places, chosen: list[str]) -> int:
     install_locked("test")
     environment = {**browser_find.clean_environment(), browser_find.VARIABLE: browser_find.find_or_install(), "GASBASIS_DIST": str(places.dist),
                    "PYTHONDONTWRITEBYTECODE": "1"}
-    started = time.monotonic()
     inside = 0 if chosen else run_inside_pyodide(runtime, places)
+    if inside:
+        say("The core's tests FAILED inside Pyodide (above): this run fails, whatever follows.")
     say(f"\n== under CPython {sys.version.split()[0]} and in the browser")
     command = [VENV_PYTHON, "-m", "pytest", *(chosen or ["tests"])]
     outside = subprocess.run([str(word) for word in command], cwd=ROOT, env=environment).returncode
-    if inside:
-        say("The core's tests FAILED inside Pyodide (above).")
-    say(f"tests took {time.monotonic() - started:.0f} s")
     return inside or outside
 
 

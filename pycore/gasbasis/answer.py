@@ -6,6 +6,7 @@ import traceback
 from typing import Callable, Mapping
 
 from gasbasis import __version__
+from gasbasis.calculation.outcomes import BOUND, QUICK_BOUND
 from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.edit import edit
 from gasbasis.records.catalogue import catalogue, search
@@ -53,7 +54,8 @@ def _parsed(request: str) -> Mapping:
 
 
 def _restate(request: Mapping) -> dict:
-    return restated(read_sheet(request.get("sheet")), take_usual=request.get("usual") is True)
+    return restated(read_sheet(request.get("sheet")), take_usual=request.get("usual") is True,
+                    bound=QUICK_BOUND if request.get("quick") is True else BOUND)
 
 
 def _edit(request: Mapping) -> dict:

@@ -221,3 +221,12 @@ def test_near_ambient_oxygen_is_warned_of() -> None:
 
 def test_an_unknown_rule_book_is_named() -> None:
     assert "There is no rule-book 'nowhere'" in with_rule("nowhere", hold="CO 1 ppmv", owe="ppb by volume")["problems"][0]["message"]
+
+
+def test_too_many_combinations_are_tried_one_at_a_time_and_said_so() -> None:
+    sheet = {"hold": "CO 50 ppm at 9 % O2", "gas": "12 % H2O", "owe": "mg/m3, 11 % O2"}
+    quick = json.loads(answer(json.dumps({"task": "restate", "sheet": sheet, "quick": True})))["answer"]["spread"]
+    whole = json.loads(answer(json.dumps({"task": "restate", "sheet": sheet})))["answer"]["spread"]
+    assert not quick["complete"] and whole["complete"] and quick["counted"] < whole["counted"] <= 4096
+    assert whole["low"]["value"] <= quick["low"]["value"] <= whole["low"]["value"] * 1.2
+    assert whole["high"]["value"] >= quick["high"]["value"] >= whole["high"]["value"] / 1.2

@@ -17,13 +17,14 @@ import { mountWorking } from "./regions/working.js";
 import { createState, emptySheet } from "./state.js";
 
 const TYPING_MS = 60;                  // a burst of keys is one question
+const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
 const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer: null, busy: false, editing: null, catalogue: null, sent: null, before: null, notice: "",
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
 const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
-let offline = null, typing = 0, ready = false;
+let offline = null, typing = 0, resting = 0, ready = false;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
@@ -41,9 +42,21 @@ function onReady() {
 function restate() {
   state.change({ busy: true });
   const { sheet } = state.get();
-  core.ask({ task: "restate", sheet: { schema: 1, ...sheet } }, { channel: "restate" }).then(
-    (answer) => state.change({ answer, busy: false, sent: agreeing(answer) }),
+  const request = { task: "restate", sheet: { schema: 1, ...sheet } };
+  clearTimeout(resting);
+  core.ask({ ...request, quick: true }, { channel: "restate" }).then(
+    (answer) => {
+      state.change({ answer, busy: false, sent: agreeing(answer) });
+      if (answer.spread && !answer.spread.complete) resting = setTimeout(() => restateWhole(request, sheet), RESTING_MS);
+    },
     (error) => { if (error.problem?.kind !== "superseded") state.change({ busy: false, notice: `${error.message} ${error.problem?.hint ?? ""}` }); });
+}
+
+/** Every combination of readings, once the person rests. */
+function restateWhole(request, sheet) {
+  core.ask(request, { channel: "restate" }).then(
+    (answer) => { if (state.get().sheet === sheet) state.change({ answer, sent: agreeing(answer) }); },
+    (error) => { if (error.problem?.kind !== "superseded") state.change({ notice: error.message }); });
 }
 
 /** Whether this device arrives at the figure its sender saw. */

@@ -6,7 +6,7 @@ from typing import Mapping
 
 from gasbasis.calculation.basis_words import unit_words as printed_unit
 from gasbasis.calculation.case import Case, make_case
-from gasbasis.calculation.outcomes import Settled, Spread, settle, spread
+from gasbasis.calculation.outcomes import BOUND, Settled, Spread, settle, spread
 from gasbasis.calculation.path import Path, evaluate
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.uncertainty import Budget, budget
@@ -78,12 +78,12 @@ class Judged:
         return tuple(dict.fromkeys(verdict.words for verdict in self.verdicts.get(rule, ())))
 
 
-def judged(settled: Settled, limit: Statement, choices: Mapping[str, str], take_usual: bool = False) -> Judged:
+def judged(settled: Settled, limit: Statement, choices: Mapping[str, str], take_usual: bool = False, bound: int = BOUND) -> Judged:
     """The verdicts under the chosen rule, or under every rule when none is chosen. Raises CoreError."""
     limits = limits_of(limit)
     _refuse_number(choices.get(NUMBER))
     there = on_limit_basis(settled, limit, choices, take_usual)
-    found = spread(there.case)
+    found = spread(there.case, bound)
     if not found.values:
         raise next(outcome.problem for outcome in found.outcomes)
     path = lay(there.case) if not there.open else None

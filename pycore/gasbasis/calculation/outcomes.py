@@ -16,6 +16,7 @@ from gasbasis.errors import CoreError
 from gasbasis.language.basis import Doubt, Reading
 
 BOUND = 4096
+QUICK_BOUND = 120                      # while somebody types: beyond it one doubt at a time, and the rest when they rest
 _NEGLIGIBLE = 1e-12
 
 
@@ -79,12 +80,18 @@ def _chosen(doubt: Doubt, choices: Mapping[str, str], take_usual: bool) -> Readi
     return None
 
 
-def spread(case: Case) -> Spread:
-    """The figure under every combination of readings of the open doubts, BOUND at most."""
-    tried = tuple(islice(_outcomes(case, {}, ()), BOUND + 1))
-    if len(tried) <= BOUND:
-        return Spread(tried, True)
+def spread(case: Case, bound: int = BOUND) -> Spread:
+    """The figure under every combination of readings of the open doubts, `bound` at most."""
+    if _combinations(raised(case)) <= bound:
+        tried = tuple(islice(_outcomes(case, {}, ()), bound + 1))
+        if len(tried) <= bound:
+            return Spread(tried, True)
     return Spread(tuple(_one_at_a_time(case)), False)
+
+
+def _combinations(doubts: list[Doubt]) -> int:
+    """How many there are at least: readings may raise further doubts."""
+    return math.prod(len(doubt.readings) for doubt in doubts)
 
 
 def _outcomes(case: Case, readings: dict[str, str], labels: tuple[str, ...]) -> Iterator[Outcome]:

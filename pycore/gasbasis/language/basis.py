@@ -10,6 +10,7 @@ from decimal import Decimal
 VOLUME, MASS, MASS_BY_VOLUME = "volume", "mass", "mass_by_volume"
 WET, DRY = "wet", "dry"
 MEASURED, CORRECTED = "measured", "corrected"
+UPPER, LOWER = "upper", "lower"
 
 
 @dataclass(frozen=True)
@@ -142,6 +143,11 @@ class Statement:
     reported_as: Species | None = None
     matrix_gas: MatrixGas | None = None
     total_pressure: Quantity | None = None  # "15 Pa in 1013 hPa"
+    averaging: str | None = None          # "8-h TWA", "daily mean", as it was written
+    approximate: bool = False             # "approx. 10 ppm"
+    limit_direction: str | None = None    # UPPER | LOWER, as a limit says it; None with an upper_value: between the two
+    upper_value: Quantity | None = None   # "5-10 ppm": `value` is the lower end, this the upper, in the same unit
+    second_value: Quantity | None = None  # "10 ppm (15 mg/m3)": the same said a second time, in another unit
 
 
 @dataclass(frozen=True)

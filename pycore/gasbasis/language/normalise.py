@@ -14,7 +14,28 @@ _MAP = {
 _FOOTNOTE = re.compile(r"(?<=pp[mbtq])[¹²³⁴-⁹]+|(?<=[A-Za-z%)])¹")
 
 
+# Two numbers in two cells or lines of a table must not join to one: the break between their digits stays one.
+_CELLS = re.compile(r"(?<=\d)[\t\n\r](?=\d)")
+# What a paste from a document puts inside words and between them: a soft hyphen, marks of no width, a word broken
+# at the end of a line, runs of blanks (but not between two numbers, which would then read as one).
+_SCATTERED = re.compile(
+    "[\u00ad\u200b-\u200d\u2060\ufeff]+(?:\\s*\\n\\s*)?"
+    r"|(?<=[A-Za-z][a-z])[-\u2010][ \t]*\r?\n[ \t]*(?=[a-z]{2})"
+    r"|(?<=[A-Za-z0-9][-\u2010])[ \t]*\r?\n[ \t]*(?=[a-z])"
+    r"|(?<=[^\d\s]\s)\s+|(?<=\d\s)\s+(?=[^\d\s])")
+
+
 def normalise(text: str) -> str:
     """The text in plain spelling, of the same length: place n of one is place n of the other. Footnote marks become blanks."""
     unmarked = _FOOTNOTE.sub(lambda found: " " * len(found.group()), text)
-    return "".join(_MAP.get(character, character) for character in unmarked)
+    plain = "".join(_MAP.get(character, character) for character in unmarked)
+    for found in _CELLS.finditer(unmarked):
+        plain = plain[:found.start()] + "\n" + plain[found.end():]
+    return plain
+
+
+def gathered(text: str) -> tuple[str, tuple[int, ...]]:
+    """The text without what a paste scattered in it, and the place each character left had before."""
+    dropped = {place for found in _SCATTERED.finditer(text) for place in range(*found.span())}
+    kept = tuple(place for place in range(len(text)) if place not in dropped)
+    return "".join(text[place] for place in kept), kept

@@ -10,7 +10,7 @@ _CUBIC = (r"(?:cubic (?:metres?|meters?|feet|foot)|cu\.? ?ft\.?|m\^?3|dm\^?3|cm\
           r"(?<=[sdna])(?:cm|cf|cft|L|l)|cbm|cf)")
 _COUNT = r"(?:100|1000|million|10\^?6|MM|M)"
 # What a volume is called before or behind its unit: N, S, std, dry std, A, R ...
-_CALLED = r"(?:dry std\.?|dry standard|standard|normal|actual|std\.?|ds|dn|da|N|S|A|R|s|n|a|d)"
+_CALLED = r"(?:(?:dry|wet) std\.?|(?:dry|wet) standard|standard|normal|actual|std\.?|ds|dn|da|ws|wn|N|S|A|R|s|n|a|d)"
 
 MASS_PER_VOLUME = re.compile(
     rf"(?P<mass>{_MASS})(?:\s?(?P<entity>[A-Z][A-Za-z0-9]*))?\s?(?:/|\bper\b)\s?(?P<count>{_COUNT})?\s?(?P<called>{_CALLED})?[ .]?"
@@ -25,7 +25,7 @@ MOLAR_MASS = re.compile(r"(?:kg/kmol|g/mol|kg/mol)(?![A-Za-z0-9])")
 
 # ppm with what may be glued to it: v, w, m, d, in any usual order, or a bracket.
 PARTS = re.compile(
-    r"(?P<before>vol|v|mol|mole|wt|w|mass|m)?[ .-]{0,2}(?P<parts>ppm|ppb|ppt|ppq|pphm|percent|per ?cent|%|‰|permil)"
+    r"(?P<before>vol|v|mol|mole|wt|w|mass|m)?[ .-]{0,2}(?P<parts>ppm|ppb|ppt|ppq|pphm|vpm|parts per (?:million|billion|trillion)|percent|per ?cent|%|‰|permil)"
     r"(?P<glued>vd|vw|dv|wv|md|wd|vol|mol|wt|by ?vol|v|w|m)?(?P<ending_dry>d(?=\b))?(?![A-Za-z0-9])", re.IGNORECASE)
 
 PRESSURE_UNIT = re.compile(
@@ -34,17 +34,18 @@ PRESSURE_UNIT = re.compile(
 TEMPERATURE_UNIT = re.compile(r"(?:° ?[CFR]|deg\.? ?[CFR]|degrees? [CFR]|celsius|kelvin|[CFKR])(?![A-Za-z0-9])")
 
 PARTS_BY = (
-    ("volume", re.compile(r"\(?\s?(?:v/v|by\s?vol(?:ume)?|vol/vol|v/vol|volumetric|mol/mol|by\s?mole|molar|mol(?:e)?(?=\s|\)|,|;|$)|\(vol\.?\)|\(v\)|\(mol\))\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
+    ("volume", re.compile(r"\(?\s?(?:v/v|by\s?vol(?:ume)?|vol/vol|v/vol|volumetric|mol/mol|by\s?mole|molar|mol(?:e)?(?=\s|\)|,|;|$)|\(vol(?:\.|ume)?\)|\(?vol\.(?=\s?[,;)])|\(v\)|\(mol\))\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
     ("mass_by_volume", re.compile(r"\(?\s?(?:m/v|w/v|wt/vol|mass in volume|mass by volume|mass per volume)\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
     ("mass", re.compile(r"\(?\s?(?:m/m|w/w|wt/wt|by\s?(?:mass|weight|wt\.?)|\(wt\.?\)|\(w\)|\(m\)|\(mass\)|wt\.?(?=\s|\)|,|;|$))\s?\)?(?![A-Za-z0-9/])", re.IGNORECASE)),
 )
 WATER = (
-    ("dry", re.compile(r"(?:on\s)?(?:a\s)?(?:dry(?:\s(?:basis|gas|volume|flue gas))?|d\.b\.|db|tr\.|trocken)(?![A-Za-z0-9])", re.IGNORECASE)),
-    ("wet", re.compile(r"(?:on\s)?(?:a\s)?(?:(?:wet|moist|humid)(?:\s(?:basis|gas|volume|flue gas))?|w\.b\.|wb|as\s?is)(?![A-Za-z0-9])", re.IGNORECASE)),
+    ("dry", re.compile(r"(?:on\s)?(?:a\s)?(?:dry(?:\s(?:basis|gas|volume|flue gas))?|d\.\s?b\.|db|tr\.|trocken)(?![A-Za-z0-9])", re.IGNORECASE)),
+    ("wet", re.compile(r"(?:on\s)?(?:a\s)?(?:(?:wet|moist|humid)(?:\s(?:basis|gas|volume|flue gas))?|w\.\s?b\.|wb|as\s?is|feucht)(?![A-Za-z0-9])", re.IGNORECASE)),
 )
 CONDITIONS_WORD = (
     ("STP", re.compile(r"(?:at\s)?\(?S\.?T\.?P\.?\)?(?![A-Za-z0-9])")),
     ("NTP", re.compile(r"(?:at\s)?\(?N\.?T\.?P\.?\)?(?![A-Za-z0-9])")),
+    ("normal", re.compile(r"i\.\s?N\.")),                   # German "im Normzustand", behind mg/m3
     ("normal", re.compile(r"(?:at |under )?normal(?:\sconditions|\sstate|\stemperature and pressure)?(?![A-Za-z0-9])", re.IGNORECASE)),
     ("standard", re.compile(r"(?:at |under )?(?:standard(?:\s(?:conditions|temperature and pressure|state))?|std\.? conditions)(?![A-Za-z0-9])", re.IGNORECASE)),
 )
@@ -62,6 +63,33 @@ MATRIX = (
     ("combustion_gas", re.compile(r"in\s(?:combustion|flue|stack|exhaust|waste)\s?gas(?:es)?(?![A-Za-z0-9])", re.IGNORECASE)),
 )
 STATED_MOLAR_MASS = re.compile(r"(?:in\s(?:a\s)?gas\s(?:of|with)\s)?(?:M(?:_?gas)?|MW|molar mass|mol\.? wt\.?)\s?(?:=|of|:)?\s?(?=[\d.,])", re.IGNORECASE)
-LIMIT_WORD = re.compile(r"(?:shall |must |is |to )?(?:not (?:to )?(?:exceed|more than|above)|not more than|no more than|less than or equal to|at most|max(?:imum|\.)?|upper limit|limit(?: value)?|below|under|up to|<=|=<)(?![A-Za-z0-9])\s*(?:of\b|:|is\b)?", re.IGNORECASE)
-CONNECTOR = re.compile(r"(?:at|@|and|of|in|with|on|the|a|an|is|was|to|for|result|results|conc(?:entration|\.)?|value|reading|measured value|content|basis|gas|vol\.?|approx\.?|ca\.?)(?![A-Za-z0-9])|[,;:()\[\]=*|/†‡#.&+-]+", re.IGNORECASE)
+# Which way a limit bounds. Words that mean something else elsewhere ("under normal conditions") count only before a number.
+_BEFORE_NUMBER = r"(?=\s*(?:about\s|approx\.?\s|~\s?)?[\d.,])"
+_SHALL = r"(?:(?:shall|must|should|may|is|are|to|can)\s)?(?:be\s)?"
+LIMIT_DIRECTION = (
+    ("upper", re.compile(
+        rf"{_SHALL}(?:not (?:to )?(?:be )?(?:exceed(?:ed|ing)?|more than|above|higher than|greater than|over)|no(?:t)? (?:more|higher|greater) than|"
+        rf"less than or equal to|at most|max(?:imum|\.)?|upper limit|or (?:less|lower|below)|{_SHALL}(?:below|under|less than|lower than|up to){_BEFORE_NUMBER})(?![A-Za-z0-9])"
+        r"|<=?|=<|≤", re.IGNORECASE)),
+    ("lower", re.compile(
+        rf"{_SHALL}(?:not (?:be )?(?:less than|below|lower than|under)|no(?:t)? (?:less|lower|fewer) than|greater than or equal to|at least|"
+        rf"min(?:imum|\.)?|lower limit|or (?:more|higher|greater|above)|{_SHALL}(?:above|over|more than|greater than|higher than){_BEFORE_NUMBER})(?![A-Za-z0-9])"
+        r"|>=?|=>|≥", re.IGNORECASE)),
+)
+RANGE_OPENING = re.compile(r"(?:between|from|in the range(?: of)?)\s+", re.IGNORECASE)
+RANGE_SIGN = re.compile(r"\s?(?:-|\.\.\.?|…|\bto\b|\band\b|\bthrough\b)\s?", re.IGNORECASE)
+_PERIOD = r"\d+(?:[.,]\d+)?[ -]?(?:h|hrs?|hours?|min|mins|minutes?|d|days?|months?)\.?(?![A-Za-z0-9])"
+_MEAN = r"(?:mean|average|avg\.?|averaging (?:time|period))(?: values?)?"
+_EVERY = r"(?:half[- ]hourly|half[- ]hour|hourly|daily|weekly|monthly|annual|yearly|rolling|calendar[- ](?:day|year)|moving|arithmetic)"
+AVERAGING = re.compile(
+    rf"(?:averaged over (?:a |an )?|over (?:a |an )?)?(?:{_PERIOD}[ -]?)?(?:{_EVERY}\s)*"
+    rf"(?:TWA|time[- ]weighted average|STEL|short[- ]term exposure limit|ceiling(?: limit)?|{_MEAN}|(?<=-)value)(?![A-Za-z0-9])(?: over {_PERIOD})?"
+    rf"|(?:averaged over |over )?(?:a |an )?{_PERIOD}|{_EVERY}(?: values?)?(?![A-Za-z0-9])", re.IGNORECASE)
+APPROXIMATE = re.compile(r"(?:approx(?:\.|imately)?|about|around|circa|ca\.?)(?![A-Za-z0-9])|~|≈", re.IGNORECASE)
+# A mass, amount or length alone is no concentration.
+NO_CONCENTRATION = re.compile(rf"{_MASS}(?![A-Za-z0-9/])")
+CONNECTOR = re.compile(
+    r"\[\d{1,2}\]|(?:at|and|of|in|with|on|the|a|an|is|was|are|be|as|by|to|for|result|results|conc(?:entrations?|\.)?|value|reading|measured(?:\svalue)?|found|"
+    r"content|basis|gas|vol\.?|emissions?|slip|levels?|limit(?:\svalue)?|total|elemental|gaseous|sample|analyte|component|parameter|certified|nominal)(?![A-Za-z0-9])"
+    r"|[,;:()\[\]=*|/†‡#@.&+-]+", re.IGNORECASE)
 WORD = re.compile(r"[^\s,;()\[\]]+")

@@ -7,7 +7,7 @@ from typing import Mapping
 from gasbasis.calculation.basis_words import unit_words
 from gasbasis.calculation.case import Case, make_case
 from gasbasis.calculation.leaves import SIDE_TITLES
-from gasbasis.calculation.outcomes import Settled, Spread, effect, reading_problem, reading_range, settle, spread
+from gasbasis.calculation.outcomes import BOUND, Settled, Spread, effect, reading_problem, reading_range, settle, spread
 from gasbasis.calculation.path import figure_value
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.uncertainty import budget
@@ -29,8 +29,11 @@ _NEEDED = {"hold": ("What you hold is needed.", "Type or paste it as it was writ
            "owe": ("What you owe is needed.", "Type the unit and basis, e.g. 'mg/m3 at 273.15 K, 101.3 kPa, dry'.")}
 
 
-def restated(sheet: Sheet, take_usual: bool = False) -> dict:
-    """All that follows from a sheet. Problems are listed, never raised, so that what is understood stays in view."""
+def restated(sheet: Sheet, take_usual: bool = False, bound: int = BOUND) -> dict:
+    """All that follows from a sheet. Problems are listed, never raised, so that what is understood stays in view.
+
+    Up to `bound` combinations of readings are tried; above it the record's spread says that it is not complete.
+    """
     hold, hold_problems = read_statement(sheet.hold, "hold")
     gas, gas_problems = read_gas(sheet.gas)
     owe, owe_problems = read_statement(sheet.owe, "owe")
@@ -41,14 +44,14 @@ def restated(sheet: Sheet, take_usual: bool = False) -> dict:
     if not problems:
         try:
             settled = settle(make_case(hold, gas, owe, _rule(sheet)), sheet.settled, take_usual)
-            result |= _outcome(settled, sheet, hold.value.number.below)
+            result |= _outcome(settled, sheet, hold.value.number.below, bound)
         except CoreError as error:
             problems.append(error)
     problems.extend(result.pop("problems", ()))
     problems.extend(limit_problems)
     if sheet.limit.strip() and not problems:
         try:
-            result["verdict"] = verdict_record(settled, limit, sheet, take_usual)
+            result["verdict"] = verdict_record(settled, limit, sheet, take_usual, bound)
         except CoreError as error:
             problems.append(worth_problem(error))
     sides = {"hold": hold, "gas": gas, "owe": owe, "limit": limit}
@@ -81,9 +84,9 @@ def _incomplete(hold: Statement, owe: Statement) -> list[CoreError]:
     return missing
 
 
-def _outcome(settled: Settled, sheet: Sheet, below: bool) -> dict:
+def _outcome(settled: Settled, sheet: Sheet, below: bool, bound: int) -> dict:
     """Figure, spread, doubts and working of a readable case."""
-    found = spread(settled.case)
+    found = spread(settled.case, bound)
     effects = {doubt.id: effect(doubt.id, found.outcomes) for doubt in settled.open}
     calm = {doubt.id for doubt in settled.open if _is_calm(effects[doubt.id], found)}
     asked = [doubt for doubt in settled.open if doubt.id not in calm]

@@ -43,9 +43,9 @@ def _input(leaf) -> str:
     return _INPUTS.get(leaf.field, leaf.field.partition(".")[2].replace("_", " ") or leaf.name)
 
 
-def verdict_record(settled: Settled, limit: Statement, sheet: Sheet, take_usual: bool) -> dict:
+def verdict_record(settled: Settled, limit: Statement, sheet: Sheet, take_usual: bool, bound: int) -> dict:
     """The verdict under the chosen rule, or under every rule; and the display reading at the limit. Raises CoreError."""
-    found = judged(settled, limit, sheet.settled, take_usual)
+    found = judged(settled, limit, sheet.settled, take_usual, bound)
     below = settled.case.hold.value.number.below
     unit_text = conformity.unit_words(limit, settled.case.owe)
     record = {

@@ -12,7 +12,7 @@ from gasbasis.language.edit import edit
 from gasbasis.records.catalogue import catalogue, search
 from gasbasis.records.link import read_code, write_code
 from gasbasis.records.restated import restated
-from gasbasis.records.simulated import simulated
+from gasbasis.records import simulated as simulated_record
 from gasbasis.records.sheet import read_sheet, write_sheet
 
 LONGEST_REQUEST = 200_000              # characters; a sheet is far below, a pasted file far above
@@ -30,6 +30,11 @@ def answer(request: str) -> str:
             "kind": "defect", "field": "", "span": None, "message": f"gasbasis failed: {error!r}. Your inputs are kept.",
             "hint": "Please report it with the texts you typed.", "detail": traceback.format_exc()}}
     return json.dumps(result, ensure_ascii=False, allow_nan=False)
+
+
+def report_progress_to(listener: Callable[[int, int], object]) -> None:
+    """Long work calls `listener(done, of)` now and then."""
+    simulated_record.progress = listener
 
 
 def respond(request: Mapping) -> dict:
@@ -92,7 +97,7 @@ def _open(request: Mapping) -> dict:
 
 
 def _monte_carlo(request: Mapping) -> dict:
-    return simulated(read_sheet(request.get("sheet")), request.get("seed", 1), request.get("trials"), request.get("usual") is True)
+    return simulated_record.simulated(read_sheet(request.get("sheet")), request.get("seed", 1), request.get("trials"), request.get("usual") is True)
 
 
 TASKS: Mapping[str, Callable[[Mapping], dict]] = {

@@ -98,7 +98,7 @@ export function createCore({ onState = () => {} } = {}) {
 
   function onMessage({ data }) {
     if (data.type === "progress") {
-      watch();
+      if (state.phase === "loading") watch();
       change({ stage: data.stage, done: data.done, of: data.of });
     } else if (data.type === "ready") {
       clearTimeout(watchdog);

@@ -44,6 +44,7 @@ async function start(counted) {
     report("importing", 0, 1);
     addWheels(python, wheels);
     answer = python.pyimport("gasbasis.answer").answer;
+    python.pyimport("gasbasis.answer").report_progress_to((done, of) => report("drawing", done, of));
     self.postMessage({ type: "ready", version: python.pyimport("gasbasis").__version__ });
   } catch (error) {
     self.postMessage({ type: "failed", message: `Python could not be started: ${error.message ?? error}` });

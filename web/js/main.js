@@ -20,7 +20,7 @@ const TYPING_MS = 60;                  // a burst of keys is one question
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
-const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer: null, busy: false, editing: null, catalogue: null, sent: null, before: null, notice: "",
+const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, notice: "",
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
 const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
@@ -106,6 +106,17 @@ function takeUsual() {
   changeSheet({ settled: { ...state.get().sheet.settled, ...Object.fromEntries(open.map((doubt) => [doubt.id, doubt.usual])) } });
 }
 
+async function draw() {
+  const { sheet } = state.get();
+  state.change({ drawn: { sheet, busy: true, record: null } });
+  try {
+    const record = await core.ask({ task: "monte_carlo", sheet: { schema: 1, ...sheet } });
+    state.change({ drawn: { sheet, busy: false, record } });
+  } catch (error) {
+    if (state.get().drawn) state.change({ drawn: null, notice: `${error.message} ${error.problem?.hint ?? ""}` });
+  }
+}
+
 async function send() {
   const { sheet, answer } = state.get();
   try {
@@ -144,6 +155,8 @@ const INTENTIONS = {
   "rule-book": ({ book }) => changeSheet({ owe: book.owe, rule_book: book.id }),
   notice: ({ text }) => state.change({ notice: text }),
   restart: () => core.restart(),
+  draw,
+  "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
   later: () => state.change({ offline: { ...state.get().offline, update: false } }),
 };
@@ -173,7 +186,7 @@ function mountTools() {
 const regions = [
   ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
   mountRuleBooks($("owe"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
-  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountBudget($("budget")), mountWorking($("working")), mountStatus($("status"), $("notice"), dispatch),
+  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountBudget($("budget"), dispatch), mountWorking($("working")), mountStatus($("status"), $("notice"), dispatch),
 ];
 mountTools();
 mountKeys($("keys"), $("figure"));

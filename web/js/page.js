@@ -43,3 +43,13 @@ export function button(label, act, kind = "plain") {
   node.addEventListener("click", act);
   return node;
 }
+
+const SVG = "http://www.w3.org/2000/svg";
+
+/** An SVG element. @param {string} name @param {Record<string, string | number>} attributes @param {string} [text] */
+export function shape(name, attributes, text = "") {
+  const node = document.createElementNS(SVG, name);
+  for (const [key, value] of Object.entries(attributes)) node.setAttribute(key, String(value));
+  if (text) node.textContent = text;
+  return node;
+}

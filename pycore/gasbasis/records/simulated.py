@@ -1,8 +1,10 @@
 """A Monte Carlo check of a settled sheet's uncertainty, as a record with its histogram."""
 from __future__ import annotations
 
-from gasbasis.calculation.monte_carlo import MOST, agrees, simulate
+import math
+
 from gasbasis.calculation.case import make_case
+from gasbasis.calculation.monte_carlo import MOST, agrees, simulate
 from gasbasis.calculation.outcomes import settle
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.rules import find_rule
@@ -14,6 +16,7 @@ from gasbasis.language.statement import read_statement
 from gasbasis.records.restated import settle_calm
 from gasbasis.records.sheet import Sheet
 
+_POINTS = 80                           # of the drawn curve
 progress = None                        # a door may set a function (done, of) here; it is called after each block
 
 
@@ -34,7 +37,14 @@ def simulated(sheet: Sheet, seed: object, trials: object, take_usual: bool) -> d
             "low_text": significant(found.low, 4), "high_text": significant(found.high, 4), "low": found.low, "high": found.high,
             "budget_low": low, "budget_high": high, "budget_low_text": significant(low, 4), "budget_high_text": significant(high, 4),
             "outside": found.outside, "stable": found.stable, "agrees": agrees(low, high, found),
-            "counts": list(found.counts), "edges": list(found.edges)}
+            "counts": list(found.counts), "edges": list(found.edges),
+            "curve": _gaussian(found.edges, known.value, known.standard_uncertainty)}
+
+
+def _gaussian(edges: tuple[float, float], mean: float, u: float) -> list[float]:
+    """The budget's Gaussian over the histogram's range, its top at 1."""
+    low, high = edges
+    return [math.exp(-0.5 * ((low + (high - low) * index / _POINTS - mean) / u) ** 2) for index in range(_POINTS + 1)]
 
 
 def _settled_case(sheet: Sheet, take_usual: bool):

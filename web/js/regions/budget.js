@@ -1,12 +1,21 @@
 /** The uncertainty budget: a bar for each input's share, biggest first, and the table. */
 import { cloned, keyed, part, say } from "../page.js";
+import { drawHistogram } from "./histogram.js";
 
-/** @param {HTMLElement} root */
-export function mountBudget(root) {
+/** @param {HTMLElement} root @param {(intention: object) => void} dispatch */
+export function mountBudget(root, dispatch) {
+  const draw = root.querySelector('[data-action="draw"]'), stop = root.querySelector('[data-action="stop"]'), progress = part(root, "progress");
+  draw.addEventListener("click", () => dispatch({ type: "draw" }));
+  stop.addEventListener("click", () => dispatch({ type: "stop-drawing" }));
   return (state) => {
     const budget = state.answer?.uncertainty;
     root.hidden = !budget;
     if (!budget) return;
+    const drawing = state.drawn?.sheet === state.sheet ? state.drawn : null;
+    draw.hidden = Boolean(drawing?.busy);
+    stop.hidden = progress.hidden = !drawing?.busy;
+    progress.value = state.core.stage === "drawing" && state.core.of ? state.core.done / state.core.of : 0;
+    showDrawn(root, drawing?.record);
     const freedom = budget.freedom_text ? `, ${budget.freedom_text} degrees of freedom` : "";
     say(part(root, "sum"), `u = ${budget.standard_text} ${budget.unit_text}, k = ${budget.coverage_text}${freedom}, U = ${budget.expanded_text} ${budget.unit_text} (${budget.relative_text})`);
     const rows = budget.rows.map((row, index) => ({ ...row, key: `${row.field}${index}` }));
@@ -23,4 +32,14 @@ export function mountBudget(root) {
       }));
     });
   };
+}
+
+function showDrawn(root, record) {
+  part(root, "drawn").hidden = !record;
+  if (!record) return;
+  const verdict = record.agrees ? "The budget's interval is confirmed" : "The budget's interval is not confirmed: the drawn one counts";
+  say(part(root, "drawn-text"), `${verdict} (JCGM 101:2008, clause 8). ${record.trials} draws: mean ${record.mean_text} ${record.unit_text}, `
+    + `shortest 95 % interval ${record.low_text} to ${record.high_text}; by the budget ${record.budget_low_text} to ${record.budget_high_text}.`
+    + `${record.stable ? "" : " The draws did not settle."}${record.outside ? ` ${record.outside} draws outside what is possible were left out.` : ""}`);
+  drawHistogram(part(root, "histogram"), record);
 }

@@ -1,14 +1,7 @@
 /** Every reading as a point on a logarithmic line, with the same numbers as a table. */
-const SVG = "http://www.w3.org/2000/svg";
-const WIDTH = 400, HEIGHT = 64, EDGE = 30, LINE = 30;
+import { shape } from "../page.js";
 
-/** @param {string} name @param {Record<string, string | number>} attributes @param {string} [text] */
-function shape(name, attributes, text = "") {
-  const node = document.createElementNS(SVG, name);
-  for (const [key, value] of Object.entries(attributes)) node.setAttribute(key, String(value));
-  node.textContent = text;
-  return node;
-}
+const WIDTH = 400, HEIGHT = 64, EDGE = 30, LINE = 30;
 
 /** @param {HTMLElement} place @param {any} spread @param {any[]} readings */
 export function drawStrip(place, spread, readings) {

@@ -24,7 +24,7 @@ _CONTENTS = (("oxygen", tokens.OXYGEN_NAME), ("water_content", tokens.WATER_NAME
 def number_led(reader) -> bool:
     """A number and what follows it: a concentration, a temperature, a pressure, a share of O2 or water."""
     found = NUMBER.match(reader.text, reader.place)
-    if found is None:
+    if found is None or glued_sign(reader.text, reader.place):
         return False
     start, after = found.start(), found.end()
     number = number_at(found, reader.original[start:after].strip())
@@ -34,39 +34,60 @@ def number_led(reader) -> bool:
             return True
     if "value" not in reader.fields and "unit" in reader.fields:
         return _take(reader, "value", Quantity(number, reader.fields["unit"]), start, after)   # "NOx (ppm): 142"
-    if "value" not in reader.fields and "pending" not in reader.fields:
+    if "value" not in reader.fields and "pending" not in reader.fields and not tokens.NO_CONCENTRATION.match(reader.text, skip(reader.text, after)):
         reader.fields["pending"] = (number, start, after)      # "Hg: 8.3 (ug/m3)": the unit may follow
         reader.place = after
         return True
-    reader.refuse(NotUnderstood(f"'{reader.original[start:after].strip()}' is a number without a unit that is known.",
+    mass = tokens.NO_CONCENTRATION.match(reader.text, skip(reader.text, after))
+    after = mass.end() if mass else after
+    given = reader.original[start:after].strip()
+    reader.refuse(NotUnderstood(f"'{given}' is a mass; a concentration is a mass in a volume." if mass else f"'{given}' is a number without a unit that is known.",
                                 hint="Put its unit behind it, e.g. mg/m3, ppm, °C, kPa."), start, after)
     reader.place = after
     return True
 
 
+def glued_sign(text: str, place: int) -> bool:
+    """The point of "approx.10" and the hyphen of "NOx-142" end the word before; they begin no number."""
+    return text[place] in ".,-+" and place > 0 and text[place - 1].isalpha()
+
+
 def _spread(reader, after: int, number: Number) -> tuple[int, Number]:
     """ "35.2 ± 1.1" before the unit; a % behind it is the unit's, unless a unit of concentration follows: "50 ± 5 % mg/m3"."""
-    found = PLUS_MINUS.match(reader.text, _skip(reader.text, after))
+    found = PLUS_MINUS.match(reader.text, skip(reader.text, after))
     if found is None:
         return after, number
     uncertainty = uncertainty_at(found)
-    if uncertainty.relative and not tokens.MASS_PER_VOLUME.match(reader.text, _skip(reader.text, found.end())):
+    if uncertainty.relative and not tokens.MASS_PER_VOLUME.match(reader.text, skip(reader.text, found.end())):
         return found.end("amount"), replace(number, uncertainty=replace(uncertainty, relative=False))
     return found.end(), replace(number, uncertainty=uncertainty)
 
 
-def _skip(text: str, place: int, extra: str = "") -> int:
+def skip(text: str, place: int, extra: str = "") -> int:
     while place < len(text) and text[place] in " " + extra:
         place += 1
     return place
 
 
+_BEFORE_NAME = re.compile(r"[\s]*(?:\((?:dry|wet)\)\s*|(?:dry|wet)\s+)?(?:ref\.?\s+|reference\s+|of\s+)?")
+
+
+def percent_at(text: str, place: int) -> re.Match | None:
+    return _PERCENT.match(text, place)
+
+
+def is_share(text: str, after: int) -> bool:
+    """Whether the number that ends here is a share of O2, water or CO2."""
+    percent = _PERCENT.match(text, after)
+    ahead = _BEFORE_NAME.match(text, percent.end()) if percent else None
+    return ahead is not None and any(re.compile(name, re.IGNORECASE).match(text, ahead.end()) for _, name in _CONTENTS)
+
+
 def _share(reader, number: Number, start: int, after: int) -> bool:
     """ "9.2 % O2", "14 % moisture", "11 % (dry) O2" """
-    percent = _PERCENT.match(reader.text, after)
-    if percent is None:
+    if not is_share(reader.text, after):
         return False
-    ahead = re.compile(r"[\s]*(?:\((?:dry|wet)\)\s*|(?:dry|wet)\s+)?(?:ref\.?\s+|reference\s+|of\s+)?").match(reader.text, percent.end())
+    ahead = _BEFORE_NAME.match(reader.text, _PERCENT.match(reader.text, after).end())
     for field, name in _CONTENTS:
         found = re.compile(name, re.IGNORECASE).match(reader.text, ahead.end())
         if found:
@@ -123,9 +144,11 @@ def _as_number(reader, found: re.Match) -> Number:
 
 
 def _concentration(reader, number: Number, start: int, after: int) -> bool:
-    place = _skip(reader.text, after)
+    place = skip(reader.text, after)
+    if place == after and re.match(r"-[A-Za-z%]", reader.text[place:place + 2]):      # "a 10-ppm limit"
+        place += 1
     closing = reader.text.startswith(")", place)              # "(35.2 ± 1.1) mg/m3"
-    marks = concentration_unit(reader, _skip(reader.text, place + 1) if closing else place)
+    marks = concentration_unit(reader, skip(reader.text, place + 1) if closing else place)
     if marks is None:
         return False
     measured, end = marks
@@ -153,7 +176,7 @@ def late_spread(reader) -> bool:
 def _in_unit_of(quantity: Quantity, uncertainty: Uncertainty, reader, end: int) -> tuple[Uncertainty, int]:
     """A spread with a unit of its own, brought to the quantity's: "20 °C ± 1.8 °F"."""
     for pattern in (tokens.TEMPERATURE_UNIT, tokens.PRESSURE_UNIT, tokens.MASS_PER_VOLUME, tokens.PARTS):
-        found = pattern.match(reader.text, _skip(reader.text, end))
+        found = pattern.match(reader.text, skip(reader.text, end))
         own = _unit_or_none(found.group()) if found else None
         if own is not None and own.kind == quantity.unit.kind:
             scale = Decimal(repr(own.factor)) / Decimal(repr(quantity.unit.factor))
@@ -169,7 +192,7 @@ def _unit_or_none(text: str):
 
 
 def _molar_mass(reader, number: Number, start: int, after: int) -> bool:
-    found = tokens.MOLAR_MASS.match(reader.text, _skip(reader.text, after))
+    found = tokens.MOLAR_MASS.match(reader.text, skip(reader.text, after))
     if found is None:
         return False
     measured = unit("g/mol" if found.group() == "kg/kmol" else found.group())
@@ -177,7 +200,7 @@ def _molar_mass(reader, number: Number, start: int, after: int) -> bool:
 
 
 def _pressure(reader, number: Number, start: int, after: int) -> bool:
-    found = tokens.PRESSURE_UNIT.match(reader.text, _skip(reader.text, after))
+    found = tokens.PRESSURE_UNIT.match(reader.text, skip(reader.text, after))
     if found is None:
         return False
     gauge = found["gauge"]
@@ -202,7 +225,7 @@ def _pressure(reader, number: Number, start: int, after: int) -> bool:
 
 
 def _temperature(reader, number: Number, start: int, after: int) -> bool:
-    found = tokens.TEMPERATURE_UNIT.match(reader.text, _skip(reader.text, after))
+    found = tokens.TEMPERATURE_UNIT.match(reader.text, skip(reader.text, after))
     if found is None:
         return False
     letter = re.sub(r"[^CFKR]", "", found.group().upper().replace("DEG", "").replace("REES", "").replace("CELSIUS", "C").replace("KELVIN", "K"))[:1]
@@ -265,6 +288,8 @@ def _called(reader, word: str, span: tuple[int, int]) -> None:
         return
     if "d" in word.replace("standard", "s").replace("std", "s"):
         reader.take("water", DRY, *span)
+    elif word.startswith("w"):
+        reader.take("water", WET, *span)
     if word == "STP":
         reader.take("conditions_word", "STP", *span)
     elif "actual" in word or word == "a":
@@ -300,6 +325,7 @@ def _plain_ratio(reader, place: int):
     return None
 
 
+_SPELT = {"vpm": "ppm", "parts per million": "ppm", "parts per billion": "ppb", "parts per trillion": "ppt"}
 _BEFORE = {"vol": "volume", "v": "volume", "mol": "volume", "mole": "volume", "wt": "mass", "w": "mass", "mass": "mass", "m": "mass"}
 
 
@@ -307,9 +333,12 @@ def _parts(reader, place: int):
     found = tokens.PARTS.match(reader.text, place)
     if found is None:
         return None
-    measured = unit(re.sub("per ?cent", "percent", found["parts"].lower()))
+    parts = re.sub("per ?cent", "percent", found["parts"].lower())
+    measured = unit(_SPELT.get(parts, parts))
     by, glued = _BEFORE.get((found["before"] or "").lower()), found["glued"] or ""
     by_span = found.span("before")
+    if parts == "vpm":
+        by, by_span = "volume", (found.start("parts"), found.start("parts") + 1)
     if glued:
         letters, start = glued.lower(), found.start("glued")
         water_at = next((index for index in (letters.find("d"), letters.rfind("w")) if index >= 0 and (letters[index] == "d" or "v" in letters)), None)
@@ -442,7 +471,7 @@ def coverage(reader) -> bool:
 def stated_molar_mass(reader) -> bool:
     found = tokens.STATED_MOLAR_MASS.match(reader.text, reader.place)
     number = NUMBER.match(reader.text, found.end()) if found else None
-    if number is None or tokens.MOLAR_MASS.match(reader.text, _skip(reader.text, number.end())) is None:
+    if number is None or tokens.MOLAR_MASS.match(reader.text, skip(reader.text, number.end())) is None:
         return False
     return _molar_mass(reader, _as_number(reader, number), found.start(), number.end())
 
@@ -452,48 +481,3 @@ def species(reader) -> bool:
     if found is None:
         return False
     return _take(reader, "species", found[0], reader.place, found[1])
-
-
-def limit_word(reader) -> bool:
-    found = tokens.LIMIT_WORD.match(reader.text, reader.place)
-    if found is None or reader.side != "limit":
-        return False
-    reader.place = found.end()
-    return True
-
-
-STATEMENT: tuple[Read, ...] = (limit_word, late_spread, named_share, stated_molar_mass, coverage, reported_as, oxygen_meaning, matrix_gas, number_led,
-                               actual_volume, water, conditions_word, parts_by, unit_led, species)
-
-
-def conclude(reader) -> None:
-    """What only the whole text decides: "O2 9.2 % dry" alone is a value of oxygen, and a lone number has no unit."""
-    if "value" not in reader.fields and reader.side != "owe":
-        for field, identity in (("oxygen", "O2"), ("water_content", "H2O"), ("carbon_dioxide", "CO2")):
-            if field in reader.fields and "species" not in reader.fields:
-                _as_value(reader, field, identity)
-                break
-    if reader.side == "hold" and "value" not in reader.fields and "unit" not in reader.fields and "pressure" in reader.fields:
-        _rename(reader, "pressure", "value")                  # "CO 1.2 Pa": the only number is the value
-        reader.fields["unit"] = reader.fields["value"].unit
-    value = reader.fields.get("value")
-    if value is not None and value.unit.kind == "parts" and "parts_by" not in reader.fields and value.unit.id == "%":
-        measured = reader.fields.get("species")
-        if measured is not None and measured.id in ("O2", "CO2", "H2O"):
-            reader.fields["parts_by"] = "volume"              # oxygen, carbon dioxide and water in % are by volume: never asked
-    if "pending" in reader.fields:
-        number, start, end = reader.fields.pop("pending")
-        reader.refuse(NotUnderstood(f"'{number.text}' has no unit.", hint="Put its unit behind it, e.g. ppm or mg/m3."), start, end)
-
-
-def _as_value(reader, field: str, identity: str) -> None:
-    _rename(reader, field, "value")
-    reader.fields.update(unit=reader.fields["value"].unit, species=find(identity))
-    if f"{field}_water" in reader.fields:
-        _rename(reader, f"{field}_water", "water")
-
-
-def _rename(reader, field: str, to: str) -> None:
-    reader.fields[to] = reader.fields.pop(field)
-    reader.pieces = [replace(piece, field=to) if piece.field == field else piece for piece in reader.pieces]
-

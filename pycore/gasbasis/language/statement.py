@@ -9,9 +9,9 @@ import re
 from dataclasses import replace
 
 from gasbasis.errors import CoreError, NotUnderstood
-from gasbasis.language import readers
+from gasbasis.language import clauses, readers
 from gasbasis.language.basis import Doubt, Piece, Quantity, Reading, Statement
-from gasbasis.language.normalise import normalise
+from gasbasis.language.normalise import gathered, normalise
 from gasbasis.language.species import find, search
 from gasbasis.language.tokens import CONNECTOR, WORD
 
@@ -22,10 +22,16 @@ _UNDERSTOOD = ("Understood are: a species or formula, a number with a unit, a te
 
 
 class Reader:
-    """What has been read so far of one text; a reader function adds to it and moves the place on."""
+    """What has been read so far of one text; a reader function adds to it and moves the place on.
+
+    Readers work on the gathered text, `original` as typed and `text` in plain spelling; pieces and problems
+    have their places in the text as it was given.
+    """
 
     def __init__(self, text: str, side: str):
-        self.original, self.text, self.side = text, normalise(text), side
+        self.given, self.side = text, side
+        self.original, self._kept = gathered(text)
+        self.text = normalise(self.original)
         self.place = 0
         self.fields: dict[str, object] = {}
         self.pieces: list[Piece] = []
@@ -38,26 +44,30 @@ class Reader:
             first = next((piece.text for piece in self.pieces if piece.field == field), "")
             self.problems.append(NotUnderstood(
                 f"'{self.original[start:end].strip()}' contradicts '{first}' before it.",
-                hint="Keep one of the two.", field=self.side, span=(start, end)))
+                hint="Keep one of the two.", field=self.side, span=self.typed(start, end)))
             return
         self.fields[field] = value
         if isinstance(value, Quantity):
             self.last = field
-        span = _trimmed(self.original, start, end)
+        span = self.typed(start, end)
         if span not in [piece.span for piece in self.pieces if piece.field == field]:
-            self.pieces.append(Piece(field, self.original[slice(*span)], span))
+            self.pieces.append(Piece(field, self.given[slice(*span)], span))
 
     def amend(self, quantity: Quantity, end: int) -> None:
         """The quantity read last, with what stood behind it up to `end`; its piece grows by that."""
         self.fields[self.last] = quantity
         index = max(index for index, piece in enumerate(self.pieces) if piece.field == self.last)
-        start, _ = self.pieces[index].span
-        start, end = _trimmed(self.original, start, end)
-        self.pieces[index] = Piece(self.last, self.original[start:end], (start, end))
+        span = self.pieces[index].span[0], self.typed(0, end)[1]
+        self.pieces[index] = Piece(self.last, self.given[slice(*span)], span)
         self.place = max(self.place, end)
 
     def refuse(self, error: CoreError, start: int, end: int) -> None:
-        self.problems.append(error.at(self.side, (start, end)))
+        self.problems.append(error.at(self.side, self.typed(start, end)))
+
+    def typed(self, start: int, end: int) -> tuple[int, int]:
+        """The span in the text as it was given."""
+        start, end = _trimmed(self.original, start, end)
+        return (self._kept[start], self._kept[end - 1] + 1) if end > start else (start, end)
 
 
 def _trimmed(text: str, start: int, end: int) -> tuple[int, int]:
@@ -80,11 +90,52 @@ def read_statement(text: str, side: str) -> tuple[Statement, tuple[CoreError, ..
     if refusal is not None:
         return Statement(text=text), (refusal,)
     reader = Reader(text, side)
-    walk(reader, readers.STATEMENT)
-    readers.conclude(reader)
+    walk(reader, STATEMENT)
+    conclude(reader)
     known = {name: value for name, value in reader.fields.items() if name in Statement.__dataclass_fields__}
     statement = Statement(text=text, pieces=tuple(sorted(reader.pieces, key=lambda piece: piece.span)), **known)
     return replace(statement, ambiguities=ambiguities(statement, side)), tuple(reader.problems)
+
+
+# The readers in the order they are tried. What bounds a value is looked for before the value.
+STATEMENT: tuple[readers.Read, ...] = (
+    clauses.limit_direction, readers.late_spread, readers.named_share, readers.stated_molar_mass, readers.coverage, readers.reported_as,
+    readers.oxygen_meaning, readers.matrix_gas, clauses.averaging, clauses.range_led, clauses.second_value, readers.number_led,
+    readers.actual_volume, readers.water, readers.conditions_word, clauses.approximate, readers.parts_by, readers.unit_led, readers.species)
+
+
+def conclude(reader: Reader) -> None:
+    """What only the whole text decides: "O2 9.2 % dry" alone is a value of oxygen, and a lone number has no unit."""
+    if "value" not in reader.fields and reader.side != "owe":
+        for field, identity in (("oxygen", "O2"), ("water_content", "H2O"), ("carbon_dioxide", "CO2")):
+            if field in reader.fields and "species" not in reader.fields:
+                _as_value(reader, field, identity)
+                break
+    if reader.side == "hold" and "value" not in reader.fields and "unit" not in reader.fields and "pressure" in reader.fields:
+        _rename(reader, "pressure", "value")                  # "CO 1.2 Pa": the only number is the value
+        reader.fields["unit"] = reader.fields["value"].unit
+    if reader.side == "limit" and reader.text.strip() and not reader.problems and not {"value", "pending"} & set(reader.fields):
+        reader.refuse(NotUnderstood("There is no number in this limit.", hint="For example 'not more than 200 mg/m3'."), 0, len(reader.text))
+    value = reader.fields.get("value")
+    if value is not None and value.unit.kind == "parts" and "parts_by" not in reader.fields and value.unit.id == "%":
+        measured = reader.fields.get("species")
+        if measured is not None and measured.id in ("O2", "CO2", "H2O"):
+            reader.fields["parts_by"] = "volume"              # oxygen, carbon dioxide and water in % are by volume: never asked
+    if "pending" in reader.fields:
+        number, start, end = reader.fields.pop("pending")
+        reader.refuse(NotUnderstood(f"'{number.text}' has no unit.", hint="Put its unit behind it, e.g. ppm or mg/m3."), start, end)
+
+
+def _as_value(reader: Reader, field: str, identity: str) -> None:
+    _rename(reader, field, "value")
+    reader.fields.update(unit=reader.fields["value"].unit, species=find(identity))
+    if f"{field}_water" in reader.fields:
+        _rename(reader, f"{field}_water", "water")
+
+
+def _rename(reader: Reader, field: str, to: str) -> None:
+    reader.fields[to] = reader.fields.pop(field)
+    reader.pieces = [replace(piece, field=to) if piece.field == field else piece for piece in reader.pieces]
 
 
 def refuse_text(text: str, side: str) -> CoreError | None:
@@ -123,10 +174,11 @@ def walk(reader: Reader, table) -> None:
 def _leave(reader: Reader, start: int, end: int) -> None:
     """Name what is not understood; a word next to another unknown one joins it."""
     last = reader.problems[-1] if reader.problems else None
-    if isinstance(last, Unknown) and not reader.original[last.span[1]:start].strip(" ,;()"):
-        start = last.span[0]
+    span = reader.typed(start, end)
+    if isinstance(last, Unknown) and not reader.given[last.span[1]:span[0]].strip(" ,;()"):
+        span = last.span[0], span[1]
         reader.problems.pop()
-    reader.refuse(_not_understood(reader.original[start:end]), start, end)
+    reader.problems.append(_not_understood(reader.given[slice(*span)]).at(reader.side, span))
 
 
 class Unknown(NotUnderstood):

@@ -89,6 +89,17 @@ class MatrixGas:
 
 
 @dataclass(frozen=True)
+class Route:
+    """A way to something that was not stated itself: its kind and the quantities it was given with."""
+
+    id: str                            # dew_point, relative_humidity, collected, ...; gauge, static, altitude, sea_level
+    given: tuple[tuple[str, Quantity], ...]
+
+    def get(self, name: str) -> Quantity | None:
+        return dict(self.given).get(name)
+
+
+@dataclass(frozen=True)
 class Piece:
     """One understood part of a text: which field it sets, and the place it was read from."""
 
@@ -158,6 +169,8 @@ class Gas:
     pieces: tuple[Piece, ...] = ()
     ambiguities: tuple[Doubt, ...] = ()
     water_content: Quantity | None = None
+    water_route: Route | None = None      # where the water content comes from, when it is not stated in percent
+    cooler: Quantity | None = None        # temperature of the cooler before the analyser that read the held value
     oxygen: Quantity | None = None
     oxygen_water: str | None = None
     carbon_dioxide: Quantity | None = None
@@ -166,3 +179,6 @@ class Gas:
     matrix_gas: MatrixGas | None = None
     temperature: Quantity | None = None   # of the gas as it flowed
     pressure: Quantity | None = None
+    pressure_route: Route | None = None   # gauge or static: the difference from the barometer
+    barometer: Quantity | None = None
+    barometer_route: Route | None = None  # altitude, alone or with a sea-level pressure

@@ -5,7 +5,7 @@ import re
 from dataclasses import replace
 
 from gasbasis.errors import CoreError, NotUnderstood, OutOfRange
-from gasbasis.language import readers
+from gasbasis.language import gas_routes, readers
 from gasbasis.language.basis import Gas, MatrixGas, Quantity, Species
 from gasbasis.language.numbers import NUMBER, number_at
 from gasbasis.language.species import match_at
@@ -116,6 +116,6 @@ def _gas_word(reader) -> bool:
     return True
 
 
-_CLAUSES = (readers.late_spread, readers.coverage, _ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
+_CLAUSES = (readers.late_spread, readers.coverage, *gas_routes.CLAUSES, _ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
             _gas_word, readers.number_led)
 

@@ -24,7 +24,7 @@ def limit_direction(reader) -> bool:
         if found.group() in ("<", "<=", "=<", "≤") or re.match(r"less than\s", found.group() + " ", re.IGNORECASE):
             return False               # a value below detection
         reader.refuse(NotUnderstood(f"'{found.group()}' sets a limit; a value is stated here.",
-                                    hint="Put the clause in Limit, or leave the word out."), *found.span())
+                                    hint="Put the clause in Limit, or leave the word out; a value below detection is written '< 0.5'."), *found.span())
         reader.place = found.end()
         return True
     return False
@@ -56,6 +56,14 @@ def _second_bound(reader, direction: str, found: re.Match) -> bool:
     reader.fields.pop("limit_direction")
     ends = (first, second) if opposite == LOWER else (second, first)
     return _take_range(reader, *ends, start, end)
+
+
+def bound_by_sign(reader) -> None:
+    """ "O2 < 0.2 %" in a limit: the sign read with the number bounds it, it marks no detection limit."""
+    value = reader.fields.get("value")
+    if reader.side == "limit" and value is not None and value.number.below:
+        reader.fields["value"] = replace(value, number=replace(value.number, below=False))
+        reader.fields.setdefault("limit_direction", UPPER)
 
 
 def range_led(reader) -> bool:
@@ -92,6 +100,11 @@ def _take_range(reader, low: Quantity, high: Quantity, start: int, end: int) -> 
     if reader.side != "limit":
         _refuse_range(reader, start, end)
         reader.fields["unit"] = low.unit
+        return True
+    unsure = next((end.number for end in (low, high) if end.number.thousands is not None), None)
+    if unsure is not None:
+        reader.refuse(NotUnderstood(f"'{unsure.text}' is {unsure.decimal} or {unsure.thousands}.",
+                                    hint="In a range, write the ends without a sign that groups thousands."), start, end)
         return True
     if low.unit.kind != high.unit.kind:
         reader.refuse(NotUnderstood("The two ends of the range are in units that do not compare.", hint="Give both in one unit."), start, end)

@@ -40,6 +40,11 @@ FIELDS: Mapping[str, Field] = {
     "total_pressure": Field("total pressure", "The pressure of the whole gas, for a partial pressure.", "in 1013 hPa", numeric=True),
     "carbon_dioxide": Field("carbon dioxide", "The carbon dioxide of the gas, by volume.", "10.1 % CO2 dry", numeric=True),
     "carbon_dioxide_water": Field("carbon dioxide read", "Whether it was read in dry or in wet gas.", "10.1 % CO2 dry"),
+    "averaging": Field("averaging time", "The time the value stands for; it changes no figure and is kept as it was written.", "8-h TWA",
+                       ("8-h TWA", "daily mean", "hourly mean")),
+    "approximate": Field("about", "The number is given as about right only.", "approx."),
+    "limit_direction": Field("bounds", "Whether the value is the most or the least that is allowed.", "not more than", ("not more than", "at least")),
+    "second_value": Field("said again as", "The same limit in another unit, as it was printed beside it.", "(15 mg/m3)"),
     "coverage": Field("coverage factor", "The k of the stated expanded uncertainty.", "(k=2)", ("(k=1)", "(k=2)", "(k=3)")),
 }
 

@@ -3,7 +3,7 @@ from __future__ import annotations
 
 import re
 
-from gasbasis.errors import NotUnderstood
+from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.basis import Gas, Piece, Statement
 from gasbasis.language.describe import FIELDS
 from gasbasis.language.gas import read_gas
@@ -14,19 +14,22 @@ def edit(text: str, side: str, field: str, to: str) -> str:
     """The text with one piece replaced, added or (to = "") taken out. Raises NotUnderstood when it would not read so."""
     if field not in FIELDS:
         raise NotUnderstood(f"There is no piece '{field}'.", hint=f"Pieces: {', '.join(FIELDS)}.", field=side)
-    before = _read(text, side)
+    before, problems = _read(text, side)
     pieces = [piece for piece in before.pieces if piece.field == field]
     wanted = to.strip()
-    changed = _replaced(text, pieces, wanted, before) if pieces else _appended(text, wanted)
-    _verify(changed, side, field, wanted)
+    changed = _replaced(text, pieces, wanted) if pieces else _appended(text, wanted)
+    _verify(changed, side, field, wanted, len(problems))
     return changed
 
 
-def _read(text: str, side: str) -> Statement | Gas:
-    return read_gas(text)[0] if side == "gas" else read_statement(text, side)[0]
+def _read(text: str, side: str) -> tuple[Statement | Gas, tuple[CoreError, ...]]:
+    return read_gas(text) if side == "gas" else read_statement(text, side)
 
 
-def _replaced(text: str, pieces: list[Piece], wanted: str, record: Statement | Gas) -> str:
+def _replaced(text: str, pieces: list[Piece], wanted: str) -> str:
+    """The first piece makes room for what is wanted; where the same is said again, that is taken out."""
+    for piece in reversed(pieces[1:]):
+        text = _removed(text, *piece.span)
     start, end = pieces[0].span
     if not wanted:
         return _removed(text, start, end)
@@ -51,11 +54,14 @@ def _appended(text: str, wanted: str) -> str:
     return f"{text.rstrip()}, {wanted}" if text.strip() else wanted
 
 
-def _verify(text: str, side: str, field: str, wanted: str) -> None:
-    record = _read(text, side)
+def _verify(text: str, side: str, field: str, wanted: str, problems_before: int) -> None:
+    """The changed text has the piece, or has it no more, and nothing in it became unreadable."""
+    record, problems = _read(text, side)
     has = any(piece.field == field for piece in record.pieces)
     if bool(wanted) != has:
         title = FIELDS[field].title
         given = f"'{wanted}' does not read as {title}" if wanted else f"{title} cannot be taken out here"
         raise NotUnderstood(f"{given}.", hint=f"For example: {FIELDS[field].example}." if wanted else "Change it in the text line.",
                             field=f"{side}.{field}")
+    if wanted and len(problems) > problems_before:
+        raise NotUnderstood(problems[-1].message, hint=problems[-1].hint, field=f"{side}.{field}")

@@ -99,8 +99,8 @@ def read_statement(text: str, side: str) -> tuple[Statement, tuple[CoreError, ..
 
 # The readers in the order they are tried. What bounds a value is looked for before the value.
 STATEMENT: tuple[readers.Read, ...] = (
-    clauses.limit_direction, readers.late_spread, readers.named_share, readers.stated_molar_mass, readers.coverage, readers.reported_as,
-    readers.oxygen_meaning, readers.matrix_gas, clauses.averaging, clauses.range_led, clauses.second_value, readers.number_led,
+    clauses.averaging, clauses.limit_direction, readers.late_spread, readers.named_share, readers.stated_molar_mass, readers.coverage, readers.reported_as,
+    readers.oxygen_meaning, readers.matrix_gas, clauses.range_led, clauses.second_value, readers.number_led,
     readers.actual_volume, readers.water, readers.conditions_word, clauses.approximate, readers.parts_by, readers.unit_led, readers.species)
 
 
@@ -116,6 +116,7 @@ def conclude(reader: Reader) -> None:
         reader.fields["unit"] = reader.fields["value"].unit
     if reader.side == "limit" and reader.text.strip() and not reader.problems and not {"value", "pending"} & set(reader.fields):
         reader.refuse(NotUnderstood("There is no number in this limit.", hint="For example 'not more than 200 mg/m3'."), 0, len(reader.text))
+    clauses.bound_by_sign(reader)
     value = reader.fields.get("value")
     if value is not None and value.unit.kind == "parts" and "parts_by" not in reader.fields and value.unit.id == "%":
         measured = reader.fields.get("species")

@@ -65,16 +65,16 @@ MATRIX = (
 STATED_MOLAR_MASS = re.compile(r"(?:in\s(?:a\s)?gas\s(?:of|with)\s)?(?:M(?:_?gas)?|MW|molar mass|mol\.? wt\.?)\s?(?:=|of|:)?\s?(?=[\d.,])", re.IGNORECASE)
 # Which way a limit bounds. Words that mean something else elsewhere ("under normal conditions") count only before a number.
 _BEFORE_NUMBER = r"(?=\s*(?:about\s|approx\.?\s|~\s?)?[\d.,])"
-_SHALL = r"(?:(?:shall|must|should|may|is|are|to|can)\s)?(?:be\s)?"
+_SHALL = r"(?:(?:shall|must|should|may|is|are|to|can|does|do|will)\s)?(?:be\s)?"
 LIMIT_DIRECTION = (
     ("upper", re.compile(
-        rf"{_SHALL}(?:not (?:to )?(?:be )?(?:exceed(?:ed|ing)?|more than|above|higher than|greater than|over)|no(?:t)? (?:more|higher|greater) than|"
+        rf"{_SHALL}(?:not (?:to )?(?:be |contain )?(?:exceed(?:ed|ing)?|more than|above|higher than|greater than|over)|no(?:t)? (?:more|higher|greater) than|"
         rf"less than or equal to|at most|max(?:imum|\.)?|upper limit|or (?:less|lower|below)|{_SHALL}(?:below|under|less than|lower than|up to){_BEFORE_NUMBER})(?![A-Za-z0-9])"
-        r"|<=?|=<|≤", re.IGNORECASE)),
+        r"|<=?|=<|≤|≯", re.IGNORECASE)),
     ("lower", re.compile(
         rf"{_SHALL}(?:not (?:be )?(?:less than|below|lower than|under)|no(?:t)? (?:less|lower|fewer) than|greater than or equal to|at least|"
         rf"min(?:imum|\.)?|lower limit|or (?:more|higher|greater|above)|{_SHALL}(?:above|over|more than|greater than|higher than){_BEFORE_NUMBER})(?![A-Za-z0-9])"
-        r"|>=?|=>|≥", re.IGNORECASE)),
+        r"|>=?|=>|≥|≮", re.IGNORECASE)),
 )
 RANGE_OPENING = re.compile(r"(?:between|from|in the range(?: of)?)\s+", re.IGNORECASE)
 RANGE_SIGN = re.compile(r"\s?(?:-|\.\.\.?|…|\bto\b|\band\b|\bthrough\b)\s?", re.IGNORECASE)
@@ -90,6 +90,6 @@ APPROXIMATE = re.compile(r"(?:approx(?:\.|imately)?|about|around|circa|ca\.?)(?!
 NO_CONCENTRATION = re.compile(rf"{_MASS}(?![A-Za-z0-9/])")
 CONNECTOR = re.compile(
     r"\[\d{1,2}\]|(?:at|and|of|in|with|on|the|a|an|is|was|are|be|as|by|to|for|result|results|conc(?:entrations?|\.)?|value|reading|measured(?:\svalue)?|found|"
-    r"content|basis|gas|vol\.?|emissions?|slip|levels?|limit(?:\svalue)?|total|elemental|gaseous|sample|analyte|component|parameter|certified|nominal)(?![A-Za-z0-9])"
+    r"content|basis|gas|vol\.?|emissions?|slip|levels?|limit(?:\svalue)?|total|elemental|gaseous|sample|analyte|component|parameter|certified|nominal|(?:shall |must |may )?contains?)(?![A-Za-z0-9])"
     r"|[,;:()\[\]=*|/†‡#@.&+-]+", re.IGNORECASE)
 WORD = re.compile(r"[^\s,;()\[\]]+")

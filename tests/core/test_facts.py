@@ -298,7 +298,7 @@ RESTS_ON_MEMORY = {
     "constant": {"iso_2533_gas_constant", "iso_2533_molar_mass", "iso_2533_acceleration", "iso_2533_gradient", "iso_2533_temperature",
                  "iso_2533_pressure", "method_4_volume_per_millilitre", "method_4_volume_per_millilitre_customary",
                  "method_4_volume_per_gram", "method_4_volume_per_gram_customary", "method_5_meter", "method_5_meter_customary",
-                 "method_2_pitot", "method_2_pitot_customary", "part_98_molar_volume_60f"},
+                 "method_2_pitot", "method_2_pitot_customary", "part_98_molar_volume_60f", "density_of_water"},
     "ambient_oxygen": {"eu_21"},
     "species": {"C", "S", "SbH3", "xylene", "cresol"},
     "reference_conditions": {"us_stack_si", "us_stack_customary", "china_stack", "india_stack", "eu_ambient", "uk_workplace", "us_gas_api",

@@ -58,6 +58,9 @@ def make_case(hold: Statement, gas: Gas, owe: Statement, rule: RuleBook | None =
                 hint="Keep the one that was measured and delete the other.", field=f"gas.{name}")
         if given is None and said is not None:
             gas = replace(gas, **{name: said})
+    if gas.water_content is not None and gas.water_route is not None:
+        raise OutOfRange("The water content is given twice, in percent and by another way.", hint="Keep the one that was measured.",
+                         field="gas.water_content")
     if gas.ambient_oxygen is None and owe.ambient_oxygen is not None:
         gas = replace(gas, ambient_oxygen=owe.ambient_oxygen)
     if owe.oxygen is not None and owe.oxygen_meaning is None:

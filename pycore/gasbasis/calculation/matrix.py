@@ -5,8 +5,9 @@ from gasbasis import facts, relations
 from gasbasis.calculation import leaves
 from gasbasis.calculation.case import Case
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Shown, Step
+from gasbasis.calculation.water import residual_water, water_content
 from gasbasis.errors import Missing, OutOfRange
-from gasbasis.language.basis import WET, MatrixGas, Quantity
+from gasbasis.language.basis import DRY, WET, MatrixGas, Quantity
 from gasbasis.language.numbers import significant
 from gasbasis.language.species import find
 
@@ -28,19 +29,19 @@ def gas_molar_mass(draft: Drafting, case: Case, water: str | None) -> str:
     return _wetted(draft, case, dry) if water == WET and matrix.id != "stated" else dry
 
 
-def water_content(draft: Drafting, case: Case, why: str) -> str:
-    """The name of the water content of the gas. [mol/mol] Raises Missing, saying `why` it is needed."""
-    quantity = case.gas.water_content
-    if quantity is None:
-        raise Missing(f"Water content is needed {why}.",
-                      hint="Add it to the gas in percent, e.g. '12 % H2O'.", field="gas.water_content")
-    return leaves.from_quantity(draft, case, "h", quantity, "gas.water_content")
+def dry_gas_molar_mass(draft: Drafting, case: Case) -> str:
+    """The name of the molar mass of the dry gas. [kg/mol] Raises Missing."""
+    return gas_molar_mass(draft, case, DRY)
 
 
 def oxygen_dry(draft: Drafting, case: Case) -> str:
     """The name of the measured oxygen on dry gas. [mol/mol]"""
     quantity, water, field = measured_oxygen(case)
     name = leaves.from_quantity(draft, case, "O", quantity, field)
+    if water == DRY and case.gas.cooler is not None:
+        relation = relations.get("oxygen_dry_from_wet")
+        return draft.step(Step(relation, {"O_wet": name, "h": residual_water(draft, case)}, "O_dry", Shown(0.01, "%"),
+                               note="The analyser's gas still held the water of its cooler."))
     return name if water != WET else _dried(draft, case, "oxygen_dry_from_wet", "O_wet", name, "O_dry", "%", 0.01)
 
 

@@ -9,7 +9,7 @@ from __future__ import annotations
 from dataclasses import dataclass, replace
 
 from gasbasis import facts, relations
-from gasbasis.calculation import leaves, matrix, rules
+from gasbasis.calculation import leaves, matrix, pressure, rules, water
 from gasbasis.calculation.basis_words import basis_words, species_words, unit_words
 from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_CONCENTRATION, MASS_FRACTION,
                                        MASS_LIKE, PARTIAL_PRESSURE, UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor,
@@ -103,9 +103,11 @@ class _Laying:
             return leaves.ideal(draft, f"Z_{side}")
         statement = case.record(side)
         word = "temperature" if letter == "T" else "pressure"
+        if statement.actual_volume and word == "pressure":
+            return pressure.gas_pressure(draft, case, "for a volume as it flowed")
         quantity, field = getattr(statement, word), f"{side}.{word}"
         if statement.actual_volume:
-            quantity, field = getattr(case.gas, word), f"gas.{word}"
+            quantity, field = case.gas.temperature, "gas.temperature"
         if quantity is None:
             where = "the gas as it flowed" if statement.actual_volume else leaves.SIDE_TITLES[side]
             raise Missing(f"The {word} that the volume in {leaves.SIDE_TITLES[side]} is counted at is needed.",
@@ -115,8 +117,8 @@ class _Laying:
 
     def total_pressure(self, side: str) -> str:
         quantity, field = self.case.record(side).total_pressure, f"{side}.total_pressure"
-        if quantity is None:
-            quantity, field = self.case.gas.pressure, "gas.pressure"
+        if quantity is None and (self.case.gas.pressure or self.case.gas.pressure_route):
+            return pressure.gas_pressure(self.draft, self.case, "for a partial pressure")
         if quantity is None:
             raise Missing("A partial pressure needs the total pressure of the gas.",
                           hint="Add it, e.g. '15 Pa in 1013 hPa', or give the gas its pressure.",
@@ -210,7 +212,7 @@ class _Laying:
             return
         relation = relations.get("dry_from_wet" if owed == DRY else "wet_from_dry")
         why = "to go from wet to dry" if owed == DRY else "to go from dry to wet"
-        arguments = {"y": here.name, "h": matrix.water_content(self.draft, self.case, why)}
+        arguments = {"y": here.name, "h": water.water_content(self.draft, self.case, why)}
         self.move(relation, arguments, "y", self.step_shown(), "wet to dry" if owed == DRY else "dry to wet", water=owed)
 
     def to_oxygen(self) -> None:
@@ -313,7 +315,15 @@ class _Laying:
             self.to_kind(AMOUNT_FRACTION)
             self.to_kind(PARTIAL_PRESSURE)
 
+    def behind_cooler(self) -> None:
+        """A value read dry behind a cooler was read in gas that still held the cooler's water."""
+        if self.case.gas.cooler is None or self.place.water != DRY or not self.case.hold.water:
+            return
+        relation = relations.get("dry_from_wet")
+        self.move(relation, {"y": self.place.name, "h": water.residual_water(self.draft, self.case)}, "y", self.step_shown(), "water left by the cooler")
+
     def to_bases(self) -> None:
+        self.behind_cooler()
         self.to_oxygen()
         self.to_water(self.case.owe.water)
 

@@ -39,6 +39,8 @@ def _step_record(path: Path, step: Step, known: dict, shown: dict[str, Shown], n
             text, unit_text = _number(known[name], shown[name]), shown[name].unit_text
             origin, origin_text = "step", f"from step {numbers[name]}"
         substitutes[argument] = (text, unit_text)
+        if symbol.meaning.startswith("coefficient"):
+            continue                   # an equation's own numbers stand in the formula; its source is the step's
         inputs.append({"symbol": ["symbol", symbol.letter, symbol.mark], "meaning": symbol.meaning,
                        "text": f"{text} {unit_text}".strip(), "origin": origin, "origin_text": origin_text})
     factor = _factor(path, step, known, shown)

@@ -33,6 +33,8 @@ UNITS: Mapping[str, frozenset[str]] = {       # kind -> the units a number of th
     "temperature_gradient": frozenset({"K/m", "K/km"}),
     "mass_concentration_per_part": frozenset({"lb/scf per ppm", "lb m3/(ug ft3)"}),
     "pitot": frozenset({"m/s (g/mol mmHg/(K mmH2O))^0.5", "ft/s (lb/lbmol inHg/(degR inH2O))^0.5"}),
+    "density": frozenset({"g/mL", "kg/m3"}),
+    "psychrometer": frozenset({"1/K"}),
     "water_vapour_volume": frozenset({"m3/mL", "m3/g", "ft3/mL", "ft3/g"}),
     "temperature_per_pressure": frozenset({"K/mmHg", "degR/inHg"}),
 }

@@ -28,6 +28,11 @@ FIELDS: Mapping[str, Field] = {
     "actual_volume": Field("volume", "The volume as it was in the duct or line, at the gas's own temperature and pressure.", "actual"),
     "water": Field("water", "Whether the value counts the water vapour in the gas (wet) or not (dry).", "dry", ("dry", "wet")),
     "water_content": Field("water content", "The share of water vapour in the wet gas, by volume.", "12 % H2O", numeric=True),
+    "water_route": Field("water content from", "A dew point, a humidity, wet and dry bulb, water collected, or water per dry gas.", "dew point 45 °C"),
+    "cooler": Field("cooler", "The temperature of the cooler before the analyser: so much water was still in the gas it read.", "cooler 4 °C"),
+    "pressure_route": Field("gauge or static", "The difference from the barometer; it may be negative.", "static -12 mmH2O"),
+    "barometer": Field("barometer", "The pressure at the station, not reduced to sea level.", "barometer 1008 hPa"),
+    "barometer_route": Field("barometer from", "An altitude, alone or with a sea-level pressure from a weather report.", "altitude 420 m"),
     "oxygen": Field("oxygen it is stated at", "The oxygen the value was measured at or is referred to.", "11 % O2",
                     ("3 % O2", "6 % O2", "7 % O2", "11 % O2", "15 % O2"), numeric=True),
     "oxygen_meaning": Field("that oxygen is", "Measured in the gas, or the reference the value was corrected to.", "corrected to 11 % O2"),
@@ -51,7 +56,8 @@ FIELDS: Mapping[str, Field] = {
 # Which pieces can be added to which side, in the order they are offered.
 ADDABLE: Mapping[str, tuple[str, ...]] = {
     "hold": ("species", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as", "matrix_gas"),
-    "gas": ("water_content", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure"),
+    "gas": ("water_content", "water_route", "cooler", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure", "pressure_route",
+            "barometer", "barometer_route"),
     "owe": ("unit", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as"),
     "limit": ("value", "temperature", "pressure", "water", "oxygen"),
 }

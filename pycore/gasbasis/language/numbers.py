@@ -13,8 +13,9 @@ from gasbasis.language.basis import Number, Uncertainty
 from gasbasis.language.normalise import normalise
 
 _DIGITS = r"(?:\d{1,3}(?:[ '][0-9]{3})+(?:[.,]\d+)?|\d{1,3}(?:[.,]\d{3}){2,}(?:[.,]\d+)?|\d{1,3}(?:,\d{3})+\.\d+|\d{1,3}(?:\.\d{3})+,\d+|\d+(?:[.,]\d+)?|[.,]\d+)"
-_POWER = r"(?:[eE][+-]?\d+(?![\dA-Za-z])|\s?[x·*]\s?10\s?\^?\s?\(?[+⁺⁻-]?\d+\)?)"
-PLAIN = rf"[+-]?(?:10(?:\^[+-]?|⁻)\d+|{_DIGITS}{_POWER}?)(?![\d])"
+# Powers of two digits at most: what lies beyond is no measured number and would leave the floats.
+_POWER = r"(?:[eE][+-]?\d{1,2}(?![\dA-Za-z])|\s?[x·*]\s?10\s?\^?\s?\(?[+⁺⁻-]?\d{1,2}\)?)"
+PLAIN = rf"[+-]?(?:10(?:\^[+-]?|⁻)\d{{1,2}}|{_DIGITS}{_POWER}?)(?![\d])"
 _BELOW = r"(?:<=?|≤|less than\s)"
 NUMBER = re.compile(rf"(?P<below>{_BELOW}\s*)?(?P<plain>{PLAIN})", re.IGNORECASE)
 PLUS_MINUS = re.compile(rf"(?:±|\+\s?/\s?-|\+-)\s*(?P<amount>{PLAIN})(?P<percent>\s*%)?")

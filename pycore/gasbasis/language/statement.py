@@ -140,14 +140,18 @@ def _rename(reader: Reader, field: str, to: str) -> None:
 
 
 def refuse_text(text: str, side: str) -> CoreError | None:
-    """A text that is too long, or holds control characters, is not read at all."""
+    """A text that is too long, or holds control characters, halves of characters or endless numbers, is not read at all."""
     if len(text) > LONGEST:
         return NotUnderstood(f"The text has {len(text):,} characters; {LONGEST:,} can be read.".replace(",", " "),
                              hint="Paste one statement, not a whole document.", field=side)
     for place, character in enumerate(text):
-        if ord(character) < 32 and character not in "\n\r\t" or character == "\x7f":
+        if ord(character) < 32 and character not in "\n\r\t" or character == "\x7f" or "\ud800" <= character <= "\udfff":
             return NotUnderstood(f"The text holds a control character at place {place + 1}.",
                                  hint="Type it anew, or paste it as plain text.", field=side, span=(place, place + 1))
+    endless = re.search(r"\d{40,}", text)
+    if endless is not None:
+        return NotUnderstood(f"A number of {len(endless.group())} digits is no measured number.", hint="Shorten it, or write it with a power of ten.",
+                             field=side, span=endless.span())
     return None
 
 

@@ -4,14 +4,15 @@ from __future__ import annotations
 from types import MappingProxyType
 from typing import Mapping
 
-from gasbasis.relations import bases, gas_law, molar_mass
+from gasbasis.relations import bases, compression, gas_law, humidity, molar_mass, pressure, saturation
+from gasbasis.relations.compression import summation_factor_of_mixture
 from gasbasis.relations.molar_mass import molar_mass_of_mixture
 from gasbasis.relations.relation import Relation
 
-__all__ = ["get", "every", "molar_mass_of_mixture", "Relation"]
+__all__ = ["get", "every", "molar_mass_of_mixture", "summation_factor_of_mixture", "Relation"]
 
 _REGISTER: Mapping[str, Relation] = MappingProxyType(
-    {relation.id: relation for room in (gas_law, bases, molar_mass) for relation in room.RELATIONS})
+    {relation.id: relation for room in (gas_law, bases, molar_mass, saturation, humidity, pressure, compression) for relation in room.RELATIONS})
 
 
 def get(relation_id: str) -> Relation:

@@ -12,7 +12,8 @@ from gasbasis.relations.relation import Relation
 __all__ = ["get", "every", "molar_mass_of_mixture", "summation_factor_of_mixture", "Relation"]
 
 _REGISTER: Mapping[str, Relation] = MappingProxyType(
-    {relation.id: relation for room in (gas_law, bases, molar_mass, saturation, humidity, pressure, compression) for relation in room.RELATIONS})
+    {relation.id: relation for room in (gas_law, bases, molar_mass, saturation, humidity, pressure, compression)
+     for relation in room.RELATIONS})
 
 
 def get(relation_id: str) -> Relation:

@@ -111,8 +111,14 @@ def _combustion_gas(draft: Drafting, case: Case, matrix: MatrixGas) -> str:
     name = leaves.from_quantity(draft, case, "CO2", case.gas.carbon_dioxide, "gas.carbon_dioxide")
     if case.gas.carbon_dioxide_water == WET:
         name = _dried(draft, case, "oxygen_dry_from_wet", "O_wet", name, "CO2_dry", "%", 0.01)
-    return draft.step(Step(relations.get("molar_mass_of_combustion_gas"), {"O2": oxygen, "CO2": name},
-                           "M_gas", _GRAM_PER_MOLE))
+    rounded = {f"M_{gas}": _method_3(draft, gas) for gas in ("O2", "CO2", "N2")}
+    return draft.step(Step(relations.get("molar_mass_of_combustion_gas"), {"O2": oxygen, "CO2": name, **rounded}, "M_gas", _GRAM_PER_MOLE))
+
+
+def _method_3(draft: Drafting, gas: str) -> str:
+    datum = facts.constant(f"method_3_{gas}")
+    return draft.leaf(Leaf(f"M_{gas}_rounded", float(datum.number) * 1e-3, datum.text, datum.unit, TABLE,
+                           f"{facts.source(datum.source).title}, {datum.locator}"))
 
 
 _MOLAR_MASS = {"nitrogen": _nitrogen, "dry_air": _dry_air, "stated": _stated, "composition": _composition,

@@ -206,9 +206,15 @@ def ambiguities(record, side: str) -> tuple[Doubt, ...]:
     doubts = []
     for field in ("value", "water_content", "oxygen", "carbon_dioxide"):
         quantity = getattr(record, field, None)
-        if quantity is not None and quantity.number.thousands is not None:
+        if quantity is not None and quantity.number.thousands is not None and not _beyond_the_whole(quantity):
             doubts.append(_number_doubt(quantity, field, side))
     return tuple(doubts)
+
+
+def _beyond_the_whole(quantity: Quantity) -> bool:
+    """ "20.946 %" cannot mean 20946 %: a fraction ends at one."""
+    fraction = quantity.unit.kind in ("parts", "amount_fraction", "mass_fraction")
+    return fraction and float(quantity.number.thousands) * quantity.unit.factor > 1.0
 
 
 def _number_doubt(quantity: Quantity, field: str, side: str) -> Doubt:

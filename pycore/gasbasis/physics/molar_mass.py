@@ -12,9 +12,9 @@ def molar_mass_of_wet_gas(M_dry, h, M_water):
     return M_dry * (1 - h) + M_water * h
 
 
-def molar_mass_of_combustion_gas(O2, CO2):
-    """Dry molar mass of a combustion gas, 0.320 O2 + 0.440 CO2 + 0.280 (N2 + CO) in percent; argon is left out. [kg/mol]"""
-    return (32.0 * O2 + 44.0 * CO2 + 28.0 * (1 - O2 - CO2)) / 1000
+def molar_mass_of_combustion_gas(O2, CO2, M_O2, M_CO2, M_N2):
+    """Dry molar mass of a combustion gas; the rest counts as nitrogen and argon is left out. [kg/mol]"""
+    return M_O2 * O2 + M_CO2 * CO2 + M_N2 * (1 - O2 - CO2)
 
 
 def relative_density(M_gas, M_air):

@@ -19,7 +19,9 @@ RELATIONS = (
              {"M_dry": _DRY, "h": WATER, "M_water": _WATER_MASS}, "us-epa-method-4", "", (WATER_BOUND, _POSITIVE)),
     Relation("molar_mass_of_combustion_gas", "Molar mass of the dry combustion gas", molar_mass.molar_mass_of_combustion_gas, _DRY,
              {"O2": Symbol("O₂", "", "1", "oxygen of the dry gas", "dimensionless"),
-              "CO2": Symbol("CO₂", "", "1", "carbon dioxide of the dry gas", "dimensionless")},
+              "CO2": Symbol("CO₂", "", "1", "carbon dioxide of the dry gas", "dimensionless"),
+              **{f"M_{gas}": marked(GAS_MOLAR_MASS, gas.replace("2", "₂"), f"molar mass of {name}, as the method rounds it")
+                 for gas, name in (("O2", "oxygen"), ("CO2", "carbon dioxide"), ("N2", "nitrogen and carbon monoxide"))}},
              "us-epa-method-3", "eq. 3-1",
              (Bound("O2", *_SHARE, low=0.0, high=1.0, low_allowed=True), Bound("CO2", *_SHARE, low=0.0, high=1.0, low_allowed=True)),
              "A convention of the method: the rest counts as nitrogen, argon is left out."),

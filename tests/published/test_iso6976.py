@@ -1,0 +1,30 @@
+"""ISO 6976:2016, Annex D example 1 (read in a transcription): molar mass and compression factor."""
+from __future__ import annotations
+
+import pytest
+
+from gasbasis import facts, relations
+
+FIRST = {"CH4": 0.933212, "C2H6": 0.025656, "C3H8": 0.015368, "N2": 0.010350, "CO2": 0.015414}
+
+
+def of(composition: dict[str, float], temperature: str) -> tuple[float, float]:
+    rows = {row["species"]: row for row in facts.table("iso6976_2016")["components"]}
+    values, masses = {}, {}
+    for index, (species, share) in enumerate(composition.items(), start=1):
+        values |= {f"x_{index}": share, f"s_{index}": float(rows[species]["s"][temperature])}
+        masses |= {f"x_{index}": share, f"M_{index}": float(rows[species]["molar_mass"])}
+    s = relations.summation_factor_of_mixture(len(composition)).value(**values)
+    Z = relations.get("compression_factor").value(p=101325.0, p_0=101325.0, s=s)
+    return relations.molar_mass_of_mixture(len(composition)).value(**masses), Z
+
+
+def test_example_one_to_every_digit() -> None:
+    M, Z = of(FIRST, "15")
+    assert M == pytest.approx(17.3884301, abs=0.5e-7)
+    assert Z == pytest.approx(0.99776224, abs=0.5e-8)
+
+
+def test_methane_at_zero_and_fifteen() -> None:
+    assert of({"CH4": 1.0}, "15")[1] == pytest.approx(0.99802, abs=0.5e-5)
+    assert of({"CH4": 1.0}, "0")[1] == pytest.approx(0.997613, abs=0.5e-6)

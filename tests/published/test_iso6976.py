@@ -1,9 +1,10 @@
-"""ISO 6976:2016, Annex D example 1 (read in a transcription): molar mass and compression factor."""
+"""ISO 6976:2016, Annex D examples 1 and 2 (read in a transcription): molar mass and compression factor."""
 from __future__ import annotations
 
 import pytest
 
 from gasbasis import facts, relations
+from gasbasis.errors import OutOfRange
 
 FIRST = {"CH4": 0.933212, "C2H6": 0.025656, "C3H8": 0.015368, "N2": 0.010350, "CO2": 0.015414}
 
@@ -28,3 +29,24 @@ def test_example_one_to_every_digit() -> None:
 def test_methane_at_zero_and_fifteen() -> None:
     assert of({"CH4": 1.0}, "15")[1] == pytest.approx(0.99802, abs=0.5e-5)
     assert of({"CH4": 1.0}, "0")[1] == pytest.approx(0.997613, abs=0.5e-6)
+
+
+# Annex D example 2, with water, 15.55 degC
+SECOND = {"CH4": 0.931819, "C2H6": 0.025618, "H2O": 0.016837, "N2": 0.010335, "CO2": 0.015391}
+
+
+def test_example_two_to_every_digit_of_the_transcription() -> None:
+    """The molar mass is as printed. The transcriber gets 0.9975690 with these factors, as we do, and notes the standard prints a Z
+    1.78e-5 away; that Z is disputed and no check here."""
+    M, Z = of(SECOND, "15.55")
+    assert M == pytest.approx(16.9891697, abs=0.5e-7)
+    assert Z == pytest.approx(0.9975690, abs=0.5e-7)
+
+
+def test_the_compression_factor_follows_the_pressure_near_the_tables() -> None:
+    # by hand from the methane factor at 15 degC, 0.04452: 1 - 100/101.325 x 0.04452^2 = 0.998044
+    Z = relations.get("compression_factor")
+    assert Z.value(p=100e3, p_0=101325.0, s=0.04452) == pytest.approx(0.998044, abs=0.5e-6)
+    for outside in (89e3, 111e3):
+        with pytest.raises(OutOfRange, match="90 kPa to 110 kPa"):
+            Z.value(p=outside, p_0=101325.0, s=0.04452)

@@ -223,6 +223,8 @@ ROWS: list[tuple[str, dict]] = [
     ("approx.10 ppm H2S", dict(species="H2S", value="10", unit="ppm", approximate=True)),
     ("SO2   35\t mg/m3\r\n dry", dict(species="SO2", value="35", unit="mg/m3", water="dry")),
     ("methyl mer-\ncaptan 2 ppm", dict(species="CH3SH", value="2", unit="ppm")),
+    ("72 mg/m3 n-hexane", dict(species="n-hexane", value="72", unit="mg/m3")),
+    ("20 mg/m3 S", dict(species="S", value="20", unit="mg/m3")),
     ("n-\nhexane 2 ppm", dict(species="n-hexane", value="2", unit="ppm")),
 ]
 

@@ -117,6 +117,7 @@ def _score(wanted: str, name: str, matcher: SequenceMatcher) -> float:
     return matcher.ratio() if matcher.quick_ratio() >= _ALIKE else 0.0
 
 
+_LONGEST_NAME = 60                     # characters; more are not searched for a name or formula
 _NAME = re.compile(r"[A-Za-z0-9()\-,']+(?: [A-Za-z0-9()\-]+){0,3}")
 
 
@@ -125,14 +126,20 @@ def match_at(text: str, place: int) -> tuple[Species, int] | None:
     found = _NAME.match(text, place)
     if found is None:
         return None
-    candidate = found.group().rstrip("-,'")
+    candidate = found.group()[:_LONGEST_NAME].rstrip("-,'")
     while candidate:
         species = known(candidate) or (_formula(candidate) if " " not in candidate else None)
         if species is not None:
             return species, place + len(candidate)
-        shorter = re.sub(r"(?:[ ,][^ ,]*|[-)(']+)$", "", candidate)
-        candidate = shorter if shorter != candidate else ""
+        candidate = _shorter(candidate)
     return None
+
+
+def _shorter(candidate: str) -> str:
+    """Without its last word, or without the brackets behind its only word; empty when nothing is left to try."""
+    cut = max(candidate.rfind(" "), candidate.rfind(","))
+    shorter = candidate[:cut] if cut >= 0 else candidate.rstrip("-)('")
+    return shorter if shorter != candidate else ""
 
 
 def _formula(text: str) -> Species | None:

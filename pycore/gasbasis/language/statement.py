@@ -16,6 +16,8 @@ from gasbasis.language.species import find, search
 from gasbasis.language.tokens import CONNECTOR, WORD
 
 LONGEST = 2000                         # characters
+_GUESSED = 5                           # unknown words for which a species is searched; a pasted paragraph has many
+_NO_WORD = "'{}' is not understood."
 _COMMON = "common practice, no source"
 _UNDERSTOOD = ("Understood are: a species or formula, a number with a unit, a temperature and pressure, wet or dry, "
                "'at 11 % O2', 'as NO2', 'by volume', 'in nitrogen'.")
@@ -33,6 +35,7 @@ class Reader:
         self.original, self._kept = gathered(text)
         self.text = normalise(self.original)
         self.place = 0
+        self.unknown = 0               # words not understood so far
         self.fields: dict[str, object] = {}
         self.pieces: list[Piece] = []
         self.problems: list[CoreError] = []
@@ -183,7 +186,9 @@ def _leave(reader: Reader, start: int, end: int) -> None:
     if isinstance(last, Unknown) and not reader.given[last.span[1]:span[0]].strip(" ,;()"):
         span = last.span[0], span[1]
         reader.problems.pop()
-    reader.problems.append(_not_understood(reader.given[slice(*span)]).at(reader.side, span))
+    reader.unknown += 1
+    word = reader.given[slice(*span)]
+    reader.problems.append((_not_understood(word) if reader.unknown <= _GUESSED else Unknown(_NO_WORD.format(word[:60]), hint=_UNDERSTOOD)).at(reader.side, span))
 
 
 class Unknown(NotUnderstood):
@@ -198,7 +203,7 @@ def _not_understood(word: str) -> NotUnderstood:
             return error
     near = search(word)[:3] if len(word) > 2 else []
     hint = f"Did you mean {', '.join(entry['name'] for entry in near)}? " if near else ""
-    return Unknown(f"'{word[:60]}' is not understood.", hint=hint + _UNDERSTOOD)
+    return Unknown(_NO_WORD.format(word[:60]), hint=hint + _UNDERSTOOD)
 
 
 def ambiguities(record, side: str) -> tuple[Doubt, ...]:

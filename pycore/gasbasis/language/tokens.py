@@ -14,7 +14,7 @@ _CALLED = r"(?:(?:dry|wet) std\.?|(?:dry|wet) standard|standard|normal|actual|st
 
 MASS_PER_VOLUME = re.compile(
     rf"(?P<mass>{_MASS})(?:\s?(?P<entity>[A-Z][A-Za-z0-9]*))?\s?(?:/|\bper\b)\s?(?P<count>{_COUNT})?\s?(?P<called>{_CALLED})?[ .]?"
-    rf"(?P<volume>{_CUBIC})(?P<behind>[ ]?\(?(?:N|n|stp|STP|S)\b\)?)?(?![A-Za-z0-9])")
+    rf"(?P<volume>{_CUBIC})(?P<behind>[ ]?\((?:N|n|stp|STP|S)\)|[ ]?(?:N|n|stp|STP)(?![\w-])|S(?![\w-]))?(?![A-Za-z0-9])")
 AMOUNT_PER_VOLUME = re.compile(rf"(?P<amount>{_AMOUNT})\s?(?:/|\bper\b)\s?(?P<called>N|S|n|s)?(?P<volume>{_CUBIC})(?![A-Za-z0-9])")
 # "mg m-3", "µg·m⁻³", "nmol mol⁻¹"
 POWER_NOTATION = re.compile(rf"(?P<top>{_MASS}|{_AMOUNT})[ ·.*]{{0,2}}(?P<bottom>m|L|l|mol|kg|dm|cm)(?:\^?-|⁻)(?P<power>[13])(?![A-Za-z0-9])")

@@ -7,7 +7,7 @@ from gasbasis import facts
 from gasbasis.calculation.case import Case
 from gasbasis.calculation.input_uncertainty import degrees_of_freedom, distribution, standard_uncertainty
 from gasbasis.calculation.path import CONVENTION, READING, TABLE, TYPED, Drafting, Leaf
-from gasbasis.errors import Missing
+from gasbasis.errors import Missing, OutOfRange
 from gasbasis.language.basis import Quantity, Species
 from gasbasis.language.numbers import significant
 from gasbasis.language.species import molar_mass

@@ -81,7 +81,7 @@ def _headline(found: Judged, below: bool) -> dict:
     if found.chosen and found.problems:
         return {"words": "not decided", "shape": "open", "sentence": next(iter(found.problems.values())).message}
     if len(words) == 1:
-        sure = "whatever was meant" if found.spread_open else "" if found.chosen else "under every decision rule"
+        sure = "whatever was meant" if found.spread_open else "" if found.chosen else "under every decision rule that could be applied"
         place = " the limit" if words[0] in (WITHIN, ABOVE, BELOW) else ""
         return {"words": words[0], "shape": _shape(words[0]), "sentence": f"{words[0]}{place} {sure}".strip()}
     depends = ([] if found.chosen else ["decision rule"]) + (["the open doubts"] if found.spread_open else [])

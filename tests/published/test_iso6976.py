@@ -50,3 +50,13 @@ def test_the_compression_factor_follows_the_pressure_near_the_tables() -> None:
     for outside in (89e3, 111e3):
         with pytest.raises(OutOfRange, match="90 kPa to 110 kPa"):
             Z.value(p=outside, p_0=101325.0, s=0.04452)
+
+
+@pytest.mark.parametrize(("temperature", "M", "Z", "kilograms", "within", "source"), [
+    (273.15, 28.9626, 0.99941, 1.292923, 0.0001, "dry air, ISO 6976:1995 (from memory), with that edition's M and Z"),
+    (288.15, 28.9626, 0.99958, 1.225410, 0.0001, "dry air, ISO 6976:1995 (from memory), with that edition's M and Z"),
+    (288.15, 17.3884301, 0.99776224, 0.737050, 0.0000005, "Annex D example 1, recomputed by the compilers of the checks"),
+])
+def test_density(temperature: float, M: float, Z: float, kilograms: float, within: float, source: str) -> None:
+    R = float(facts.constant("molar_gas_constant_iso_6976").number)
+    assert relations.get("density").value(p=101325.0, M_gas=M * 1e-3, Z=Z, R=R, T=temperature) == pytest.approx(kilograms, abs=within), source

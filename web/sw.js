@@ -35,7 +35,7 @@ self.addEventListener("fetch", (event) => {
   }
   if (event.request.method !== "GET") return;
   const asset = BY_PATH.get(pathOf(address));
-  if (asset) event.respondWith(answer(asset));
+  if (asset) event.respondWith(answer(asset, event.request));
 });
 
 /** The path below the scope; the scope itself is the page. @param {URL} address */
@@ -47,10 +47,13 @@ function pathOf(address) {
 /** @param {{path: string}} asset */
 const keyOf = (asset) => new URL(asset.path, SCOPE).href;
 
-/** From the copy of this version only; fetched again, and verified, if the browser has dropped it. */
-async function answer(asset) {
+/**
+ * From the copy of this version only. A file that the browser has dropped is fetched again and verified; when the
+ * host has only a newer one, that is better than no page: the update will make the version whole.
+ */
+async function answer(asset, request) {
   const kept = await (await caches.open(CURRENT)).match(keyOf(asset));
-  return kept ?? fetchVerified(asset);
+  return kept ?? fetchVerified(asset).catch(() => fetch(request));
 }
 
 /** Keep and verify every file. Reports as it goes; throws, and says why, when one cannot be had. */

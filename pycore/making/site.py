@@ -3,6 +3,7 @@ from __future__ import annotations
 
 import hashlib
 import json
+import re
 import shutil
 from pathlib import Path
 
@@ -16,6 +17,8 @@ from making.steps import BuildFailed
 ENGINE = ("pyodide.mjs", "pyodide.asm.mjs", "pyodide.asm.wasm")
 HEAD = '<meta charset="utf-8">'
 NOT_COPIED = ("sw.js",)
+ENTRY = "js/main.js"
+IMPORT = re.compile(r"""^\s*(?:import|export)\b[^;"']*?["'](\.{1,2}/[^"']+)["']""", re.MULTILINE)
 
 
 def build_site(runtime: Runtime, places: Places) -> Path:
@@ -41,7 +44,22 @@ def _write_page(site: Path) -> None:
     if text.count(HEAD) != 1:
         raise BuildFailed(f"web/index.html must hold {HEAD} once: the policy is put behind it.")
     policy = f'{HEAD}\n<meta http-equiv="Content-Security-Policy" content="{POLICY}">'
-    page.write_text(text.replace(HEAD, policy), encoding="utf-8")
+    preloads = "".join(f'<link rel="modulepreload" href="{name}">\n' for name in _modules(site, ENTRY))
+    text = text.replace(HEAD, policy).replace("</head>", f"{preloads}</head>")
+    page.write_text(text, encoding="utf-8")
+
+
+def _modules(site: Path, entry: str) -> list[str]:
+    """The modules that the entry imports, directly or not: named in the page they are fetched at once, not level by level."""
+    found, waiting = set(), [entry]
+    while waiting:
+        path = site / waiting.pop()
+        for address in IMPORT.findall(path.read_text(encoding="utf-8")):
+            name = (path.parent / address).resolve().relative_to(site.resolve()).as_posix()
+            if name not in found:
+                found.add(name)
+                waiting.append(name)
+    return sorted(found)
 
 
 def _write_examples(folder: Path) -> None:

@@ -25,12 +25,15 @@ class Addresses(HTMLParser):
         super().__init__()
         self.found: list[str] = []
         self.policies: list[str] = []
+        self.preloaded: list[str] = []
         self.order: list[str] = []
 
     def handle_starttag(self, tag, attributes):
         values = dict(attributes)
         self.order.append(tag)
         self.found += [values[name] for name in ("src", "href", "action") if values.get(name)]
+        if values.get("rel") == "modulepreload":
+            self.preloaded.append(values["href"])
         if values.get("http-equiv") == "Content-Security-Policy":
             self.policies.append(values["content"])
             assert "script" not in self.order and "link" not in self.order, "the policy must come before what it governs"
@@ -65,6 +68,12 @@ def test_modules_and_styles_import_by_relative_address(dist):
     assert len(imports) > 2
     assert [address for _, address in imports if not address.startswith(("./", "../"))] == []
     assert [(path.name, address) for path, address in imports if not (path.parent / address).is_file()] == []
+
+
+def test_every_module_of_the_page_is_fetched_at_once(dist, html):
+    """Named in the head, not found level by level; a module that nothing imports would be missing here."""
+    modules = {path.relative_to(dist).as_posix() for path in dist.glob("js/**/*.js")} - {"js/main.js", "js/core-worker.js"}
+    assert set(html.preloaded) == modules and len(modules) > 10
 
 
 def test_policy_in_the_page_is_that_of_the_server(html):

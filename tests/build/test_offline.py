@@ -129,6 +129,19 @@ def test_a_file_that_the_browser_dropped_is_fetched_again(served_under, open_pag
         return Boolean(await (await caches.open(name)).match(new URL("js/main.js", document.baseURI).href)); })()""")
 
 
+def test_a_dropped_page_that_the_host_has_only_newer_still_opens(copy_of_dist, served_under, open_page):
+    address, _ = served_under(folder=copy_of_dist)
+    page = open_page(quiet=False, **ALLOWED)
+    page.goto(address)
+    kept(page)
+    page.evaluate("""async () => { for (const name of await caches.keys()) {
+        await (await caches.open(name)).delete(new URL("index.html", document.baseURI).href); } }""")
+    html = copy_of_dist / "index.html"
+    html.write_text(html.read_text().replace("<title>gasbasis</title>", "<title>gasbasis, later</title>"))
+    page.reload()
+    assert page.title() == "gasbasis, later"
+
+
 def test_two_copies_on_one_origin_keep_apart(served_under, open_page, copy_of_dist, tmp_path):
     """/x/ and /y/ of the same host: deleting older copies of one leaves the other's alone."""
     both = tmp_path / "both"

@@ -154,3 +154,23 @@ def test_a_rule_that_needs_a_number_asks_for_it(sheet):
     number.fill("20")
     number.press("Tab")
     expect(page.locator('#figure [data-part="verdict"]')).to_contain_text("within the limit")
+
+
+def test_a_clause_alone_is_challenged(sheet):
+    page = sheet.page
+    sheet.line("limit").fill("not more than 10 ppb mercury")
+    sheet.line("owe").fill("ug/m3 at 20 °C, 1 atm")
+    expect(page.locator("#figure-title")).to_contain_text("What the clause could mean")
+    expect(sheet.sentence).to_contain_text("parts by")
+    page.locator("#doubts .reading", has_text="by volume").click()
+    expect(sheet.value).to_have_text("83.39 µg/m³")
+
+
+def test_the_distribution_is_drawn_and_can_be_stopped(sheet):
+    page = sheet.write(**LIMIT).page
+    page.get_by_role("button", name="Check by drawing").click()
+    page.get_by_role("button", name="Stop").click()
+    expect(sheet.value).to_have_text("444 ± 19 mg/m³")
+    page.get_by_role("button", name="Check by drawing").click()
+    expect(page.locator('#budget [data-part="drawn-text"]')).to_contain_text("200000 draws")
+    assert page.locator("#budget .histogram rect").count() == 40

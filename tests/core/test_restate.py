@@ -230,3 +230,30 @@ def test_too_many_combinations_are_tried_one_at_a_time_and_said_so() -> None:
     assert not quick["complete"] and whole["complete"] and quick["counted"] < whole["counted"] <= 4096
     assert whole["low"]["value"] <= quick["low"]["value"] <= whole["low"]["value"] * 1.2
     assert whole["high"]["value"] >= quick["high"]["value"] >= whole["high"]["value"] / 1.2
+
+
+# --- challenge a clause: a limit with nothing held ---
+
+def clause(limit: str, owe: str, **settled: str) -> dict:
+    choices = {name.replace("__", "."): reading for name, reading in settled.items()}
+    reply = json.loads(answer(json.dumps({"task": "restate", "sheet": {"limit": limit, "owe": owe, "settled": choices}})))
+    assert reply["ok"], reply
+    return reply["answer"]
+
+
+def test_a_clause_shows_all_it_could_mean() -> None:
+    # 10 ppb of mercury at 20 degC and 1 atm: 83.4 by volume, 11.6 by mass in nitrogen, 10 000 mass in volume (common practice)
+    result = clause("not more than 10 ppb mercury", "ug/m3 at 20 °C, 1 atm")
+    assert result["challenge"] and result["sentence"].startswith("depends on: parts by")
+    doubt = next(doubt for doubt in result["doubts"] if doubt["id"] == "limit.parts_by")
+    assert "Limit" in doubt["question"]
+    low = {reading["id"]: reading["figure"]["low"] for reading in doubt["readings"]}
+    assert low["volume"] == pytest.approx(83.4, abs=0.05) and low["mass"] == pytest.approx(11.65, abs=0.05)
+    assert result["spread"]["high"]["value"] > 9000
+    settled = clause("not more than 10 ppb mercury", "ug/m3 at 20 °C, 1 atm", limit__parts_by="volume")
+    assert settled["figure"]["value"] == pytest.approx(83.4, abs=0.05)
+
+
+def test_a_clause_that_cannot_be_read_says_so_at_the_limit() -> None:
+    result = clause("not more than some mercury", "ug/m3 at 20 °C, 1 atm")
+    assert result["problems"] and all(problem["field"].startswith("limit") for problem in result["problems"])

@@ -16,7 +16,6 @@ import { mountVerdict } from "./regions/verdict.js";
 import { mountWorking } from "./regions/working.js";
 import { createState, emptySheet } from "./state.js";
 
-const TYPING_MS = 60;                  // a burst of keys is one question
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
@@ -24,7 +23,7 @@ const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
 const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
-let offline = null, typing = 0, resting = 0, ready = false;
+let offline = null, resting = 0, ready = false;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
@@ -72,13 +71,11 @@ function headline(answer) {
   return spread?.low ? `${spread.low.text} to ${spread.high.text} ${spread.unit_text}` : "";
 }
 
-function changeSheet(patch, wait = 0) {
+function changeSheet(patch) {
   const sheet = { ...state.get().sheet, ...patch };
   state.change({ sheet });
   keepSheet(sheet);
-  clearTimeout(typing);
-  if (wait) typing = setTimeout(restate, wait);
-  else restate();
+  restate();                           // the client keeps only the newest question, so a burst of keys is no burst of work
 }
 
 async function edit({ side, field, to }) {
@@ -144,7 +141,7 @@ async function open(code) {
 }
 
 const INTENTIONS = {
-  text: ({ side, text }) => { state.change({ sent: null }); changeSheet({ [side]: text }, TYPING_MS); },
+  text: ({ side, text }) => { state.change({ sent: null }); changeSheet({ [side]: text }); },
   open: ({ side, field }) => {
     const now = state.get().editing;
     state.change({ editing: now?.side === side && now.field === field ? null : { side, field, problem: null } });

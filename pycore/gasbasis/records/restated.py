@@ -2,6 +2,7 @@
 from __future__ import annotations
 
 import math
+from dataclasses import replace
 from typing import Mapping
 
 from gasbasis.calculation.basis_words import unit_words
@@ -34,7 +35,36 @@ def restated(sheet: Sheet, take_usual: bool = False, bound: int = BOUND) -> dict
 
     Up to `bound` combinations of readings are tried; above it the record's spread says that it is not complete.
     """
-    hold, hold_problems = read_statement(sheet.hold, "hold")
+    if sheet.limit.strip() and not sheet.hold.strip():
+        return challenged(sheet, take_usual, bound)
+    return _restated(sheet, *read_statement(sheet.hold, "hold"), take_usual, bound) | {"challenge": False}
+
+
+def challenged(sheet: Sheet, take_usual: bool, bound: int) -> dict:
+    """Nothing is held: the clause itself is restated, to see all it could mean before somebody signs it.
+
+    Its doubts are the limit's: settled here, they stay settled when a value is held against it.
+    """
+    settled = {_swap(doubt, "limit", "hold"): reading for doubt, reading in sheet.settled.items() if not doubt.startswith("hold.")}
+    notes = {_swap(doubt, "limit", "hold"): note for doubt, note in sheet.notes.items()}
+    clause, problems = read_statement(sheet.limit, "limit")
+    record = _restated(replace(sheet, limit="", settled=settled, notes=notes), clause, problems, take_usual, bound)
+    for doubt in record["doubts"]:
+        doubt |= {"id": _swap(doubt["id"], "hold", "limit"), "side": _swap(doubt["side"], "hold", "limit"),
+                  "question": doubt["question"].replace(SIDE_TITLES["hold"], SIDE_TITLES["limit"])}
+    for entry in (*record["problems"], *record["hold"]["pieces"]):
+        entry["field"] = _swap(entry["field"], "hold", "limit")
+    for piece in record["hold"]["pieces"]:
+        piece["doubt"] = piece["doubt"] and _swap(piece["doubt"], "hold", "limit")
+    return record | {"limit": record["hold"] | {"adds": record["limit"]["adds"]}, "hold": record["limit"] | {"text": ""}, "challenge": True}
+
+
+def _swap(identity: str, one: str, other: str) -> str:
+    side, dot, field = identity.partition(".")
+    return f"{other}{dot}{field}" if side == one else identity
+
+
+def _restated(sheet: Sheet, hold: Statement, hold_problems: tuple[CoreError, ...], take_usual: bool, bound: int) -> dict:
     gas, gas_problems = read_gas(sheet.gas)
     owe, owe_problems = read_statement(sheet.owe, "owe")
     limit, limit_problems = read_statement(sheet.limit, "limit")

@@ -31,16 +31,17 @@ export function mountFigure(root, spoken, dispatch) {
 /** @param {any} state */
 function wording(state) {
   const { answer, sent } = state;
+  const what = answer?.challenge ? "What the clause could mean" : "Figure";
   const open = (answer?.doubts ?? []).filter((doubt) => doubt.state === "open").length;
   const count = open ? ` · ${open} ${open === 1 ? "doubt" : "doubts"} open` : "";
   if (answer?.figure) {
     const { species_text, number_text, unit_text, basis } = answer.figure;
-    return { head: `Figure${species_text ? ` · ${species_text}` : ""}${compared(sent)}`, value: `${number_text} ${unit_text}`, basis, sentence: answer.warnings.join(" ") };
+    return { head: `${what}${species_text ? ` · ${species_text}` : ""}${compared(sent)}`, value: `${number_text} ${unit_text}`, basis, sentence: answer.warnings.join(" ") };
   }
   if (answer?.spread?.low) {
     const { low, high, unit_text } = answer.spread;
     const range = low.text === high.text ? low.text : `${low.text} to ${high.text}`;
-    return { head: `Figure${count}${compared(sent)}`, value: `${range} ${unit_text}`, basis: "", sentence: answer.sentence };
+    return { head: `${what}${count}${compared(sent)}`, value: `${range} ${unit_text}`, basis: "", sentence: answer.sentence };
   }
   if (sent && !answer) return { head: "Figure · as sent, not yet recomputed here", value: sent.figure, basis: "", sentence: "" };
   const problem = answer?.problems.find((one) => one.field !== "hold" && one.field !== "owe" || one.kind !== "missing");

@@ -51,7 +51,7 @@ def _parsed(request: str) -> Mapping:
                             hint="Paste one statement, not a whole file.", field="hold")
     try:
         data = json.loads(request)
-    except ValueError as error:
+    except (ValueError, RecursionError) as error:
         raise NotUnderstood(f"The request is not JSON: {error}.", hint="Send one JSON object.") from error
     if not isinstance(data, Mapping):
         raise NotUnderstood("The request must be one JSON object.", hint='For example {"task": "catalogue"}.')

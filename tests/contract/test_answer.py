@@ -19,7 +19,7 @@ DEMOS = Path(__file__).resolve().parents[2] / "demo"
     '{"task": "restate", "sheet": {"hold": 3}}', '{"task": "restate", "sheet": {"schema": 99}}', '{"task": "restate", "sheet": {"colour": "red"}}',
     '{"task": "restate", "sheet": {"settled": {"a": 1}}}', '{"task": "edit"}', '{"task": "edit", "text": "", "side": "up", "field": "water", "to": "dry"}',
     '{"task": "edit", "text": "CO 1 ppm", "side": "hold", "field": "colour", "to": "red"}', '{"task": "search", "what": "stars", "text": "x"}',
-    '{"task": "open", "code": "zzz"}', '{"task": "link", "sheet": {}}', "x" * 300_000, '{"task": ["restate"]}', '{"task": {"a": 1}}'])
+    '{"task": "open", "code": "zzz"}', '{"task": "link", "sheet": {}}', "x" * 300_000, "[" * 100_000, '{"task": "link", "sheet": {"hold": "\\ud800"}, "figure": ""}', '{"task": ["restate"]}', '{"task": {"a": 1}}'])
 def test_a_bad_request_is_answered_with_what_is_wrong(request_text: str) -> None:
     reply = json.loads(answer(request_text))
     assert reply["ok"] is False

@@ -10,8 +10,7 @@ from gasbasis import facts, relations
 from gasbasis.answer import answer
 
 # IAPWS-95 values, recomputed with a general library by the compilers of the checks; Pa
-LADDER = [(273.16, "611.655", 0.002), (293.15, "2339.32", 0.005), (298.15, "3169.93", 0.005), (313.15, "7384.94", 0.005), (333.15, "19946.4", 0.05),
-          (353.15, "47414.5", 0.05), (373.15, "101418.0", 0.05)]
+LADDER = [(273.16, 611.655), (293.15, 2339.32), (298.15, 3169.93), (313.15, 7384.94), (333.15, 19946.4), (353.15, 47414.5), (373.15, 101418.0)]
 
 
 def equation(identity: str):
@@ -32,10 +31,10 @@ def over_ice(T: float) -> float:
     return relations.get("sublimation_pressure_over_ice").value(theta=theta, p_t=float(row["pt"]), **coefficients)
 
 
-@pytest.mark.parametrize(("kelvin", "pascal", "within"), LADDER)
-def test_saturation_over_water(kelvin: float, pascal: str, within: float) -> None:
+@pytest.mark.parametrize(("kelvin", "pascal"), LADDER)
+def test_saturation_over_water(kelvin: float, pascal: float) -> None:
     # Wagner-Pruss is a fit to the same data: it agrees with IAPWS-95 to some 0.01 % (its stated uncertainty is 0.025 %)
-    assert over_water(kelvin) == pytest.approx(float(pascal), rel=1.2e-4)
+    assert over_water(kelvin) == pytest.approx(pascal, rel=1.2e-4)
 
 
 def test_saturation_over_ice_at_230_kelvin() -> None:
@@ -113,6 +112,7 @@ def test_the_coolers_water() -> None:
     ("wet bulb 80 °C, dry bulb 40 °C, 1 atm", "gas.water_route", "not above the dry bulb"),
     ("RH 130 % at 25 °C, 1 atm", "gas.water_route", "0 to 100 %"),
     ("collected water 30 g in 0 m3 at 20 °C, 1 atm", "gas.water_route", "above zero"),
+    ("dew point 45 °C, static -2 bar, barometer 1 bar", "gas.pressure_route", "no pressure at all"),
     ("12 % H2O, dew point 45 °C, 1 atm", "gas.water_content", "given twice")])
 def test_bad_water_is_refused(gas: str, field: str, message: str) -> None:
     sheet = {"hold": "SO2 100 ppmv wet", "owe": "ppm by volume, dry", "gas": gas}

@@ -5,7 +5,7 @@ from gasbasis import facts, relations
 from gasbasis.calculation import leaves
 from gasbasis.calculation.case import Case
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Shown, Step
-from gasbasis.errors import Missing
+from gasbasis.errors import Missing, OutOfRange
 from gasbasis.language.basis import Route
 from gasbasis.language.units import unit
 
@@ -19,7 +19,11 @@ def gas_pressure(draft: Drafting, case: Case, why: str) -> str:
         return leaves.from_quantity(draft, case, "p_gas", gas.pressure, "gas.pressure")
     if gas.pressure_route is not None:
         given = leaves.from_quantity(draft, case, "p_gauge", gas.pressure_route.get("pressure"), "gas.pressure_route")
-        return draft.step(Step(relations.get("absolute_pressure"), {"p_b": barometer(draft, case), "p_g": given}, "p_absolute", _SHOWN))
+        whole = draft.step(Step(relations.get("absolute_pressure"), {"p_b": barometer(draft, case), "p_g": given}, "p_absolute", _SHOWN))
+        if draft.value(whole) <= 0:
+            raise OutOfRange("Barometer and gauge add up to no pressure at all.", hint="Check the sign and the unit of the gauge or static pressure.",
+                             field="gas.pressure_route")
+        return whole
     raise Missing(f"The pressure of the gas is needed {why}.",
                   hint="Add it absolute ('1008 hPa'), or as 'gauge 2.3 bar' or 'static -12 mmH2O' with a barometer.", field="gas.pressure")
 
@@ -43,8 +47,8 @@ def _at_altitude(draft: Drafting, case: Case, route: Route) -> str:
     arguments = {"H": leaves.from_quantity(draft, case, "H", altitude, "gas.barometer_route"),
                  **{name: _standard(draft, name, identity) for name, identity in _ATMOSPHERE.items()}}
     if route.id == "sea_level":
-        arguments["p_0"] = leaves.from_quantity(draft, case, "p_sea", route.get("pressure"), "gas.barometer_route")
-    relation = relations.get("barometer_at_altitude")
+        arguments["p_sl"] = leaves.from_quantity(draft, case, "p_sea", route.get("pressure"), "gas.barometer_route")
+    relation = relations.get("barometer_from_sea_level" if route.id == "sea_level" else "barometer_at_altitude")
     return draft.step(Step(relation, {name: arguments[name] for name in relation.symbols}, "p_station", _SHOWN))
 
 

@@ -12,7 +12,7 @@ from gasbasis.language.species import find
 
 _PERCENT, _PASCAL, _MOLE, _ONE = Shown(1e-2, "%"), Shown(1e3, "kPa"), Shown(1.0, "mol"), Shown(1.0, "")
 _FIELD = "gas.water_route"
-_FREEZING = 273.16                     # K, the triple point: below it the equation over liquid water ends
+_FREEZING = 273.15                     # K; the equation over liquid water ends at the triple point, 0.01 K above
 _HIGHEST = 5e5                         # Pa; at 60 bar p_sat/p is a third too low
 
 

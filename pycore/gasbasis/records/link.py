@@ -53,10 +53,13 @@ def write_code(sheet: Sheet, figure_text: str, with_names: bool = False) -> str:
     """The code of a sheet. Names and notes go in only when asked for. Raises NotUnderstood when too long."""
     data = {_SHORT[name]: value for name, value in write_sheet(sheet).items()
             if name in _SHORT and (with_names or name not in _NAMES)}
-    body = json.dumps(data, ensure_ascii=False, separators=(",", ":"), sort_keys=True).encode()
+    try:
+        body = json.dumps(data, ensure_ascii=False, separators=(",", ":"), sort_keys=True).encode()
+        figure = _base64(figure_text.encode())
+    except UnicodeEncodeError as error:
+        raise NotUnderstood("A text holds half a character, which no link can carry.", hint="Type it anew.", field="link") from error
     packed = _deflate(body)
     form, carried = ("z", packed) if len(packed) < len(body) else ("t", body)
-    figure = _base64(figure_text.encode())
     code = "".join((VERSION, form, _length_text(len(figure)), figure, _base64(carried), _check(figure_text, body)))
     if len(code) > LONGEST_CODE:
         raise NotUnderstood(f"The link would have {len(code)} characters; {LONGEST_CODE} pass everywhere.",

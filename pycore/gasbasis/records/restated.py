@@ -84,9 +84,20 @@ def _restated(sheet: Sheet, hold: Statement, hold_problems: tuple[CoreError, ...
             result["verdict"] = verdict_record(settled, limit, sheet, take_usual, bound)
         except CoreError as error:
             problems.append(worth_problem(error))
+    result["warnings"] = [*result["warnings"], *_said_loosely(hold, limit)]
     sides = {"hold": hold, "gas": gas, "owe": owe, "limit": limit}
     return {**{side: side_record(side, record, settled, problems) for side, record in sides.items()},
             "problems": [error.as_json() for error in problems], **result}
+
+
+def _said_loosely(hold: Statement, limit: Statement) -> list[str]:
+    """What a text says that no calculation can take up."""
+    loose = [f"{title} is said to be approximate: no figure can be better than that."
+             for title, statement in (("What you hold", hold), ("The limit", limit)) if statement.approximate]
+    if limit.second_value is not None:
+        loose.append(f"The limit is said twice; {limit.second_value.number.text} {limit.second_value.unit.text} is not compared here: "
+                     "type it alone to see which of the two binds.")
+    return loose
 
 
 def _rule(sheet: Sheet) -> RuleBook | None:

@@ -12,6 +12,7 @@ from gasbasis.language.edit import edit
 from gasbasis.records.catalogue import catalogue, search
 from gasbasis.records.link import read_code, write_code
 from gasbasis.records.restated import restated
+from gasbasis.records import bounded_json
 from gasbasis.records import simulated as simulated_record
 from gasbasis.records.sheet import read_sheet, write_sheet
 
@@ -50,8 +51,8 @@ def _parsed(request: str) -> Mapping:
         raise NotUnderstood(f"The request has {len(request)} characters; {LONGEST_REQUEST} can be read.",
                             hint="Paste one statement, not a whole file.", field="hold")
     try:
-        data = json.loads(request)
-    except (ValueError, RecursionError) as error:
+        data = bounded_json.loads(request)
+    except ValueError as error:
         raise NotUnderstood(f"The request is not JSON: {error}.", hint="Send one JSON object.") from error
     if not isinstance(data, Mapping):
         raise NotUnderstood("The request must be one JSON object.", hint='For example {"task": "catalogue"}.')

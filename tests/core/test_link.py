@@ -8,6 +8,7 @@ import re
 import pytest
 
 from gasbasis.errors import NotUnderstood
+from gasbasis.records import link
 from gasbasis.records.link import LONGEST_CODE, VERSION, read_code, write_code
 from gasbasis.records.sheet import Sheet, write_sheet
 
@@ -106,3 +107,11 @@ def test_the_figure_as_sent_can_be_read_before_the_core_is_there() -> None:
     length = int(code[2:4], 36)
     figure = code[4:4 + length]
     assert base64.urlsafe_b64decode(figure + "=" * (-length % 4)).decode() == as_sent
+
+
+def test_a_made_up_link_with_deep_nesting_is_refused_before_it_is_parsed() -> None:
+    # in the browser's engine the nesting would exhaust the stack instead of raising
+    body = b'{"h":' + b"[" * 2_000 + b"]" * 2_000 + b"}"
+    code = "1t00" + link._base64(body) + link._check("", body)
+    with pytest.raises(NotUnderstood, match="does not hold a sheet"):
+        link.read_code(code)

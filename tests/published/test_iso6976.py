@@ -1,9 +1,12 @@
 """ISO 6976:2016, Annex D examples 1 and 2 (read in a transcription): molar mass and compression factor."""
 from __future__ import annotations
 
+import json
+
 import pytest
 
 from gasbasis import facts, relations
+from gasbasis.answer import answer
 from gasbasis.errors import OutOfRange
 
 FIRST = {"CH4": 0.933212, "C2H6": 0.025656, "C3H8": 0.015368, "N2": 0.010350, "CO2": 0.015414}
@@ -60,3 +63,25 @@ def test_the_compression_factor_follows_the_pressure_near_the_tables() -> None:
 def test_density(temperature: float, M: float, Z: float, kilograms: float, within: float, source: str) -> None:
     R = float(facts.constant("molar_gas_constant_iso_6976").number)
     assert relations.get("density").value(p=101325.0, M_gas=M * 1e-3, Z=Z, R=R, T=temperature) == pytest.approx(kilograms, abs=within), source
+
+
+def test_a_real_gas_through_the_one_door() -> None:
+    # the molar volume at 15 degC and 101.325 kPa is Z R T/p with the example's Z = 0.99776224
+    gas = ", ".join(f"{species} {100 * share:.4f}" for species, share in FIRST.items())
+    sheet = {"hold": "H2S 4 ppmv", "owe": "mg/m3 at 15 °C, 101.325 kPa", "gas": gas}
+
+    def figure(extra: str) -> dict:
+        result = json.loads(answer(json.dumps({"task": "restate", "sheet": {**sheet, "gas": gas + extra}})))["answer"]
+        assert result["figure"], result["problems"]
+        return result["figure"]
+    ideal, real = figure(""), figure(", real gas")
+    assert ideal["value"] / real["value"] == pytest.approx(0.99776224, abs=1e-8)
+    assert "ideal gas" in ideal["basis"] and "real gas by ISO 6976" in real["basis"]
+
+
+@pytest.mark.parametrize(("gas", "owe", "message"), [
+    ("CH4 96, N2 4, real gas", "mg/m3 at 25 °C, 101.325 kPa", "0, 15, 15.55 and 20"), ("CH4 96, N2 4, real gas", "mg/m3 at 15 °C, 60 bar", "90 kPa to 110 kPa"),
+    ("CH4 96, C6H5Cl 4, real gas", "mg/m3 at 15 °C, 101.325 kPa", "no summation factor"), ("real gas", "mg/m3 at 15 °C, 101.325 kPa", "needs its composition")])
+def test_where_iso_6976_ends(gas: str, owe: str, message: str) -> None:
+    result = json.loads(answer(json.dumps({"task": "restate", "sheet": {"hold": "H2S 4 ppmv", "owe": owe, "gas": gas}})))["answer"]
+    assert result["figure"] is None and any(message in problem["message"] for problem in result["problems"]), result["problems"]

@@ -38,6 +38,8 @@ def basis_words(case: Case, water: str | None, draft: Drafting) -> tuple[str, ..
         words.append(_MATRIX[matrix.id])
     if any(name.startswith("Z_") for name in draft.leaves):
         words.append("ideal gas")
+    if case.gas.model is not None and any(step.result.startswith("Z_") for step in draft.steps):
+        words.append("real gas by ISO 6976")
     return tuple(words)
 
 

@@ -9,7 +9,7 @@ from __future__ import annotations
 from dataclasses import dataclass, replace
 
 from gasbasis import facts, relations
-from gasbasis.calculation import leaves, matrix, pressure, rules, water
+from gasbasis.calculation import leaves, matrix, pressure, real_gas, rules, water
 from gasbasis.calculation.basis_words import basis_words, species_words, unit_words
 from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_CONCENTRATION, MASS_FRACTION,
                                        MASS_LIKE, PARTIAL_PRESSURE, UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor,
@@ -99,9 +99,10 @@ class _Laying:
     def condition(self, letter: str, side: str) -> str:
         """Temperature, pressure or compression factor of the volume a statement counts in."""
         case, draft = self.case, self.draft
-        if letter == "Z":
-            return leaves.ideal(draft, f"Z_{side}")
         statement = case.record(side)
+        if letter == "Z":
+            temperature = case.gas.temperature if statement.actual_volume else statement.temperature
+            return real_gas.ideal_or_real(draft, case, side, temperature, "" if case.gas.model is None else self.condition("p", side))
         word = "temperature" if letter == "T" else "pressure"
         if statement.actual_volume and word == "pressure":
             return pressure.gas_pressure(draft, case, "for a volume as it flowed")

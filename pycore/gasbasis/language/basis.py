@@ -182,3 +182,4 @@ class Gas:
     pressure_route: Route | None = None   # gauge or static: the difference from the barometer
     barometer: Quantity | None = None
     barometer_route: Route | None = None  # altitude, alone or with a sea-level pressure
+    model: str | None = None              # "iso_6976" where a real gas was asked for; None: ideal, and said so

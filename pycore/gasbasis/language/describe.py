@@ -32,6 +32,7 @@ FIELDS: Mapping[str, Field] = {
     "cooler": Field("cooler", "The temperature of the cooler before the analyser: so much water was still in the gas it read.", "cooler 4 °C"),
     "pressure_route": Field("gauge or static", "The difference from the barometer; it may be negative.", "static -12 mmH2O"),
     "barometer": Field("barometer", "The pressure at the station, not reduced to sea level.", "barometer 1008 hPa"),
+    "model": Field("gas model", "A real gas by ISO 6976, for a composition at 0, 15, 15.55 or 20 °C near ambient pressure; else ideal.", "real gas"),
     "barometer_route": Field("barometer from", "An altitude, alone or with a sea-level pressure from a weather report.", "altitude 420 m"),
     "oxygen": Field("oxygen it is stated at", "The oxygen the value was measured at or is referred to.", "11 % O2",
                     ("3 % O2", "6 % O2", "7 % O2", "11 % O2", "15 % O2"), numeric=True),
@@ -57,7 +58,7 @@ FIELDS: Mapping[str, Field] = {
 ADDABLE: Mapping[str, tuple[str, ...]] = {
     "hold": ("species", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as", "matrix_gas"),
     "gas": ("water_content", "water_route", "cooler", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure", "pressure_route",
-            "barometer", "barometer_route"),
+            "barometer", "barometer_route", "model"),
     "owe": ("unit", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as"),
     "limit": ("value", "temperature", "pressure", "water", "oxygen"),
 }

@@ -94,6 +94,18 @@ def _component(reader, place: int) -> tuple[Species, Quantity, int] | None:
     return species, Quantity(replace(typed, thousands=None), unit("%")), percent.end() if percent else number.end()
 
 
+_REAL = re.compile(r"(?:as\s)?(?:a\s)?real gas(?:\s(?:by|per|to)\sISO\s?6976(?::2016)?)?|(?:Z\s)?(?:by|per)\sISO\s?6976(?::2016)?", re.IGNORECASE)
+
+
+def _model(reader) -> bool:
+    found = _REAL.match(reader.text, reader.place)
+    if found is None:
+        return False
+    reader.take("model", "iso_6976", reader.place, found.end())
+    reader.place = found.end()
+    return True
+
+
 def _matrix_alone(reader) -> bool:
     for identity, pattern in _MATRIX_ALONE:
         found = pattern.match(reader.text, reader.place)
@@ -116,6 +128,6 @@ def _gas_word(reader) -> bool:
     return True
 
 
-_CLAUSES = (readers.late_spread, readers.coverage, *gas_routes.CLAUSES, _ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
+_CLAUSES = (readers.late_spread, readers.coverage, *gas_routes.CLAUSES, _model, _ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
             _gas_word, readers.number_led)
 

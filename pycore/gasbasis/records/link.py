@@ -18,6 +18,7 @@ import zlib
 from dataclasses import dataclass
 
 from gasbasis.errors import NotUnderstood
+from gasbasis.records import bounded_json
 from gasbasis.records.sheet import Sheet, read_sheet, write_sheet
 
 VERSION = "1"
@@ -87,8 +88,8 @@ def read_code(text: str) -> Opened:
 def _long_names(body: bytes) -> dict:
     """The sheet's JSON from the body. The check fits here, so what is wrong was made wrong."""
     try:
-        return {_LONG[short]: value for short, value in json.loads(body).items()}
-    except (ValueError, KeyError, AttributeError, RecursionError) as error:
+        return {_LONG[short]: value for short, value in bounded_json.loads(body.decode()).items()}
+    except (ValueError, KeyError, AttributeError) as error:
         raise NotUnderstood("This link does not hold a sheet.", hint="Ask its sender for the texts.", field="link") from error
 
 

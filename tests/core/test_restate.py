@@ -43,6 +43,13 @@ RAISED = [
      dict(hold="CO 50 mg/m3 dry corrected to 3 % O2", owe="mg/m3 dry, 3 % O2")),
     ("gas.oxygen_water", dict(hold="CO 50 mg/m3 dry", owe="mg/m3 dry, 11 % O2", gas="9 % O2, 10 % H2O, ambient O2 21 %"),
      dict(hold="CO 50 mg/m3 dry", owe="mg/m3 dry, 11 % O2", gas="9 % O2 dry, ambient O2 21 %")),
+    ("hold.unit_count", dict(hold="H2S 3 lb/Mscf", owe="lb/MMscf"), dict(hold="H2S 3 lb/MMscf", owe="gr/100 scf")),
+    ("hold.pressure_print", dict(hold="SO2 35 mg/m3 at 273.15 K, 101.3 kPa", owe="mg/m3 at 273.15 K, 101.325 kPa"),
+     dict(hold="SO2 35 mg/m3 at 273.15 K, 101.3 kPa", owe="mg/m3 at 273.15 K, 101.3 kPa")),
+    ("hold.temperature_print", dict(hold="SO2 35 mg/m3 at 293 K, 101.3 kPa", owe="mg/m3 at 293.15 K, 101.3 kPa"),
+     dict(hold="SO2 35 mg/m3 at 293 K, 101.3 kPa", owe="mg/m3 at 273.15 K, 101.3 kPa")),
+    ("gas.barometer_meaning", dict(hold="SO2 35 mg/Am3", owe="mg/m3 at 0 °C, 1 atm", gas="20 °C, gauge 1 kPa, barometer 1013 hPa, altitude 420 m"),
+     dict(hold="SO2 35 mg/Am3", owe="mg/m3 at 0 °C, 1 atm", gas="20 °C, gauge 1 kPa, barometer 1013 hPa")),
     ("hold.number", dict(hold="Hg 1,234 ng/m3", owe="pg/L"), dict(hold="Hg 1,23 ng/m3", owe="pg/L")),
 ]
 
@@ -257,3 +264,11 @@ def test_a_clause_shows_all_it_could_mean() -> None:
 def test_a_clause_that_cannot_be_read_says_so_at_the_limit() -> None:
     result = clause("not more than some mercury", "ug/m3 at 20 °C, 1 atm")
     assert result["problems"] and all(problem["field"].startswith("limit") for problem in result["problems"])
+
+
+def test_at_line_pressure_the_volume_may_be_the_actual_one() -> None:
+    # 62 bar and 15 degC: an actual cubic metre holds some 61-fold what a reference cubic metre does
+    result = restate("Hg 100 ng/m3", "ng/m3 at 15 °C, 101.325 kPa", gas="15 °C, 62 bar")
+    doubt = next(doubt for doubt in result["doubts"] if doubt["id"] == "hold.conditions")
+    ranges = {reading["id"]: reading["figure"]["low"] for reading in doubt["readings"]}
+    assert ranges["actual"] == pytest.approx(100 * 101325 / 62e5) and ranges["288.15K-101.325kPa"] == 100

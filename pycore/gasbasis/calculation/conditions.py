@@ -36,10 +36,16 @@ def _readings(word: str | None) -> tuple[Reading, ...]:
     return tuple(readings)
 
 
-def conditions_doubt(side: str, statement: Statement) -> Doubt:
-    """Neither temperature nor pressure is stated; a word such as 'normal' narrows the definitions."""
+_ACTUAL = Reading("actual", "the volume as it flowed, not a reference volume", (("actual_volume", True),), "common practice, no source")
+
+
+def conditions_doubt(side: str, statement: Statement, flowed: bool = False) -> Doubt:
+    """Neither temperature nor pressure is stated; a word such as 'normal' narrows the definitions.
+
+    Where the gas's own temperature and pressure are known (`flowed`) and no word says reference, the volume may be the actual one.
+    """
     word = statement.conditions_word
-    readings = _readings(word) or _readings(None)
+    readings = (_readings(word) or _readings(None)) + ((_ACTUAL,) if flowed and not word else ())
     question = (f"'{word}' has {len(readings)} published meanings. Which one is meant in {SIDE_TITLES[side]}?" if word
                 else f"At which temperature and pressure is the volume in {SIDE_TITLES[side]} counted?")
     return Doubt(f"{side}.conditions", "temperature and pressure", question, _CHANGES, readings)

@@ -15,7 +15,7 @@ from gasbasis.calculation.conditions import conditions_doubt, pressure_doubt, te
 from gasbasis.calculation.leaves import SIDE_TITLES, fixed_quantity
 from gasbasis.calculation.rules import with_usual
 from gasbasis.language.basis import (CORRECTED, DRY, MASS, MASS_BY_VOLUME, MEASURED, VOLUME, WET, Doubt, MatrixGas,
-                                     Reading)
+                                     Reading, Route)
 from gasbasis.language.species import find
 
 COMMON = "common practice, no source"
@@ -72,12 +72,48 @@ def _conditions(case: Case) -> list[Doubt]:
             continue
         statement = case.record(side)
         if statement.temperature is None and statement.pressure is None:
-            doubts.append(conditions_doubt(side, statement))
+            flowed = case.gas.temperature is not None and (case.gas.pressure is not None or case.gas.pressure_route is not None)
+            doubts.append(conditions_doubt(side, statement, flowed and side == "hold"))
         elif statement.temperature is None:
             doubts.append(temperature_doubt(side))
         elif statement.pressure is None:
             doubts.append(pressure_doubt(side))
     return doubts
+
+
+# The prints that stand for one another in rules, and by how much they differ in fact.
+_PRINTS = {("pressure", "kPa"): (("101.3", "101.325"),), ("temperature", "K"): (("293", "293.15"), ("273", "273.15"), ("298", "298.15"))}
+
+
+def _printed_conditions(case: Case) -> list[Doubt]:
+    """101.3 on one side and 101.325 kPa on the other: two conditions, or one printed shorter?"""
+    hold, owe = case.hold, case.owe
+    if any(kind_and_factor(case.record(side))[0] not in VOLUMETRIC for side in _SIDES):
+        return []
+    doubts = []
+    for (field, unit), pairs in _PRINTS.items():
+        first, second = getattr(hold, field), getattr(owe, field)
+        if first is None or second is None or first.unit.id != unit or second.unit.id != unit or f"hold.{field}" in case.chosen:
+            continue
+        texts = {first.number.text.replace(",", "."), second.number.text.replace(",", ".")}
+        pair = next((pair for pair in pairs if texts == set(pair)), None)
+        if pair:
+            doubts.append(Doubt(f"hold.{field}_print", f"{pair[0]} or {pair[1]} {unit}", f"Are {pair[0]} and {pair[1]} {unit} two conditions, or one printed shorter?",
+                                "Taken as printed the figure changes by a few hundredths of a percent.",
+                                (Reading("as_printed", "two, as printed", ((field, first),), COMMON), Reading("same", "one and the same", ((field, second),), COMMON))))
+    return doubts
+
+
+def _barometer(case: Case) -> list[Doubt]:
+    """A barometer and an altitude: read at the station, or reduced to sea level as weather reports are?"""
+    gas = case.gas
+    if gas.barometer is None or gas.barometer_route is None or gas.barometer_route.id != "altitude":
+        return []
+    reduced = Route("sea_level", (("pressure", gas.barometer), *gas.barometer_route.given))
+    return [Doubt("gas.barometer_meaning", "barometer", f"Was the barometer of {gas.barometer.number.text} {gas.barometer.unit.text} read at the station, or reduced to sea level?",
+                  "Weather reports give sea-level pressures; some 1 % for every 85 m of altitude.",
+                  (Reading("station", "read at the station", (("barometer_route", None),), COMMON),
+                   Reading("sea_level", "reduced to sea level", (("barometer", None), ("barometer_route", reduced)), COMMON)))]
 
 
 def _needs_volume(hold_kind: str, owe_kind: str) -> bool:
@@ -222,4 +258,4 @@ def _basis_changes(case: Case) -> bool:
 
 
 _RULES: tuple[Callable[[Case], list[Doubt]], ...] = (
-    _parts_by, _conditions, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)
+    _parts_by, _conditions, _printed_conditions, _barometer, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)

@@ -140,6 +140,7 @@ class Statement:
     species: Species | None = None
     value: Quantity | None = None         # None on an owed side
     unit: Unit | None = None
+    unit_in_millions: Unit | None = None  # what the unit is when its M is not the gas trade's thousand
     parts_by: str | None = None           # VOLUME | MASS | MASS_BY_VOLUME, for a unit of kind "parts"
     temperature: Quantity | None = None
     pressure: Quantity | None = None

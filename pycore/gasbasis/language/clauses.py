@@ -149,6 +149,7 @@ class _Looker:
 
     def __init__(self, text: str):
         self.text = text
+        self.fields: dict[str, object] = {}
 
     def take(self, *_: object) -> None:
         """Nothing is taken."""

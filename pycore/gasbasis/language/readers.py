@@ -272,6 +272,7 @@ def _mass_per_volume(reader, place: int):
         return None
     count = {"million": "million ", "MM": "million ", "10^6": "million ", "106": "million "}.get(found["count"], f"{found['count'] or ''} ")
     if found["count"] == "M":
+        reader.fields["unit_in_millions"] = unit(f"{found['mass']}/million {_volume(found['volume'])}")
         count = "1000 "                                       # the gas trade's M
     measured = unit(f"{found['mass']}/{count.lstrip()}{_volume(found['volume'])}")
     if entity:

@@ -213,7 +213,19 @@ def ambiguities(record, side: str) -> tuple[Doubt, ...]:
         quantity = getattr(record, field, None)
         if quantity is not None and quantity.number.thousands is not None and not _beyond_the_whole(quantity):
             doubts.append(_number_doubt(quantity, field, side))
+    if getattr(record, "unit_in_millions", None) is not None:
+        doubts.append(_thousand_doubt(record, side))
     return tuple(doubts)
+
+
+def _thousand_doubt(record: Statement, side: str) -> Doubt:
+    """ "lb/Mscf": M is a thousand in the gas trade, and mega elsewhere. MM is a million to everybody."""
+    readings = []
+    for identity, measured, label, usual in (("thousand", record.unit, "a thousand", "in gas-trade units M is a thousand and MM a million (common practice)"),
+                                             ("million", record.unit_in_millions, "a million", "")):
+        patch = (("unit", measured), ("value", replace(record.value, unit=measured) if record.value else None), ("unit_in_millions", None))
+        readings.append(Reading(identity, label, patch, _COMMON, usual))
+    return Doubt(f"{side}.unit_count", "M", "Is the M before the volume a thousand or a million?", "It changes the figure a thousandfold.", tuple(readings))
 
 
 def _beyond_the_whole(quantity: Quantity) -> bool:

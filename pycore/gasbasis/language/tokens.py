@@ -8,7 +8,7 @@ _AMOUNT = r"(?:kmol|mmol|umol|nmol|pmol|lb-?mol|mol)"
 _SMALL_VOLUME = r"(?:mL|ml|uL|ul|nL|nl|cm3|cm\^3|cc|dm3|L|l)"
 _CUBIC = (r"(?:cubic (?:metres?|meters?|feet|foot)|cu\.? ?ft\.?|m\^?3|dm\^?3|cm\^?3|ft\^?3|mL|ml|uL|nL|litres?|liters?|L|l|cc|"
           r"(?<=[sdna])(?:cm|cf|cft|L|l)|cbm|cf)")
-_COUNT = r"(?:100|1000|million|10\^?6|MM|M)"
+_COUNT = r"(?:1000|100|million|10\^?6|MM|M)"
 # What a volume is called before or behind its unit: N, S, std, dry std, A, R ...
 _CALLED = r"(?:(?:dry|wet) std\.?|(?:dry|wet) standard|standard|normal|actual|std\.?|ds|dn|da|ws|wn|N|S|A|R|s|n|a|d)"
 

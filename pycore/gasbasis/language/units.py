@@ -102,7 +102,7 @@ def unit(text: str) -> Unit:
 
 def _ratio(text: str, top: str, bottom: str) -> Unit:
     """A unit with a fraction bar; a count such as 100 or a million may stand before the lower unit."""
-    found = re.fullmatch(r"(?P<count>100|1000|million|10\^?6|MM|M)?\s?(?P<unit>.+)", bottom)
+    found = re.fullmatch(r"(?P<count>1000|100|million|10\^?6|MM|M)?\s?(?P<unit>.+)", bottom)
     above, below = atom(top), atom(bottom)
     count = ""
     if below is None and found and found["count"]:

@@ -50,6 +50,9 @@ RAISED = [
      dict(hold="SO2 35 mg/m3 at 293 K, 101.3 kPa", owe="mg/m3 at 273.15 K, 101.3 kPa")),
     ("gas.barometer_meaning", dict(hold="SO2 35 mg/Am3", owe="mg/m3 at 0 °C, 1 atm", gas="20 °C, gauge 1 kPa, barometer 1013 hPa, altitude 420 m"),
      dict(hold="SO2 35 mg/Am3", owe="mg/m3 at 0 °C, 1 atm", gas="20 °C, gauge 1 kPa, barometer 1013 hPa")),
+    ("gas.pressure_said", dict(hold="Hg 100 ng/Am3", owe="ng/m3 at 15 °C, 101.325 kPa", gas="15 °C, 62 bar, barometer 1 bar"),
+     dict(hold="Hg 100 ng/Am3", owe="ng/m3 at 15 °C, 101.325 kPa", gas="15 °C, 62 bara")),
+    ("hold.ppt", dict(hold="CO2 4 ppt", owe="% by volume"), dict(hold="SF6 4 ppt", owe="ppb")),
     ("hold.number", dict(hold="Hg 1,234 ng/m3", owe="pg/L"), dict(hold="Hg 1,23 ng/m3", owe="pg/L")),
 ]
 
@@ -268,7 +271,7 @@ def test_a_clause_that_cannot_be_read_says_so_at_the_limit() -> None:
 
 def test_at_line_pressure_the_volume_may_be_the_actual_one() -> None:
     # 62 bar and 15 degC: an actual cubic metre holds some 61-fold what a reference cubic metre does
-    result = restate("Hg 100 ng/m3", "ng/m3 at 15 °C, 101.325 kPa", gas="15 °C, 62 bar")
+    result = restate("Hg 100 ng/m3", "ng/m3 at 15 °C, 101.325 kPa", gas="15 °C, 62 bar abs")
     doubt = next(doubt for doubt in result["doubts"] if doubt["id"] == "hold.conditions")
     ranges = {reading["id"]: reading["figure"]["low"] for reading in doubt["readings"]}
     assert ranges["actual"] == pytest.approx(100 * 101325 / 62e5) and ranges["288.15K-101.325kPa"] == 100

@@ -8,7 +8,7 @@ from __future__ import annotations
 from typing import Callable
 
 from gasbasis import facts
-from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_FRACTION, MASS_LIKE,
+from gasbasis.calculation.case import (MASS_FRACTION, MASS_LIKE, PARTIAL_PRESSURE,
                                        UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor, same_conditions,
                                        stated_oxygen)
 from gasbasis.calculation.conditions import conditions_doubt, pressure_doubt, temperature_doubt
@@ -114,6 +114,24 @@ def _barometer(case: Case) -> list[Doubt]:
                   "Weather reports give sea-level pressures; some 1 % for every 85 m of altitude.",
                   (Reading("station", "read at the station", (("barometer_route", None),), COMMON),
                    Reading("sea_level", "reduced to sea level", (("barometer", None), ("barometer_route", reduced)), COMMON)))]
+
+
+_SURELY_ABSOLUTE = 1.2e5                # Pa; up to here a plain pressure reads like a barometer
+
+
+def _gauge_or_absolute(case: Case) -> list[Doubt]:
+    """A line pressure with no word on what it is counted from, where it enters the figure."""
+    gas = case.gas
+    if gas.pressure is None or gas.pressure_said is not None or gas.pressure.si <= _SURELY_ABSOLUTE:
+        return []
+    uses = any(case.record(side).actual_volume or kind_and_factor(case.record(side))[0] == PARTIAL_PRESSURE for side in _SIDES)
+    if not uses:
+        return []
+    text = f"{gas.pressure.number.text} {gas.pressure.unit.text}"
+    gauge = (("pressure", None), ("pressure_route", Route("gauge", (("pressure", gas.pressure),))))
+    return [Doubt("gas.pressure_said", "gas pressure", f"Is the gas pressure of {text} absolute or gauge?",
+                  "A gauge pressure has the barometer still to be added: at 1 bar that is a factor of two.",
+                  (Reading("absolute", "absolute", (("pressure_said", "absolute"),), COMMON), Reading("gauge", "gauge, the barometer comes on top", gauge, COMMON)))]
 
 
 def _needs_volume(hold_kind: str, owe_kind: str) -> bool:
@@ -258,4 +276,4 @@ def _basis_changes(case: Case) -> bool:
 
 
 _RULES: tuple[Callable[[Case], list[Doubt]], ...] = (
-    _parts_by, _conditions, _printed_conditions, _barometer, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)
+    _parts_by, _conditions, _gauge_or_absolute, _printed_conditions, _barometer, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)

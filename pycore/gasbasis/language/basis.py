@@ -180,6 +180,7 @@ class Gas:
     matrix_gas: MatrixGas | None = None
     temperature: Quantity | None = None   # of the gas as it flowed
     pressure: Quantity | None = None
+    pressure_said: str | None = None      # "absolute" where the text says so
     pressure_route: Route | None = None   # gauge or static: the difference from the barometer
     barometer: Quantity | None = None
     barometer_route: Route | None = None  # altitude, alone or with a sea-level pressure

@@ -8,7 +8,7 @@ from typing import Callable
 
 from gasbasis.errors import NotUnderstood
 from gasbasis.language import tokens
-from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Species, Uncertainty
+from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Route, Species, Uncertainty
 from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, uncertainty_at
 from gasbasis.language.species import find, match_at
 from gasbasis.language.units import unit
@@ -206,6 +206,10 @@ def _pressure(reader, number: Number, start: int, after: int) -> bool:
     gauge = found["gauge"]
     text = found.group()[:len(found.group()) - len(gauge or "")]
     quantity = Quantity(_plausible(number, unit(text.strip()).factor, 2e4, 4e7), unit(text.strip()))
+    if reader.side == "gas" and gauge:
+        if "g" in gauge.lower():
+            return _take(reader, "pressure_route", Route("gauge", (("pressure", quantity),)), start, found.end())
+        reader.fields["pressure_said"] = "absolute"
     if gauge and "g" in gauge.lower().replace("gauge", "g"):
         reader.refuse(NotUnderstood(f"'{reader.original[start:found.end()]}' is a gauge pressure.",
                                     hint="Give the absolute pressure: gauge plus barometer."), start, found.end())

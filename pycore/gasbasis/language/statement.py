@@ -14,6 +14,7 @@ from gasbasis.language.basis import Doubt, Piece, Quantity, Reading, Statement
 from gasbasis.language.normalise import gathered, normalise
 from gasbasis.language.species import find, search
 from gasbasis.language.tokens import CONNECTOR, WORD
+from gasbasis.language.units import unit
 
 LONGEST = 2000                         # characters
 _GUESSED = 5                           # unknown words for which a species is searched; a pasted paragraph has many
@@ -215,7 +216,23 @@ def ambiguities(record, side: str) -> tuple[Doubt, ...]:
             doubts.append(_number_doubt(quantity, field, side))
     if getattr(record, "unit_in_millions", None) is not None:
         doubts.append(_thousand_doubt(record, side))
+    species = getattr(record, "species", None)
+    if species is not None and species.id in _MET_IN_PERCENT and getattr(record, "value", None) and record.value.unit.id == "ppt":
+        doubts.append(_trillion_doubt(record, side))
     return tuple(doubts)
+
+
+# For these a part per trillion is nobody's reading: the text itself gives reason to ask.
+_MET_IN_PERCENT = ("H2O", "CO2", "O2", "N2", "Ar", "CH4", "C2H6", "C3H8", "H2", "CO")
+
+
+def _trillion_doubt(record: Statement, side: str) -> Doubt:
+    readings = []
+    for identity, name, label in (("thousand", "‰", "parts per thousand"), ("trillion", "ppt", "parts per trillion (10⁻¹²)")):
+        measured = unit(name) if identity == "thousand" else record.unit
+        patch = (("unit", measured), ("value", replace(record.value, unit=measured)))
+        readings.append(Reading(identity, label, patch, _COMMON))
+    return Doubt(f"{side}.ppt", "ppt", f"Does 'ppt' of {record.species.name} mean per thousand or per trillion?", "A factor of 10⁹.", tuple(readings))
 
 
 def _thousand_doubt(record: Statement, side: str) -> Doubt:

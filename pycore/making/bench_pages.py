@@ -20,6 +20,10 @@ VIEW = {"width": 390, "height": 844}
 SHEET = {"hold": "NOx 142 ppm by volume dry as NO2", "gas": "9.2 % O2 dry, ambient O2 20.9 %, 12 % H2O",
          "owe": "mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2", "settled": {}, "notes": {}}
 
+DOUBTS = {**SHEET, "hold": "NOx 142 ppm at 9 % O2", "gas": "12 % H2O", "owe": "mg/m3, 11 % O2"}
+JUDGED = {**SHEET, "hold": "NOx 142 ± 5 ppm by volume (k=2) wet as NO2", "gas": "9.2 ± 0.2 % O2 dry (k=2), ambient O2 20.9 %, 12 ± 1 % H2O (k=2)",
+          "owe": "mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2", "limit": "450 mg/m3"}
+
 # Put into every document before its own scripts: notes when a figure first stands on the page.
 WITNESS = """(sheet) => {
   localStorage.setItem("gasbasis.sheet", sheet);
@@ -44,7 +48,7 @@ CHANGE = """async ([number, text]) => {
     if (performance.now() - began > 5000) throw new Error("no new figure for " + text);
   }
   const took = performance.now() - began;
-  if (!document.querySelector("#working").textContent.includes(number)) throw new Error("the working does not show " + number);
+  if (number && !document.querySelector("#working").textContent.includes(number)) throw new Error("the working does not show " + number);
   return took;
 }"""
 
@@ -81,11 +85,11 @@ class Bench:
         in_background(server)
         return address_of(server)
 
-    def visitor(self, **options):
-        """A fresh profile: nothing cached, service workers allowed."""
-        context = self.browser.new_context(viewport=VIEW, **options)
+    def visitor(self, sheet: dict = SHEET):
+        """A fresh profile with a sheet kept: nothing cached, service workers allowed."""
+        context = self.browser.new_context(viewport=VIEW)
         context.set_default_timeout(PATIENCE_MS)
-        context.add_init_script(f"({WITNESS})({json.dumps(json.dumps(SHEET))})")
+        context.add_init_script(f"({WITNESS})({json.dumps(json.dumps(sheet))})")
         return context
 
     @staticmethod
@@ -144,9 +148,9 @@ def warm_load(bench: Bench) -> list[Measured]:
             Measured("first paint with usable fields, warm load", paint, "ms", 300)]
 
 
-def changed_input(bench: Bench) -> list[Measured]:
-    """From a changed number to the new figure with its working."""
-    context = bench.visitor()
+def changed(bench: Bench, sheet: dict, number_shown: bool) -> list[float]:
+    """Milliseconds from each changed number to the figure that belongs to it."""
+    context = bench.visitor(sheet)
     page = context.new_page()
     page.goto(bench.pages["ours"])
     bench.figure(page)
@@ -154,15 +158,53 @@ def changed_input(bench: Bench) -> list[Measured]:
     times = []
     for change in range(CHANGES):
         number = str(150 + change)
-        times.append(page.evaluate(CHANGE, [number, SHEET["hold"].replace("142", number)]))
+        times.append(page.evaluate(CHANGE, [number if number_shown else "", sheet["hold"].replace("142", number)]))
         page.wait_for_timeout(30)
     context.close()
-    settled = sorted(times[5:])
+    return sorted(times[5:])
+
+
+def changed_input(bench: Bench) -> list[Measured]:
+    """From a changed number to the new figure with its working."""
+    settled = changed(bench, SHEET, number_shown=True)
     return [Measured("changed input to new figure with working, median", statistics.median(settled), "ms", 20),
             Measured("changed input to new figure with working, p95", settled[int(len(settled) * 0.95)], "ms", 40)]
 
 
-BENCHES = [first_visit, warm_load, changed_input]
+def open_doubts(bench: Bench) -> list[Measured]:
+    """The same with five doubts open: figure, readings and doubts."""
+    return [Measured("five open doubts, changed input to new spread, median", statistics.median(changed(bench, DOUBTS, number_shown=False)), "ms", 60)]
+
+
+def judged(bench: Bench) -> list[Measured]:
+    """The same with uncertainties and a limit: figure, working, budget and verdict."""
+    return [Measured("figure, working, budget and verdict, median", statistics.median(changed(bench, JUDGED, number_shown=True)), "ms", 40)]
+
+
+ASK = """async () => {
+  const { createCore } = await import("./js/core-client.js");
+  const core = await new Promise((resolve) => { const made = createCore({ onState: (now) => { if (now.phase === "ready") setTimeout(() => resolve(made)); } }); });
+  const time = async (request) => { const began = performance.now(); await core.ask(request); return performance.now() - began; };
+  const texts = ["merc", "tolu", "formaldehide", "chlor", "so2", "amonia", "butane", "silox", "ethyl", "xylol"], times = [];
+  await time({ task: "search", what: "species", text: "warm" });
+  for (const text of texts) times.push(await time({ task: "search", what: "species", text }));
+  const drawing = await time({ task: "monte_carlo", sheet: SHEET });
+  return { search: times.sort((a, b) => a - b)[5], drawing };
+}"""
+
+
+def asked(bench: Bench) -> list[Measured]:
+    """Questions put to the core itself: a search in the catalogue, 200,000 draws of a whole restatement."""
+    context = bench.visitor()
+    page = context.new_page()
+    page.goto(bench.pages["ours"])
+    bench.figure(page)
+    times = page.evaluate(ASK.replace("SHEET", json.dumps(JUDGED)))
+    context.close()
+    return [Measured("search among the species, median", times["search"], "ms", 10), Measured("200,000 draws of a restatement", times["drawing"] / 1e3, "s", 3)]
+
+
+BENCHES = [first_visit, warm_load, changed_input, open_doubts, judged, asked]
 
 
 def main(dist: str, stock: str, chromium: str) -> int:

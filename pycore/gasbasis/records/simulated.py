@@ -4,7 +4,7 @@ from __future__ import annotations
 import math
 
 from gasbasis.calculation.case import make_case
-from gasbasis.calculation.monte_carlo import MOST, agrees, simulate
+from gasbasis.calculation.monte_carlo import FEWEST, agrees, simulate
 from gasbasis.calculation.outcomes import settle
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.rules import find_rule
@@ -21,7 +21,11 @@ progress = None                        # a door may set a function (done, of) he
 
 
 def simulated(sheet: Sheet, seed: object, trials: object, take_usual: bool) -> dict:
-    """Draw, compare with the budget, and return the histogram. Raises CoreError when there is no one figure to draw."""
+    """Draw, compare with the budget, and return the histogram. Raises CoreError when there is no one figure to draw.
+
+    Without `trials` FEWEST are drawn, and `stable` says whether two digits of u had settled by then; with more, drawing
+    goes on until they have.
+    """
     if not isinstance(seed, int) or not (trials is None or isinstance(trials, int)):
         raise NotUnderstood("Seed and trials are whole numbers.", hint="Leave them out for the usual ones.", field="monte_carlo")
     path = lay(_settled_case(sheet, take_usual))
@@ -29,7 +33,7 @@ def simulated(sheet: Sheet, seed: object, trials: object, take_usual: bool) -> d
     if known is None:
         raise Missing("No input carries an uncertainty, so there is nothing to draw.",
                       hint="Give one, e.g. '142 ± 5 ppm (k=2)'.", field="hold.value")
-    found = simulate(path, seed, progress=progress or (lambda done, of: None), most=MOST if trials is None else trials)
+    found = simulate(path, seed, progress=progress or (lambda done, of: None), most=FEWEST if trials is None else trials)
     low, high = known.value - known.expanded_uncertainty, known.value + known.expanded_uncertainty
     mean_text, half_text = with_uncertainty(found.mean, (found.high - found.low) / 2)
     return {"trials": found.trials, "seed": seed, "mean": found.mean, "standard_uncertainty": found.standard_uncertainty,

@@ -44,13 +44,18 @@ def conditions_doubt(side: str, statement: Statement, flowed: bool = False) -> D
 
     Where the gas's own temperature and pressure are known (`flowed`) and no word says reference, the volume may be the actual one.
     """
-    word = statement.conditions_word
+    return _conditions_doubt(side, statement.conditions_word, flowed)
+
+
+@lru_cache(maxsize=64)
+def _conditions_doubt(side: str, word: str | None, flowed: bool) -> Doubt:
     readings = (_readings(word) or _readings(None)) + ((_ACTUAL,) if flowed and not word else ())
     question = (f"'{word}' has {len(readings)} published meanings. Which one is meant in {SIDE_TITLES[side]}?" if word
                 else f"At which temperature and pressure is the volume in {SIDE_TITLES[side]} counted?")
     return Doubt(f"{side}.conditions", "temperature and pressure", question, _CHANGES, readings)
 
 
+@lru_cache(maxsize=8)
 def temperature_doubt(side: str) -> Doubt:
     seen: dict[str, Reading] = {}
     for temperature, _, rows in _published():
@@ -60,6 +65,7 @@ def temperature_doubt(side: str) -> Doubt:
                  _CHANGES, tuple(seen.values()))
 
 
+@lru_cache(maxsize=8)
 def pressure_doubt(side: str) -> Doubt:
     seen: dict[float, Reading] = {}
     for _, pressure, rows in _published():

@@ -5,6 +5,7 @@ needs what is missing. Silence on both sides is carried over and printed.
 """
 from __future__ import annotations
 
+from functools import lru_cache
 from typing import Callable
 
 from gasbasis import facts
@@ -38,12 +39,12 @@ def _parts_by(case: Case) -> list[Doubt]:
         return []
     if len(unstated) == 2:
         unstated = ["hold"] if case.hold.parts_by is None else ["owe"]
-    return [_parts_doubt(case, side) for side in unstated]
+    return [_parts_doubt(side, case.record(side).unit.text, _trade_uses_all_three(case)) for side in unstated]
 
 
-def _parts_doubt(case: Case, side: str) -> Doubt:
-    unit = case.record(side).unit.text
-    usual = "" if _trade_uses_all_three(case) else "gas analysers and gas limits count parts by volume (common practice)"
+@lru_cache(maxsize=64)
+def _parts_doubt(side: str, unit: str, in_all_three_ways: bool) -> Doubt:
+    usual = "" if in_all_three_ways else "gas analysers and gas limits count parts by volume (common practice)"
     return Doubt(
         f"{side}.parts_by", "parts by", f"Is '{unit}' in {SIDE_TITLES[side]} by volume, by mass, or mass in volume?",
         "By mass the gas that carried it enters; mass in volume is the mass in a litre or cubic metre.",
@@ -151,6 +152,7 @@ def _water(case: Case) -> list[Doubt]:
     return doubts
 
 
+@lru_cache(maxsize=8)
 def _water_doubt(side: str, dry_because: str) -> Doubt:
     return Doubt(
         f"{side}.water", "water", f"Is the value in {SIDE_TITLES[side]} on wet or on dry gas?",
@@ -206,12 +208,17 @@ def _ambient_oxygen(case: Case) -> list[Doubt]:
     """The ambient oxygen an oxygen correction counts from is the rule's own."""
     if case.gas.ambient_oxygen is not None or not _oxygen_changes(case):
         return []
+    return [_ambient_doubt()]
+
+
+@lru_cache(maxsize=1)
+def _ambient_doubt() -> Doubt:
     readings = tuple(
         Reading(datum.text, f"{datum.text} %", (("ambient_oxygen", fixed_quantity(datum.text, "%")),),
                 f"{facts.source(datum.source).title}, {datum.locator}")
         for datum in facts.ambient_oxygens())
-    return [Doubt("gas.ambient_oxygen", "ambient oxygen", "Which oxygen content of ambient air does the rule count from?",
-                  "It is the A in (A − reference)/(A − measured); it matters most near ambient oxygen.", readings)]
+    return Doubt("gas.ambient_oxygen", "ambient oxygen", "Which oxygen content of ambient air does the rule count from?",
+                 "It is the A in (A − reference)/(A − measured); it matters most near ambient oxygen.", readings)
 
 
 def _reported_as(case: Case) -> list[Doubt]:

@@ -2,6 +2,7 @@
 from __future__ import annotations
 
 from decimal import Decimal
+from functools import lru_cache
 
 from gasbasis import facts
 from gasbasis.calculation.case import Case
@@ -9,7 +10,7 @@ from gasbasis.calculation.input_uncertainty import degrees_of_freedom, distribut
 from gasbasis.calculation.path import CONVENTION, READING, TABLE, TYPED, Drafting, Leaf
 from gasbasis.errors import Missing, OutOfRange
 from gasbasis.language.basis import Quantity, Species
-from gasbasis.language.numbers import significant
+from gasbasis.language.numbers import read_number, significant
 from gasbasis.language.species import molar_mass
 from gasbasis.language.units import unit
 
@@ -79,7 +80,7 @@ def species_mass(draft: Drafting, name: str, species: Species, field: str) -> st
                            f"{species.formula} = {added_up}; {source.title}"))
 
 
+@lru_cache(maxsize=256)
 def fixed_quantity(text: str, unit_text: str) -> Quantity:
     """A quantity from a table row, as printed there."""
-    from gasbasis.language.numbers import read_number
     return Quantity(read_number(text), unit(unit_text))

@@ -16,7 +16,7 @@ from gasbasis.errors import CoreError
 from gasbasis.language.basis import Doubt, Reading
 
 BOUND = 4096
-QUICK_BOUND = 120                      # while somebody types: beyond it one doubt at a time, and the rest when they rest
+QUICK_BOUND = 24                       # while somebody types: beyond it one doubt at a time, and the rest when they rest
 _NEGLIGIBLE = 1e-12
 
 

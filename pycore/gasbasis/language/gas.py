@@ -3,6 +3,7 @@ from __future__ import annotations
 
 import re
 from dataclasses import replace
+from functools import lru_cache
 
 from gasbasis.errors import CoreError, NotUnderstood, OutOfRange
 from gasbasis.language import gas_routes, readers
@@ -30,6 +31,11 @@ def read_gas(text: str) -> tuple[Gas, tuple[CoreError, ...]]:
     refusal = refuse_text(text, "gas")
     if refusal is not None:
         return Gas(text=text), (refusal,)
+    return _read(text)
+
+
+@lru_cache(maxsize=32)
+def _read(text: str) -> tuple[Gas, tuple[CoreError, ...]]:
     reader = Reader(text, "gas")
     walk(reader, _CLAUSES)
     if "pending" in reader.fields:

@@ -7,6 +7,7 @@ from __future__ import annotations
 
 import re
 from dataclasses import replace
+from functools import lru_cache
 
 from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language import clauses, readers
@@ -93,6 +94,11 @@ def read_statement(text: str, side: str) -> tuple[Statement, tuple[CoreError, ..
     refusal = refuse_text(text, side)
     if refusal is not None:
         return Statement(text=text), (refusal,)
+    return _read(text, side)
+
+
+@lru_cache(maxsize=64)                  # while one line is typed the others stay as they are
+def _read(text: str, side: str) -> tuple[Statement, tuple[CoreError, ...]]:
     reader = Reader(text, side)
     walk(reader, STATEMENT)
     conclude(reader)

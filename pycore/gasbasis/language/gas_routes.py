@@ -118,25 +118,23 @@ def wet_and_dry_bulb(reader) -> bool:
     return True
 
 
-def barometer(reader) -> bool:
-    found = re.compile(r"(?:barometer|barometric(?:\spressure)?|p_?bar|station pressure|ambient pressure)\s?[:=]?\s?(?:of\s)?", re.IGNORECASE).match(reader.text, reader.place)
-    quantity = _quantity(reader, found.end(), _P) if found else None
-    if quantity is None:
-        return False
-    reader.take("barometer", quantity[0], reader.place, quantity[1])
-    reader.place = quantity[1]
-    return True
+def _plain(field: str, head: str, kinds: tuple[str, ...]):
+    """A clause reader: a word and one quantity that is the field itself."""
+    pattern = re.compile(head, re.IGNORECASE)
+
+    def read(reader) -> bool:
+        found = pattern.match(reader.text, reader.place)
+        quantity = _quantity(reader, found.end(), kinds) if found else None
+        if quantity is None:
+            return False
+        reader.take(field, quantity[0], reader.place, quantity[1])
+        reader.place = quantity[1]
+        return True
+
+    return read
 
 
-def cooler(reader) -> bool:
-    """ "cooler 4 °C": the analyser's gas left a cooler at so much."""
-    found = re.compile(r"(?:(?:behind|after)\s(?:a\s)?)?(?:sample\s|gas\s)?(?:cooler|chiller|condenser)\s?(?:at|of|@|:|=)?\s?", re.IGNORECASE).match(reader.text, reader.place)
-    quantity = _quantity(reader, found.end(), _T) if found else None
-    if quantity is None:
-        return False
-    reader.take("cooler", quantity[0], reader.place, quantity[1])
-    reader.place = quantity[1]
-    return True
+_barometer = _plain("barometer", r"(?:barometer|barometric(?:\spressure)?|p_?bar|station pressure|ambient pressure)\s?[:=]?\s?(?:of\s)?", _P)
+_cooler = _plain("cooler", r"(?:(?:behind|after)\s(?:a\s)?)?(?:sample\s|gas\s)?(?:cooler|chiller|condenser)\s?(?:at|of|@|:|=)?\s?", _T)
 
-
-CLAUSES = (wet_and_dry_bulb, barometer, cooler, *ROUTES)
+CLAUSES = (wet_and_dry_bulb, _barometer, _cooler, *ROUTES)

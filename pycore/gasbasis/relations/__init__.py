@@ -5,8 +5,7 @@ from types import MappingProxyType
 from typing import Mapping
 
 from gasbasis.relations import bases, compression, gas_law, humidity, molar_mass, pressure, saturation
-from gasbasis.relations.compression import summation_factor_of_mixture
-from gasbasis.relations.molar_mass import molar_mass_of_mixture
+from gasbasis.relations.mixture import molar_mass_of_mixture, summation_factor_of_mixture
 from gasbasis.relations.relation import Relation
 
 __all__ = ["get", "every", "molar_mass_of_mixture", "summation_factor_of_mixture", "Relation"]

@@ -1,9 +1,6 @@
 """Relations of the molar mass of the gas that carries the species."""
 from __future__ import annotations
 
-import inspect
-from functools import lru_cache
-
 from gasbasis.physics import molar_mass
 from gasbasis.relations.relation import Bound, Relation, Symbol
 from gasbasis.relations.symbols import GAS_MOLAR_MASS, WATER, WATER_BOUND, marked, positive
@@ -29,24 +26,3 @@ RELATIONS = (
              Symbol("d", "", "1", "density relative to dry air, both ideal", "dimensionless"),
              {"M_gas": GAS_MOLAR_MASS, "M_air": marked(GAS_MOLAR_MASS, "air", "molar mass of dry air")}, "iso-6976-2016"),
 )
-
-
-@lru_cache(maxsize=None)
-def molar_mass_of_mixture(components: int) -> Relation:
-    """The molar mass of a mixture of so many components; arguments x_1, M_1, x_2, M_2, ..."""
-    names = [f"{letter}_{index}" for index in range(1, components + 1) for letter in "xM"]
-
-    def mixture(**values):
-        total = values["x_1"] * values["M_1"]
-        for index in range(2, components + 1):
-            total = total + values[f"x_{index}"] * values[f"M_{index}"]
-        return total
-
-    mixture.__signature__ = inspect.Signature(
-        [inspect.Parameter(name, inspect.Parameter.KEYWORD_ONLY) for name in names])
-    symbols = {}
-    for index in range(1, components + 1):
-        symbols[f"x_{index}"] = Symbol("x", str(index), "1", f"amount fraction of component {index}", "dimensionless")
-        symbols[f"M_{index}"] = Symbol("M", str(index), "kg/mol", f"molar mass of component {index}", "kg_g/mol_g")
-    return Relation(f"molar_mass_of_mixture_of_{components}", "Molar mass of the gas from its composition", mixture, GAS_MOLAR_MASS,
-                    symbols, "iso-6976-2016", "eq. 5")

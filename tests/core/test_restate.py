@@ -52,6 +52,8 @@ RAISED = [
      dict(hold="SO2 35 mg/Am3", owe="mg/m3 at 0 °C, 1 atm", gas="20 °C, gauge 1 kPa, barometer 1013 hPa")),
     ("gas.pressure_said", dict(hold="Hg 100 ng/Am3", owe="ng/m3 at 15 °C, 101.325 kPa", gas="15 °C, 62 bar, barometer 1 bar"),
      dict(hold="Hg 100 ng/Am3", owe="ng/m3 at 15 °C, 101.325 kPa", gas="15 °C, 62 bara")),
+    ("gas.pressure_column", dict(hold="SO2 35 mg/Am3", owe="mg/m3 at 0 °C, 1 atm", gas="20 °C, gauge 30 inHg, barometer 1013 hPa"),
+     dict(hold="SO2 35 mg/Am3", owe="mg/m3 at 0 °C, 1 atm", gas="20 °C, gauge 30 kPa, barometer 1013 hPa")),
     ("hold.ppt", dict(hold="CO2 4 ppt", owe="% by volume"), dict(hold="SF6 4 ppt", owe="ppb")),
     ("hold.number", dict(hold="Hg 1,234 ng/m3", owe="pg/L"), dict(hold="Hg 1,23 ng/m3", owe="pg/L")),
 ]

@@ -5,6 +5,7 @@ needs what is missing. Silence on both sides is carried over and printed.
 """
 from __future__ import annotations
 
+from dataclasses import replace
 from functools import lru_cache
 from typing import Callable
 
@@ -18,6 +19,7 @@ from gasbasis.calculation.rules import with_usual
 from gasbasis.language.basis import (CORRECTED, DRY, MASS, MASS_BY_VOLUME, MEASURED, VOLUME, WET, Doubt, MatrixGas,
                                      Reading, Route)
 from gasbasis.language.species import find
+from gasbasis.language.units import unit
 
 COMMON = "common practice, no source"
 _SIDES = ("hold", "owe")
@@ -43,10 +45,10 @@ def _parts_by(case: Case) -> list[Doubt]:
 
 
 @lru_cache(maxsize=64)
-def _parts_doubt(side: str, unit: str, in_all_three_ways: bool) -> Doubt:
+def _parts_doubt(side: str, parts: str, in_all_three_ways: bool) -> Doubt:
     usual = "" if in_all_three_ways else "gas analysers and gas limits count parts by volume (common practice)"
     return Doubt(
-        f"{side}.parts_by", "parts by", f"Is '{unit}' in {SIDE_TITLES[side]} by volume, by mass, or mass in volume?",
+        f"{side}.parts_by", "parts by", f"Is '{parts}' in {SIDE_TITLES[side]} by volume, by mass, or mass in volume?",
         "By mass the gas that carried it enters; mass in volume is the mass in a litre or cubic metre.",
         (Reading(VOLUME, "by volume (amount of substance)", (("parts_by", VOLUME),), COMMON, usual),
          Reading(MASS, "by mass", (("parts_by", MASS),), COMMON),
@@ -92,14 +94,14 @@ def _printed_conditions(case: Case) -> list[Doubt]:
     if any(kind_and_factor(case.record(side))[0] not in VOLUMETRIC for side in _SIDES):
         return []
     doubts = []
-    for (field, unit), pairs in _PRINTS.items():
+    for (field, kind), pairs in _PRINTS.items():
         first, second = getattr(hold, field), getattr(owe, field)
-        if first is None or second is None or first.unit.id != unit or second.unit.id != unit or f"hold.{field}" in case.chosen:
+        if first is None or second is None or first.unit.id != kind or second.unit.id != kind or f"hold.{field}" in case.chosen:
             continue
         texts = {first.number.text.replace(",", "."), second.number.text.replace(",", ".")}
         pair = next((pair for pair in pairs if texts == set(pair)), None)
         if pair:
-            doubts.append(Doubt(f"hold.{field}_print", f"{pair[0]} or {pair[1]} {unit}", f"Are {pair[0]} and {pair[1]} {unit} two conditions, or one printed shorter?",
+            doubts.append(Doubt(f"hold.{field}_print", f"{pair[0]} or {pair[1]} {kind}", f"Are {pair[0]} and {pair[1]} {kind} two conditions, or one printed shorter?",
                                 "Taken as printed the figure changes by a few hundredths of a percent.",
                                 (Reading("as_printed", "two, as printed", ((field, first),), COMMON), Reading("same", "one and the same", ((field, second),), COMMON))))
     return doubts
@@ -133,6 +135,23 @@ def _gauge_or_absolute(case: Case) -> list[Doubt]:
     return [Doubt("gas.pressure_said", "gas pressure", f"Is the gas pressure of {text} absolute or gauge?",
                   "A gauge pressure has the barometer still to be added: at 1 bar that is a factor of two.",
                   (Reading("absolute", "absolute", (("pressure_said", "absolute"),), COMMON), Reading("gauge", "gauge, the barometer comes on top", gauge, COMMON)))]
+
+
+_COLUMNS = {"inH2O": "inH2O_60F", "inHg": "inHg_60F"}
+
+
+def _column_temperature(case: Case) -> list[Doubt]:
+    """An inch of water at 4 degC or at 60 degF, of mercury at 0 degC or at 60 degF."""
+    route = case.gas.pressure_route
+    quantity = route.get("pressure") if route else None
+    if quantity is None or quantity.unit.id not in _COLUMNS or "gas.pressure_route" in case.chosen:
+        return []
+    warm = replace(quantity, unit=unit(_COLUMNS[quantity.unit.id]))
+    cold = "4 °C" if quantity.unit.id == "inH2O" else "0 °C"
+    return [Doubt("gas.pressure_column", quantity.unit.text, f"Is the {quantity.unit.text} counted at {cold} or at 60 °F?",
+                  "The warmer column is lighter: 0.1 % of the reading for water, 0.3 % for mercury.",
+                  (Reading("conventional", f"at {cold}, as gauges are marked", (("pressure_route", route),), COMMON, "pressure gauges are marked so (common practice)"),
+                   Reading("60F", "at 60 °F", (("pressure_route", Route(route.id, (("pressure", warm),))),), COMMON)))]
 
 
 def _needs_volume(hold_kind: str, owe_kind: str) -> bool:
@@ -283,4 +302,4 @@ def _basis_changes(case: Case) -> bool:
 
 
 _RULES: tuple[Callable[[Case], list[Doubt]], ...] = (
-    _parts_by, _conditions, _gauge_or_absolute, _printed_conditions, _barometer, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)
+    _parts_by, _conditions, _gauge_or_absolute, _column_temperature, _printed_conditions, _barometer, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)

@@ -18,7 +18,7 @@ ENGINE = ("pyodide.mjs", "pyodide.asm.mjs", "pyodide.asm.wasm")
 HEAD = '<meta charset="utf-8">'
 NOT_COPIED = ("sw.js",)
 ENTRY = "js/main.js"
-IMPORT = re.compile(r"""^\s*(?:import|export)\b[^;"']*?["'](\.{1,2}/[^"']+)["']""", re.MULTILINE)
+IMPORT = re.compile(r"""^\s*(?:import|export)\s(?:[\w*$\s{},]*?\sfrom\s*)?["'](\.{1,2}/[^"']+)["']""", re.MULTILINE)
 
 
 def build_site(runtime: Runtime, places: Places) -> Path:

@@ -43,32 +43,44 @@ def test_targets_are_large_enough_for_gloves(sheet):
 
 
 def test_the_whole_job_by_keyboard(sheet):
-    page = sheet.page
-    page.locator("#hold-text").focus()
-    page.keyboard.type("NOx 142 ppm as NO2, dry")
-    for _ in range(40):                                   # walk on to the gas line
-        page.keyboard.press("Tab")
-        if page.evaluate("document.activeElement.id") == "gas-text":
-            break
-    page.keyboard.type("9,2 % O2 dry, ambient O2 21 %")
-    for _ in range(40):
-        page.keyboard.press("Tab")
-        if page.evaluate("document.activeElement.id") == "owe-text":
-            break
-    page.keyboard.type("mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2")
+    """Hold, gas, owe, a piece corrected, a doubt settled, the working reached: no pointer is used."""
+    page, keyboard = sheet.page, sheet.page.keyboard
+    sheet.tab_to("at.id === 'hold-text'")
+    keyboard.type("NOx 142 ppm as NO2, dry")
+    keyboard.press("Enter")                                # on to the next line
+    assert sheet.focused("id") == "gas-text"
+    keyboard.type("9,2 % O2 dry, ambient O2 21 %")
+    sheet.tab_to("at.id === 'owe-text'")
+    keyboard.type("mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2")
     expect(sheet.sentence).to_have_text("depends on: parts by")
-    for _ in range(60):
-        page.keyboard.press("Tab")
-        if page.evaluate("document.activeElement.dataset.action") == "usual":
-            break
-    page.keyboard.press("Enter")
+    sheet.tab_to("at.dataset.action === 'usual'")
+    keyboard.press("Enter")
     expect(sheet.value).to_have_text("444.5 mg/m³")
+    assert sheet.focused("id") == "figure"                 # the button is gone, its place is not lost
+    sheet.tab_to("at.dataset.action === 'unsettle'")
+    keyboard.press("Space")
+    expect(sheet.sentence).to_have_text("depends on: parts by")
+    sheet.tab_to("at.matches('#doubts .reading') && at.textContent.startsWith('by volume')")
+    keyboard.press("Enter")
+    expect(sheet.value).to_have_text("444.5 mg/m³")
+    assert page.evaluate("document.activeElement.closest('#doubts') !== null")
+    page.keyboard.press("Shift+Tab")
+    page.locator("#hold-text").focus()
+    sheet.tab_to("at.dataset.field === 'value'")
+    keyboard.press("Enter")
+    expect(sheet.entry).to_be_focused()
+    keyboard.press("ControlOrMeta+a")
+    keyboard.type("71 ppm")
+    keyboard.press("Enter")
+    expect(sheet.line("hold")).to_have_value("NOx 71 ppm as NO2, dry")
+    expect(sheet.value).to_have_text("222.2 mg/m³")
+    expect(sheet.piece("hold", "value")).to_be_focused()
 
 
 def test_escape_closes_the_editor_and_gives_focus_back(sheet):
     sheet.write(**STACK)
     sheet.piece("hold", "value").click()
-    expect(sheet.page.locator(".editor input")).to_be_focused()
+    expect(sheet.entry).to_be_focused()
     sheet.page.keyboard.press("Escape")
     expect(sheet.page.locator(".editor")).to_have_count(0)
     expect(sheet.piece("hold", "value")).to_be_focused()

@@ -27,6 +27,11 @@ function draw([kind, ...parts]) {
   }
 }
 
+/** One symbol alone. @param {any[]} tree */
+export function symbol(tree) {
+  return element("math", draw(tree));
+}
+
 /**
  * An equation: result = formula (= value).
  * @param {any[]} result @param {any[]} tree @param {string} spoken @param {string} [value]

@@ -1,9 +1,9 @@
 /** Wiring: state, core, regions. Intentions come in at `dispatch`; what they mean is decided here and nowhere else. */
 import { createCore } from "./core-client.js";
-import { keepSheet, keepTheme, keptSheet, keptTheme } from "./keeping.js";
+import { keepSheet, keptSheet } from "./keeping.js";
 import { codeIn, figureAsSent, handOn } from "./link.js";
 import { startOffline } from "./offline.js";
-import { button, part } from "./page.js";
+import { keepingFocus, part } from "./page.js";
 import { mountBudget } from "./regions/budget.js";
 import { mountDoubts } from "./regions/doubts.js";
 import { mountFigure } from "./regions/figure.js";
@@ -12,9 +12,11 @@ import { mountRuleBooks } from "./regions/rule-books.js";
 import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
+import { mountExamples, mountTools } from "./regions/tools.js";
 import { mountVerdict } from "./regions/verdict.js";
 import { mountWorking } from "./regions/working.js";
 import { createState, emptySheet } from "./state.js";
+import { measureViewport } from "./viewport.js";
 
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
@@ -23,7 +25,7 @@ const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
 const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
-let offline = null, resting = 0, ready = false;
+let offline = null, resting = 0, ready = false, focusNext = null;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
@@ -46,6 +48,8 @@ function restate() {
   core.ask({ ...request, quick: true }, { channel: "restate" }).then(
     (answer) => {
       state.change({ answer, busy: false, sent: agreeing(answer) });
+      if (focusNext && state.get().sheet === sheet) focusPiece(focusNext.side, focusNext.field);
+      focusNext = null;
       if (answer.spread && !answer.spread.complete) resting = setTimeout(() => restateWhole(request, sheet), RESTING_MS);
     },
     (error) => { if (error.problem?.kind !== "superseded") state.change({ busy: false, notice: `${error.message} ${error.problem?.hint ?? ""}` }); });
@@ -82,18 +86,24 @@ async function edit({ side, field, to }) {
   const { sheet, editing } = state.get();
   try {
     const { text } = await core.ask({ task: "edit", side, field, to, text: sheet[side] });
+    focusPiece(side, field);
     state.change({ editing: null });
+    focusNext = { side, field };       // a piece that is added or renamed stands only in the next answer
     changeSheet({ [side]: text });
-    document.querySelector(`#${side} [data-field="${CSS.escape(field)}"], #${side}-text`)?.focus();
   } catch (error) {
     state.change({ editing: { ...editing, problem: error.problem ?? { message: String(error), hint: "" } } });
   }
 }
 
+function focusPiece(side, field) {
+  document.querySelector(`#${side} .piece[data-field="${CSS.escape(field)}"]`)?.focus({ preventScroll: true });
+}
+
 function settle({ doubt, reading }) {
-  const settled = { ...state.get().sheet.settled };
+  const { editing, sheet } = state.get(), settled = { ...sheet.settled };
   if (reading === null) delete settled[doubt];
   else settled[doubt] = reading;
+  if (editing) focusPiece(editing.side, editing.field);
   state.change({ editing: null });
   changeSheet({ settled });
 }
@@ -101,6 +111,23 @@ function settle({ doubt, reading }) {
 function takeUsual() {
   const open = state.get().answer.doubts.filter((doubt) => doubt.state === "open" && doubt.usual);
   changeSheet({ settled: { ...state.get().sheet.settled, ...Object.fromEntries(open.map((doubt) => [doubt.id, doubt.usual])) } });
+}
+
+/** Another sheet takes the place of this one, which is offered back. */
+function replaceSheet(sheet) {
+  const here = state.get().sheet;
+  state.change({ editing: null, sent: null, before: Object.values(here).some((part) => typeof part === "string" && part.trim()) ? here : state.get().before });
+  changeSheet({ ...emptySheet(), ...sheet });
+}
+
+async function findSpecies(text) {
+  try {
+    const { found } = await core.ask({ task: "search", what: "species", text }, { channel: "search" });
+    const { editing } = state.get();
+    if (editing?.field === "species") state.change({ editing: { ...editing, found } });
+  } catch {
+    // superseded, or nothing to search for: the list stays as it is
+  }
 }
 
 async function draw() {
@@ -144,14 +171,20 @@ const INTENTIONS = {
   text: ({ side, text }) => { state.change({ sent: null }); changeSheet({ [side]: text }); },
   open: ({ side, field }) => {
     const now = state.get().editing;
-    state.change({ editing: now?.side === side && now.field === field ? null : { side, field, problem: null } });
+    state.change({ editing: now?.side === side && now.field === field ? null : { side, field, problem: null, found: [] } });
   },
   close: () => state.change({ editing: null }),
   edit, settle, usual: takeUsual,
   note: ({ doubt, text }) => changeSheet({ notes: { ...state.get().sheet.notes, [doubt]: text } }),
   "rule-book": ({ book }) => changeSheet({ owe: book.owe, rule_book: book.id }),
+  "leave-rule-book": () => changeSheet({ rule_book: "" }),
+  "find-species": ({ text }) => findSpecies(text),
+  clear: () => { replaceSheet({}); $("hold-text").focus(); },
+  example: ({ sheet }) => replaceSheet(sheet),
+  back: () => { const { before } = state.get(); replaceSheet(before); },
+  send,
   notice: ({ text }) => state.change({ notice: text }),
-  restart: () => core.restart(),
+  restart: () => { core.restart(); restate(); },
   draw,
   "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
@@ -159,35 +192,15 @@ const INTENTIONS = {
 };
 const dispatch = (intention) => INTENTIONS[intention.type](intention);
 
-function mountTools() {
-  const more = $("more"), toggle = document.querySelector('[data-action="more"]');
-  toggle.addEventListener("click", () => { more.hidden = !more.hidden; toggle.setAttribute("aria-expanded", String(!more.hidden)); });
-  document.querySelector('[data-action="send"]').addEventListener("click", send);
-  document.querySelector('[data-action="clear"]').addEventListener("click", () => changeSheet(emptySheet()));
-  document.querySelector('[data-action="print"]').addEventListener("click", () => print());
-  const theme = part(more, "theme");
-  theme.value = keptTheme();
-  const show = () => { if (theme.value) document.documentElement.dataset.theme = theme.value; else delete document.documentElement.dataset.theme; };
-  theme.addEventListener("change", () => { keepTheme(theme.value); show(); });
-  show();
-  const back = button("Back to what was here before the link", () => { changeSheet(state.get().before); state.change({ before: null }); });
-  part(more, "back").append(back);
-  state.subscribe(({ before }) => { back.hidden = !before; });
-  fetch(new URL("../demo/sheets.json", import.meta.url)).then((reply) => reply.json()).then((demos) => {
-    const examples = $("examples");
-    part(examples, "demos").append(...demos.map((demo) => button(demo.title, () => changeSheet({ ...emptySheet(), ...demo.sheet }))));
-    state.subscribe(({ sheet }) => { examples.hidden = ["hold", "gas", "owe", "limit"].some((side) => sheet[side].trim()); });
-  }).catch(() => {});
-}
-
 const regions = [
   ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
-  mountRuleBooks($("owe"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
-  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountBudget($("budget"), dispatch), mountWorking($("working")), mountStatus($("status"), $("notice"), dispatch),
+  mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
+  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch),
+  mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
 ];
-mountTools();
-mountKeys($("keys"), $("figure"));
-state.subscribe((now) => { for (const region of regions) region(now); });
+mountKeys($("keys"));
+measureViewport($("figure"));
+state.subscribe((now) => keepingFocus(() => { for (const region of regions) region(now); }));
 const code = codeIn(location.href);
 if (code) open(code);
 else restate();

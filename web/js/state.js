@@ -1,12 +1,12 @@
 /**
  * The one state of the page: replaced, never mutated. Who wants to know subscribes.
  *
- * @typedef {{hold: string, gas: string, owe: string, limit: string, settled: Record<string, string>, notes: Record<string, string>, rule_book?: string}} Sheet
+ * @typedef {{hold: string, gas: string, owe: string, limit: string, settled: Record<string, string>, notes: Record<string, string>, rule_book: string}} Sheet
  */
 
 /** @returns {Sheet} */
 export function emptySheet() {
-  return { hold: "", gas: "", owe: "", limit: "", settled: {}, notes: {} };
+  return { hold: "", gas: "", owe: "", limit: "", rule_book: "", settled: {}, notes: {} };
 }
 
 /** @param {object} first */

@@ -1,10 +1,11 @@
 /** The uncertainty budget: a bar for each input's share, biggest first, and the table. */
-import { cloned, keyed, part, say } from "../page.js";
+import { clonedElement, element, keyed, part, say } from "../page.js";
 import { drawHistogram } from "./histogram.js";
 
 /** @param {HTMLElement} root @param {(intention: object) => void} dispatch */
 export function mountBudget(root, dispatch) {
   const draw = root.querySelector('[data-action="draw"]'), stop = root.querySelector('[data-action="stop"]'), progress = part(root, "progress");
+  const titles = [...root.querySelectorAll("thead th")].map((head) => head.textContent);
   draw.addEventListener("click", () => dispatch({ type: "draw" }));
   stop.addEventListener("click", () => dispatch({ type: "stop-drawing" }));
   return (state) => {
@@ -19,15 +20,16 @@ export function mountBudget(root, dispatch) {
     const freedom = budget.freedom_text ? `, ${budget.freedom_text} degrees of freedom` : "";
     say(part(root, "sum"), `u = ${budget.standard_text} ${budget.unit_text}, k = ${budget.coverage_text}${freedom}, U = ${budget.expanded_text} ${budget.unit_text} (${budget.relative_text})`);
     const rows = budget.rows.map((row, index) => ({ ...row, key: `${row.field}${index}` }));
-    keyed(part(root, "bars"), rows, (row) => row.key, () => /** @type {any} */ (cloned("step").firstElementChild), (node, row) => {
+    keyed(part(root, "bars"), rows, (row) => row.key, () => clonedElement("step"), (node, row) => {
       say(node.firstElementChild, row.input);
       say(node.lastElementChild, row.share_text);
       node.querySelector("i").style.setProperty("--width", `${Math.max(0, Math.min(1, row.share)) * 100}%`);
     });
-    keyed(part(root, "rows"), rows, (row) => row.key, () => document.createElement("tr"), (node, row) => {
-      node.replaceChildren(...[row.input, row.value_text, row.standard_text, row.sensitivity_text, row.contribution_text, row.share_text].map((text) => {
-        const cell = document.createElement("td");
-        cell.textContent = text;
+    keyed(part(root, "rows"), rows, (row) => row.key, () => element("tr"), (node, row) => {
+      const texts = [row.input, row.value_text, row.standard_text, row.sensitivity_text, row.contribution_text, row.share_text];
+      node.replaceChildren(...texts.map((text, column) => {
+        const cell = element("td", text, column ? "figures" : "");
+        cell.dataset.label = titles[column];
         return cell;
       }));
     });

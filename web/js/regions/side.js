@@ -1,6 +1,9 @@
 /** One side of the sheet: the text line, and its pieces as another view of it. */
-import { cloned, keyed, part, say } from "../page.js";
+import { cloned, clonedElement, element, keyed, part, say } from "../page.js";
 import { mountEditor } from "./editor.js";
+
+const NEXT = { hold: "gas-text", gas: "owe-text", owe: "limit-text", limit: "figure" };
+const ABOUT = { hold: "what you hold", gas: "the gas", owe: "what you owe", limit: "the limit" };
 
 /**
  * @param {HTMLElement} root @param {string} side @param {(intention: object) => void} dispatch
@@ -8,13 +11,22 @@ import { mountEditor } from "./editor.js";
  */
 export function mountSide(root, side, dispatch) {
   const line = root.querySelector("textarea");
-  root.append(cloned("side-parts"));
-  const echo = part(root, "echo"), problems = part(root, "problems");
+  line.after(cloned("side-parts"));
+  const echo = part(root, "echo"), problems = part(root, "problems"), list = part(root, "pieces"), tray = part(root, "tray"), more = part(root, "more");
   problems.id = `${side}-problems`;
+  tray.id = `${side}-tray`;
   line.setAttribute("aria-describedby", problems.id);
   line.addEventListener("input", () => { grow(line); dispatch({ type: "text", side, text: line.value }); });
-  line.addEventListener("keydown", (event) => { if (event.key === "Enter") { event.preventDefault(); line.blur(); } });
-  const editor = mountEditor(part(root, "editor"), side, dispatch);
+  line.addEventListener("keydown", (event) => {
+    if (event.key !== "Enter" || event.isComposing) return;
+    event.preventDefault();
+    document.getElementById(NEXT[side]).focus();
+  });
+  more.setAttribute("aria-label", `More about ${ABOUT[side]}`);
+  more.setAttribute("aria-controls", tray.id);
+  more.addEventListener("click", () => { tray.hidden = !tray.hidden; more.setAttribute("aria-expanded", String(!tray.hidden)); });
+  const pieceOf = (field) => root.querySelector(`.piece[data-field="${CSS.escape(field)}"]`);
+  const editor = mountEditor(side, dispatch, pieceOf);
   new ResizeObserver(() => grow(line)).observe(line);
 
   return (state) => {
@@ -27,24 +39,26 @@ export function mountSide(root, side, dispatch) {
     line.setAttribute("aria-invalid", String(own.some((problem) => problem.kind !== "missing")));
     showEcho(echo, text, own);
     if (record) {
-      pieces(part(root, "pieces"), record.pieces, state, "piece", ({ title, text: shown }) => [title, shown]);
-      pieces(part(root, "adds"), record.adds, state, "piece add", ({ title }) => ["", title]);
+      pieces(list, record.pieces, state, "piece");
+      pieces(part(tray, "adds"), record.adds, state, "piece add");
+      say(more, record.pieces.length ? "+ more" : "+ piece by piece");
+      more.hidden = !record.adds.length;
+      if (more.hidden) tray.hidden = true;
     }
-    part(root, "adds-box").hidden = !record?.adds.length;
     editor(state);
   };
 
-  function pieces(list, entries, state, className, words) {
-    keyed(list, entries, (entry) => entry.field, (entry) => {
-      const node = /** @type {any} */ (cloned("piece").firstElementChild);
+  function pieces(place, entries, state, className) {
+    keyed(place, entries, (entry) => entry.field, (entry) => {
+      const node = clonedElement("piece");
       node.className = className;
+      if (className !== "piece") node.append(node.firstElementChild);       // what could be said first, the example below
       node.addEventListener("click", () => dispatch({ type: "open", side, field: entry.field }));
       return node;
     }, (node, entry) => {
-      const [title, shown] = words(entry);
-      say(node.querySelector("small"), title);
-      node.querySelector("small").hidden = !title;
-      say(node.querySelector("span"), shown);
+      say(node.querySelector("small"), className === "piece" ? entry.title : `e.g. ${entry.example}`);
+      say(node.querySelector("span"), className === "piece" ? entry.text : entry.title);
+      node.querySelector("span").classList.toggle("figures", className === "piece");
       node.dataset.state = entry.state ?? "";
       node.dataset.field = entry.field;
       node.setAttribute("aria-expanded", String(state.editing?.side === side && state.editing.field === entry.field));
@@ -52,9 +66,9 @@ export function mountSide(root, side, dispatch) {
   }
 }
 
-/** A line that is still empty is no error. */
+/** A line that is still empty is no error; only the gas may be left out, until something needs it. */
 function waits(problem, side) {
-  return problem.kind === "missing" && problem.field === side;
+  return problem.kind === "missing" && problem.field === side && side !== "gas";
 }
 
 function grow(line) {
@@ -65,8 +79,8 @@ function grow(line) {
 
 function showProblems(list, problems) {
   keyed(list, problems, (problem) => problem.message, () => {
-    const node = document.createElement("li");
-    node.append(document.createElement("b"), document.createElement("span"));
+    const node = element("li");
+    node.append(element("b"), element("span"));
     return node;
   }, (node, problem) => {
     node.dataset.kind = problem.kind;
@@ -80,13 +94,12 @@ function showEcho(echo, text, problems) {
   const spans = problems.map((problem) => problem.span).filter(Boolean).sort((a, b) => a[0] - b[0]);
   echo.hidden = !spans.length;
   echo.replaceChildren();
+  if (!spans.length) return;
   const signs = [...text];             // places count characters, not UTF-16 units
   let place = 0;
   for (const [start, end] of spans) {
     if (start < place) continue;
-    const mark = document.createElement("mark");
-    mark.textContent = signs.slice(start, end).join("");
-    echo.append(signs.slice(place, start).join(""), mark);
+    echo.append(signs.slice(place, start).join(""), element("mark", signs.slice(start, end).join("")));
     place = end;
   }
   echo.append(signs.slice(place).join(""));

@@ -1,12 +1,17 @@
-/** One quiet line on the core and on being ready offline; a notice when something is asked or wrong. */
+/** One quiet line on the core and on being ready offline, a bar while it starts; a notice when something is asked or wrong. */
 import { button, part, say } from "../page.js";
 
-/** @param {HTMLElement} line @param {HTMLElement} notice @param {(intention: object) => void} dispatch */
-export function mountStatus(line, notice, dispatch) {
+/** @param {HTMLElement} line @param {HTMLElement} bar @param {HTMLElement} notice @param {HTMLElement} more @param {(intention: object) => void} dispatch */
+export function mountStatus(line, bar, notice, more, dispatch) {
   let shown = "";
   return (state) => {
+    const { phase, done, of } = state.core;
     say(part(line, "core"), coreWords(state.core));
     say(part(line, "offline"), offlineWords(state.offline));
+    say(part(more, "offline-detail"), detail(state.offline));
+    bar.hidden = phase !== "loading";
+    if (of > 1) bar.setAttribute("value", String(done / of));
+    else bar.removeAttribute("value");
     const { message, actions } = noticeWords(state);
     notice.hidden = !message;
     if (message === shown) return;
@@ -19,15 +24,20 @@ export function mountStatus(line, notice, dispatch) {
 function coreWords({ phase, stage, done, of, version }) {
   if (phase === "ready") return `version ${version}`;
   if (phase === "failed") return "not started";
-  const share = of > 1 ? ` ${Math.round(100 * done / of)} %` : "";
-  return stage === "importing" ? "starting" : `loading${share}`;
+  return of > 1 && stage !== "importing" ? `starting, ${Math.round(100 * done / of)} % loaded` : "starting";
 }
 
 function offlineWords(offline) {
-  if (!offline) return "";
-  if (offline.phase === "ready") return "· ready offline";
-  if (offline.phase === "fetching") return offline.of ? `· keeping for offline ${offline.done} of ${offline.of}` : "";
+  if (offline?.phase === "ready") return "· ready offline";
+  if (offline?.phase === "fetching" && offline.of) return `· keeping for offline ${offline.done} of ${offline.of}`;
   return "";
+}
+
+function detail(offline) {
+  if (!offline) return "";
+  const when = offline.checkedAt ? `, checked ${new Date(offline.checkedAt).toLocaleString()}` : "";
+  if (offline.phase === "ready") return `Ready offline: ${offline.done} of ${offline.of} files kept and verified${when}.`;
+  return offline.message;
 }
 
 function noticeWords({ core, offline, notice }) {

@@ -1,5 +1,5 @@
 /** What each correction did: a bar a step on a log axis. */
-import { cloned, keyed, part, say } from "../page.js";
+import { clonedElement, keyed, part, say } from "../page.js";
 
 /** @param {HTMLElement} root */
 export function mountSteps(root) {
@@ -7,7 +7,7 @@ export function mountSteps(root) {
     const steps = state.answer?.steps ?? [];
     root.hidden = !steps.length;
     keyed(part(root, "list"), steps.map((step, index) => ({ ...step, key: `${index}` })), (step) => step.key,
-      () => /** @type {any} */ (cloned("step").firstElementChild), (node, step) => {
+      () => clonedElement("step"), (node, step) => {
         say(node.firstElementChild, step.label);
         say(node.lastElementChild, step.factor_text);
         const bar = node.querySelector("i");

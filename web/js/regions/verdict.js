@@ -13,9 +13,15 @@ export function mountVerdict(root, dispatch) {
     say(part(root, "limit"), verdict.limit_text);
     say(part(root, "compared"), `${verdict.values_text} ${verdict.unit_text}${verdict.compared_on ? `, ${verdict.compared_on}` : ""}`);
     const doubt = { id: "limit.decision_rule", chosen: verdict.rule };
+    part(root, "ask").hidden = Boolean(verdict.rule);
     const rules = verdict.rule ? verdict.rules.filter((rule) => rule.id === verdict.rule) : verdict.rules;
-    keyed(part(root, "rules"), rules, (rule) => rule.id, (rule) => readingButton(doubt, asReading(rule), dispatch),
+    const show = (place, some) => keyed(place, some, (rule) => rule.id, (rule) => readingButton(doubt, asReading(rule), dispatch),
       (node, rule) => updateReading(node, doubt, asReading(rule)));
+    const lacking = verdict.rule ? [] : rules.filter((rule) => rule.problem), box = part(root, "more-rules");
+    show(part(root, "rules"), rules.filter((rule) => !lacking.includes(rule)));
+    box.hidden = !lacking.length;
+    say(box.querySelector("summary"), lacking.length === 1 ? "1 rule that needs more" : `${lacking.length} rules that need more`);
+    show(part(root, "lacking"), lacking);
     const needs = verdict.rule ? verdict.rules.find((rule) => rule.id === verdict.rule).needs : "";
     part(root, "number-box").hidden = !needs;
     say(part(root, "number-label"), needs);
@@ -26,7 +32,7 @@ export function mountVerdict(root, dispatch) {
 }
 
 function asReading(rule) {
-  return { id: rule.id, label: rule.title, source: rule.help, usual_because: "", text: rule.words.join(" or ") || rule.problem?.message || "", problem: null };
+  return { id: rule.id, label: rule.title, source: rule.help, usual_because: "", text: rule.words.join(" or "), problem: rule.problem };
 }
 
 function detail(decision) {

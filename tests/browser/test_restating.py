@@ -58,7 +58,7 @@ def test_a_piece_changes_the_text_and_the_text_changes_the_pieces(sheet):
 
 def test_a_piece_is_added_and_taken_out(sheet):
     page = sheet.write(hold="SO2 35 mg/m3", owe="ug/m3").page
-    page.get_by_role("button", name="More about what you hold").click()
+    page.get_by_role("button", name="+ more about what you hold").click()
     sheet.piece("hold", "water").click()
     page.locator(".editor").get_by_role("button", name="dry", exact=True).click()
     expect(sheet.line("hold")).to_have_value("SO2 35 mg/m3, dry")

@@ -52,7 +52,12 @@ function restate() {
       focusNext = null;
       if (answer.spread && !answer.spread.complete) resting = setTimeout(() => restateWhole(request, sheet), RESTING_MS);
     },
-    (error) => { if (error.problem?.kind !== "superseded") state.change({ busy: false, notice: `${error.message} ${error.problem?.hint ?? ""}` }); });
+    (error) => {
+      const kind = error.problem?.kind;
+      if (kind === "superseded") return;
+      // A core that is not there is told of by its own notice, which goes when it is back.
+      state.change(kind === "unavailable" ? { busy: false } : { busy: false, notice: `${error.message} ${error.problem?.hint ?? ""}` });
+    });
 }
 
 /** Every combination of readings, once the person rests. */

@@ -22,7 +22,8 @@ export function mountSide(root, side, dispatch) {
     event.preventDefault();
     document.getElementById(NEXT[side]).focus();
   });
-  more.setAttribute("aria-label", `More about ${ABOUT[side]}`);
+  const words = element("span");
+  more.append(words, element("span", ` about ${ABOUT[side]}`, "hidden"));
   more.setAttribute("aria-controls", tray.id);
   more.addEventListener("click", () => { tray.hidden = !tray.hidden; more.setAttribute("aria-expanded", String(!tray.hidden)); });
   const pieceOf = (field) => root.querySelector(`.piece[data-field="${CSS.escape(field)}"]`);
@@ -41,7 +42,7 @@ export function mountSide(root, side, dispatch) {
     if (record) {
       pieces(list, record.pieces, state, "piece");
       pieces(part(tray, "adds"), record.adds, state, "piece add");
-      say(more, record.pieces.length ? "+ more" : "+ piece by piece");
+      say(words, record.pieces.length ? "+ more" : "+ piece by piece");
       more.hidden = !record.adds.length;
       if (more.hidden) tray.hidden = true;
     }

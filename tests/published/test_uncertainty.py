@@ -87,8 +87,18 @@ def test_monte_carlo_agrees_with_the_budget_on_a_nearly_linear_route() -> None:
     assert record["standard_uncertainty"] == pytest.approx(known["standard_uncertainty"], rel=0.02)
     again = json.loads(answer(json.dumps({"task": "monte_carlo", "sheet": STACK, "seed": 7})))["answer"]
     assert again["mean"] == record["mean"]                                     # seeded
-    # the shortest 95 % interval of a Gaussian is +-1.96 u, the budget's +-2 u: they differ by more than the tolerance
+    # the shortest 95 % interval of a Gaussian is +-1.96 u
     assert record["high"] - record["low"] == pytest.approx(2 * 1.96 * known["standard_uncertainty"], rel=0.02)
+
+
+@pytest.mark.native
+def test_a_linear_gaussian_route_is_confirmed_and_a_rectangular_one_is_not() -> None:
+    """JCGM 101:2008, clause 8 and 9.2.2: Gaussian inputs added up validate the budget; one rectangular input does not."""
+    def drawn(hold: str) -> dict:
+        return json.loads(answer(json.dumps({"task": "monte_carlo", "sheet": dict(hold=hold, owe="ppm by volume"), "seed": 5})))["answer"]
+    gaussian, rectangular = drawn("SO2 100 ± 2.2 ppmv (1 s)"), drawn("SO2 100 ± 6 ppmv (rectangular)")
+    assert gaussian["agrees"] is True and gaussian["budget_high"] == pytest.approx(100 + 1.959964 * 2.2, rel=1e-6)
+    assert rectangular["agrees"] is False       # its 95 % interval is 0.95 of the width: 105.7, the Gaussian's 106.8
 
 
 @pytest.mark.native

@@ -135,11 +135,11 @@ async function findSpecies(text) {
   }
 }
 
-async function draw() {
+async function draw({ trials }) {
   const { sheet } = state.get();
   state.change({ drawn: { sheet, busy: true, record: null } });
   try {
-    const record = await core.ask({ task: "monte_carlo", sheet: { schema: 1, ...sheet } });
+    const record = await core.ask({ task: "monte_carlo", sheet: { schema: 1, ...sheet }, ...(trials ? { trials } : {}) });
     state.change({ drawn: { sheet, busy: false, record } });
   } catch (error) {
     if (state.get().drawn) state.change({ drawn: null, notice: `${error.message} ${error.problem?.hint ?? ""}` });

@@ -2,9 +2,10 @@
 from __future__ import annotations
 
 import math
+from statistics import NormalDist
 
 from gasbasis.calculation.case import make_case
-from gasbasis.calculation.monte_carlo import FEWEST, agrees, simulate
+from gasbasis.calculation.monte_carlo import FEWEST, MOST, agrees, simulate
 from gasbasis.calculation.outcomes import settle
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.rules import find_rule
@@ -16,6 +17,7 @@ from gasbasis.language.statement import read_statement
 from gasbasis.records.restated import settle_calm
 from gasbasis.records.sheet import Sheet
 
+_QUANTILE = NormalDist().inv_cdf(0.975)  # both intervals must hold 95 %; k = 2 would hold 95.45
 _POINTS = 80                           # of the drawn curve
 progress = None                        # a door may set a function (done, of) here; it is called after each block
 
@@ -23,8 +25,8 @@ progress = None                        # a door may set a function (done, of) he
 def simulated(sheet: Sheet, seed: object, trials: object, take_usual: bool) -> dict:
     """Draw, compare with the budget, and return the histogram. Raises CoreError when there is no one figure to draw.
 
-    Without `trials` FEWEST are drawn, and `stable` says whether two digits of u had settled by then; with more, drawing
-    goes on until they have.
+    Without `trials` FEWEST are drawn; with more, drawing goes on until two digits of u have settled (`stable`). `agrees` is
+    None while the draws scatter too much to tell.
     """
     if not isinstance(seed, int) or not (trials is None or isinstance(trials, int)):
         raise NotUnderstood("Seed and trials are whole numbers.", hint="Leave them out for the usual ones.", field="monte_carlo")
@@ -34,9 +36,10 @@ def simulated(sheet: Sheet, seed: object, trials: object, take_usual: bool) -> d
         raise Missing("No input carries an uncertainty, so there is nothing to draw.",
                       hint="Give one, e.g. '142 ± 5 ppm (k=2)'.", field="hold.value")
     found = simulate(path, seed, progress=progress or (lambda done, of: None), most=FEWEST if trials is None else trials)
-    low, high = known.value - known.expanded_uncertainty, known.value + known.expanded_uncertainty
+    half = _QUANTILE * known.standard_uncertainty
+    low, high = known.value - half, known.value + half
     mean_text, half_text = with_uncertainty(found.mean, (found.high - found.low) / 2)
-    return {"trials": found.trials, "seed": seed, "mean": found.mean, "standard_uncertainty": found.standard_uncertainty,
+    return {"trials": found.trials, "most": MOST, "seed": seed, "mean": found.mean, "standard_uncertainty": found.standard_uncertainty,
             "unit_text": path.shown.unit_text, "mean_text": mean_text, "half_text": half_text,
             "low_text": significant(found.low, 4), "high_text": significant(found.high, 4), "low": found.low, "high": found.high,
             "budget_low": low, "budget_high": high, "budget_low_text": significant(low, 4), "budget_high_text": significant(high, 4),

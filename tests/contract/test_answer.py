@@ -86,3 +86,23 @@ def test_terminal_json() -> None:
     run = subprocess.run([sys.executable, "-m", "gasbasis", "restate", "--hold", "1 ng/m3", "--owe", "pg/L", "--json"], capture_output=True, text=True, timeout=60)
     record = json.loads(run.stdout)
     assert record["figure"]["value"] == 1.0 and record["working"] and record["doubts"] == []
+
+
+@pytest.mark.native
+def test_terminal_record_is_read_back(tmp_path: Path) -> None:
+    def run(*arguments: str) -> subprocess.CompletedProcess:
+        return subprocess.run([sys.executable, "-m", "gasbasis", *arguments], capture_output=True, text=True, encoding="utf-8", timeout=60, env={**os.environ, "PYTHONIOENCODING": "utf-8"})
+    sheet = ("--hold", "Hg 1 ppb v/v", "--owe", "ug/m3 at 20 °C, 1 atm", "--by", "A. Tester")
+    printed = run("record", *sheet)
+    assert printed.returncode == 0 and "8.339 µg/m³" in printed.stdout and "by A. Tester" in printed.stdout and "Checksum sha256:" in printed.stdout
+    text = run("record", *sheet, "--json").stdout
+    file = tmp_path / "record.json"
+    file.write_text(text, "utf-8")
+    read = run("check", str(file))
+    assert read.returncode == 0 and "Recomputed here: the same" in read.stdout
+    file.write_text(text.replace("Hg 1 ppb", "Hg 2 ppb"), "utf-8")
+    assert run("check", str(file)).returncode == 3
+    file.write_text("{", "utf-8")
+    assert run("check", str(file)).returncode == 2
+    assert run("check", str(tmp_path / "none.json")).returncode == 2
+    assert run("record", "--hold", "Hg", "--owe", "ug/m3").returncode == 2

@@ -2,6 +2,7 @@
 const SHEET = "gasbasis.sheet";
 const ROW = "gasbasis.row";
 const THEME = "gasbasis.theme";
+const BY = "gasbasis.by";
 
 /** Each storage can be switched off or full: the page works without, and the inputs are still on it. */
 const PLACES = [() => sessionStorage, () => localStorage];
@@ -57,3 +58,8 @@ export function holdOnTo(sheet, row) {
 export const keptTheme = () => read(THEME) ?? "";
 /** @param {string} theme */
 export const keepTheme = (theme) => write(THEME, theme);
+
+/** Who made the last record here, so that it is typed once. */
+export const keptBy = () => read(BY) ?? "";
+/** @param {string} by */
+export const keepBy = (by) => write(BY, by);

@@ -1,7 +1,7 @@
 """The basis of a figure spelled out in words. No unit ever stands without it."""
 from __future__ import annotations
 
-from gasbasis.calculation.case import VOLUMETRIC, Case, kind_and_factor, stated_oxygen
+from gasbasis.calculation.case import VOLUMETRIC, Case, kind_and_factor, stated_carbon_dioxide, stated_oxygen
 from gasbasis.calculation.leaves import kelvin_text
 from gasbasis.calculation.path import Drafting
 from gasbasis.language.basis import Species, Statement
@@ -33,6 +33,7 @@ def basis_words(case: Case, water: str | None, draft: Drafting) -> tuple[str, ..
         words.append(f"in {case.owe.total_pressure.number.text} {case.owe.total_pressure.unit.text}")
     words.append(water if water is not None else "water: not stated, as held")
     words.extend(_oxygen(case))
+    words.extend(_carbon_dioxide(case))
     matrix = case.hold.matrix_gas or case.gas.matrix_gas or case.owe.matrix_gas
     if kind == "mass_fraction" and matrix is not None:
         words.append(_MATRIX[matrix.id])
@@ -59,10 +60,21 @@ def _conditions(case: Case) -> str:
     return f"at {temperature}, {pressure}"
 
 
+def _carbon_dioxide(case: Case) -> list[str]:
+    owed, held = stated_carbon_dioxide(case.owe), stated_carbon_dioxide(case.hold)
+    if owed is not None:
+        return [f"at {owed.number.text} % CO₂"]
+    if held is None or stated_oxygen(case.owe) is not None:
+        return []
+    return ["at the measured carbon dioxide" if case.owe.carbon_dioxide_meaning == "measured" else f"at {held.number.text} % CO₂, as held"]
+
+
 def _oxygen(case: Case) -> list[str]:
     owed, held = stated_oxygen(case.owe), stated_oxygen(case.hold)
     if owed is not None:
         return [f"at {owed.number.text} % O₂"]
+    if stated_carbon_dioxide(case.owe) is not None:
+        return []
     if held is not None and case.owe.oxygen_meaning != "measured":
         return [f"at {held.number.text} % O₂, as held"]
     if case.hold.oxygen is not None:

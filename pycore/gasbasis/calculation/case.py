@@ -65,7 +65,22 @@ def make_case(hold: Statement, gas: Gas, owe: Statement, rule: RuleBook | None =
         gas = replace(gas, ambient_oxygen=owe.ambient_oxygen)
     if owe.oxygen is not None and owe.oxygen_meaning is None:
         owe = replace(owe, oxygen_meaning="corrected")      # owed "at 11 % O2" can only be what to correct to
+    if owe.carbon_dioxide is not None and owe.carbon_dioxide_meaning is None:
+        owe = replace(owe, carbon_dioxide_meaning="corrected")
+    if owe.oxygen is not None and owe.carbon_dioxide is not None:
+        raise OutOfRange("You owe a figure at a reference oxygen and at a reference carbon dioxide: a correction is by one of them.",
+                         hint="Keep the one the permit names.", field="owe.carbon_dioxide")
+    owe = _undone(hold, owe)
     return Case(hold, gas, owe, rule)
+
+
+def _undone(hold: Statement, owe: Statement) -> Statement:
+    """Referred to the one diluent, a figure is at the measured content of the other."""
+    if stated_carbon_dioxide(owe) is not None and stated_oxygen(hold) is not None:
+        return replace(owe, oxygen_meaning="measured")
+    if stated_oxygen(owe) is not None and stated_carbon_dioxide(hold) is not None:
+        return replace(owe, carbon_dioxide_meaning="measured")
+    return owe
 
 
 def kind_and_factor(statement: Statement) -> tuple[str, float]:
@@ -84,6 +99,19 @@ def kind_and_factor(statement: Statement) -> tuple[str, float]:
 def stated_oxygen(statement: Statement) -> Quantity | None:
     """The oxygen a statement is referred to, if it says that it was corrected to one."""
     return statement.oxygen if statement.oxygen_meaning == "corrected" else None
+
+
+def stated_carbon_dioxide(statement: Statement) -> Quantity | None:
+    """The carbon dioxide a statement is referred to, if it says that it was corrected to one."""
+    return statement.carbon_dioxide if statement.carbon_dioxide_meaning == "corrected" else None
+
+
+def diluent_changes(hold: Statement, owe: Statement) -> bool:
+    """Whether a correction to oxygen or carbon dioxide is made or undone on the way."""
+    pairs = ((stated_oxygen(hold), stated_oxygen(owe), owe.oxygen_meaning),
+             (stated_carbon_dioxide(hold), stated_carbon_dioxide(owe), owe.carbon_dioxide_meaning))
+    return any((owed is not None and (held is None or held.si != owed.si)) or (held is not None and meaning == "measured")
+               for held, owed, meaning in pairs)
 
 
 def same_conditions(first: Statement, second: Statement) -> bool:

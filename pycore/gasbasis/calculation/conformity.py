@@ -16,7 +16,8 @@ from gasbasis.language.basis import Doubt, Reading, Statement
 
 RULE = "limit.decision_rule"
 NUMBER = "limit.decision_number"
-_INHERITED = ("temperature", "pressure", "conditions_word", "actual_volume", "water", "oxygen", "oxygen_meaning", "reported_as", "species")
+_INHERITED = ("temperature", "pressure", "conditions_word", "actual_volume", "water", "oxygen", "oxygen_meaning", "carbon_dioxide", "carbon_dioxide_meaning",
+              "reported_as", "species")
 _STEPS = 60
 _CLOSE = 1e-12
 
@@ -27,6 +28,9 @@ def limit_statement(limit: Statement, owe: Statement) -> Statement:
     carried = {name: getattr(owe, name) for name in _INHERITED if getattr(limit, name) is None or getattr(limit, name) is False}
     if (limit.temperature or limit.pressure or limit.conditions_word) and same_kind:
         carried = {name: value for name, value in carried.items() if name not in ("temperature", "pressure", "conditions_word", "actual_volume")}
+    for own, other in (("oxygen", "carbon_dioxide"), ("carbon_dioxide", "oxygen")):
+        if getattr(limit, own) is not None:    # a limit is at one reference: its own oxygen shuts out an owed carbon dioxide
+            carried = {name: value for name, value in carried.items() if not name.startswith(other)}
     if limit.unit.kind == "parts" and limit.parts_by is None and owe.unit.kind == "parts":
         carried["parts_by"] = owe.parts_by
     return replace(limit, **carried)

@@ -11,8 +11,8 @@ from typing import Callable
 
 from gasbasis import facts
 from gasbasis.calculation.case import (MASS_FRACTION, MASS_LIKE, PARTIAL_PRESSURE,
-                                       UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor, same_conditions,
-                                       stated_oxygen)
+                                       UNSTATED_PARTS, VOLUMETRIC, Case, diluent_changes, kind_and_factor,
+                                       same_conditions, stated_carbon_dioxide, stated_oxygen)
 from gasbasis.calculation.conditions import conditions_doubt, pressure_doubt, temperature_doubt
 from gasbasis.calculation.leaves import SIDE_TITLES, fixed_quantity
 from gasbasis.calculation.rules import with_usual
@@ -163,10 +163,10 @@ def _water(case: Case) -> list[Doubt]:
     """Wet or dry: asked when one side states it and the other does not, or oxygen is corrected."""
     hold, owe = case.hold, case.owe
     doubts = []
-    if hold.water is None and (owe.water is not None or _oxygen_changes(case)):
+    if hold.water is None and (owe.water is not None or diluent_changes(hold, owe)):
         doubts.append(_water_doubt("hold", ""))
-    if owe.water is None and (hold.water is not None or _oxygen_changes(case)):
-        usual = "a figure at a reference oxygen is stated on dry gas" if stated_oxygen(owe) else ""
+    if owe.water is None and (hold.water is not None or diluent_changes(hold, owe)):
+        usual = "a figure at a reference oxygen or carbon dioxide is stated on dry gas" if stated_oxygen(owe) or stated_carbon_dioxide(owe) else ""
         doubts.append(_water_doubt("owe", usual))
     return doubts
 
@@ -179,32 +179,42 @@ def _water_doubt(side: str, dry_because: str) -> Doubt:
         (Reading(DRY, "dry", (("water", DRY),), COMMON, dry_because), Reading(WET, "wet", (("water", WET),), COMMON)))
 
 
-def _oxygen_meaning(case: Case) -> list[Doubt]:
+_DILUENTS = (("oxygen", "oxygen", "O₂"), ("carbon_dioxide", "carbon dioxide", "CO₂"))
+
+
+def _diluent_meaning(case: Case) -> list[Doubt]:
     """'at 9 % O2': measured in the gas, or already corrected to it. On the owed side it is what to correct to."""
     hold, owe = case.hold, case.owe
-    if hold.oxygen is None or hold.oxygen_meaning is not None:
-        return []
-    if owe.oxygen is None and owe.oxygen_meaning is None and case.gas.oxygen is None:
-        return []
-    percent = hold.oxygen.number.text
-    return [Doubt(
-        "hold.oxygen_meaning", f"{percent} % O₂", f"Is {percent} % the oxygen measured, or the oxygen it is corrected to?",
-        "A measured oxygen is where the correction starts; a corrected value has had it already.",
-        (Reading(MEASURED, "measured", (("oxygen_meaning", MEASURED),), COMMON),
-         Reading(CORRECTED, "corrected to it", (("oxygen_meaning", CORRECTED),), COMMON)))]
+    doubts = []
+    for field, name, formula in _DILUENTS:
+        meaning = f"{field}_meaning"
+        stated, owed = getattr(hold, field), getattr(owe, field)
+        if stated is None or getattr(hold, meaning) is not None:
+            continue
+        if owed is None and getattr(owe, meaning) is None and getattr(case.gas, field) is None:
+            continue
+        percent = stated.number.text
+        doubts.append(Doubt(
+            f"hold.{meaning}", f"{percent} % {formula}", f"Is {percent} % the {name} measured, or the {name} it is corrected to?",
+            f"A measured {name} is where the correction starts; a corrected value has had it already.",
+            (Reading(MEASURED, "measured", ((meaning, MEASURED),), COMMON), Reading(CORRECTED, "corrected to it", ((meaning, CORRECTED),), COMMON))))
+    return doubts
 
 
-def _owed_oxygen(case: Case) -> list[Doubt]:
-    """The held value is at a reference oxygen and the owed side is silent about it."""
-    held = stated_oxygen(case.hold)
-    if held is None or case.owe.oxygen is not None or case.owe.oxygen_meaning is not None:
-        return []
-    return [Doubt(
-        "owe.oxygen", "oxygen", f"You hold a value at {held.number.text} % O₂. Is the owed figure at the same?",
-        "Left at the reference oxygen the value stays; as measured, the correction is undone.",
-        (Reading("as_held", f"at {held.number.text} % O₂ too", (("oxygen", case.hold.oxygen), ("oxygen_meaning", CORRECTED)),
-                 COMMON),
-         Reading(MEASURED, "as measured in the gas", (("oxygen_meaning", MEASURED),), COMMON)))]
+def _owed_diluent(case: Case) -> list[Doubt]:
+    """The held value is at a reference oxygen or carbon dioxide and the owed side is silent about it."""
+    doubts = []
+    for field, name, formula in _DILUENTS:
+        meaning = f"{field}_meaning"
+        if getattr(case.hold, meaning) != CORRECTED or getattr(case.owe, field) is not None or getattr(case.owe, meaning) is not None:
+            continue
+        held = getattr(case.hold, field)
+        doubts.append(Doubt(
+            f"owe.{field}", name, f"You hold a value at {held.number.text} % {formula}. Is the owed figure at the same?",
+            f"Left at the reference {name} the value stays; as measured, the correction is undone.",
+            (Reading("as_held", f"at {held.number.text} % {formula} too", ((field, held), (meaning, CORRECTED)), COMMON),
+             Reading(MEASURED, "as measured in the gas", ((meaning, MEASURED),), COMMON))))
+    return doubts
 
 
 def _oxygen_water(case: Case) -> list[Doubt]:
@@ -298,8 +308,8 @@ def _corrects_from_measured(case: Case) -> bool:
 def _basis_changes(case: Case) -> bool:
     hold, owe = case.hold, case.owe
     water = hold.water is not None and owe.water is not None and hold.water != owe.water
-    return water or _oxygen_changes(case)
+    return water or diluent_changes(hold, owe)
 
 
 _RULES: tuple[Callable[[Case], list[Doubt]], ...] = (
-    _parts_by, _conditions, _gauge_or_absolute, _column_temperature, _printed_conditions, _barometer, _reported_as, _oxygen_meaning, _owed_oxygen, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)
+    _parts_by, _conditions, _gauge_or_absolute, _column_temperature, _printed_conditions, _barometer, _reported_as, _diluent_meaning, _owed_diluent, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)

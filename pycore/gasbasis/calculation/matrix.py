@@ -2,13 +2,12 @@
 from __future__ import annotations
 
 from gasbasis import facts, relations
-from gasbasis.calculation import leaves
+from gasbasis.calculation import composition, leaves
 from gasbasis.calculation.case import Case
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Shown, Step
 from gasbasis.calculation.water import residual_water, water_content
 from gasbasis.errors import Missing, OutOfRange
 from gasbasis.language.basis import DRY, WET, MatrixGas, Quantity
-from gasbasis.language.numbers import significant
 from gasbasis.language.species import find
 
 _GRAM_PER_MOLE = Shown(1e-3, "g/mol")
@@ -61,6 +60,20 @@ def measured_oxygen(case: Case) -> tuple[Quantity, str | None, str]:
     return gas.oxygen, gas.oxygen_water, "gas.oxygen"
 
 
+def carbon_dioxide_dry(draft: Drafting, case: Case) -> str:
+    """The name of the measured carbon dioxide on dry gas. [mol/mol] Raises Missing."""
+    hold, gas = case.hold, case.gas
+    own = hold.carbon_dioxide is not None and hold.carbon_dioxide_meaning == "measured"
+    quantity, water, field = ((hold.carbon_dioxide, hold.carbon_dioxide_water or hold.water, "hold.carbon_dioxide") if own
+                              else (gas.carbon_dioxide, gas.carbon_dioxide_water, "gas.carbon_dioxide"))
+    if quantity is None:
+        raise Missing("The measured carbon dioxide is needed: for a correction to it, and for the molar mass of a combustion gas.",
+                      hint="Add it to the gas, e.g. '10.1 % CO2 dry'; for the molar mass alone 'M 30.2 g/mol' will do.",
+                      field="gas.carbon_dioxide")
+    name = leaves.from_quantity(draft, case, "CO2", quantity, field)
+    return name if water != WET else _dried(draft, case, "carbon_dioxide_dry_from_wet", "CO2_wet", name, "CO2_dry", "%", 0.01)
+
+
 def _dried(draft: Drafting, case: Case, relation_id: str, argument: str, name: str, result: str,
            unit_text: str, factor: float) -> str:
     h = water_content(draft, case, "to bring the oxygen from wet to dry gas")
@@ -89,28 +102,12 @@ def _stated(draft: Drafting, case: Case, matrix: MatrixGas) -> str:
 
 
 def _composition(draft: Drafting, case: Case, matrix: MatrixGas) -> str:
-    """Mixture molar mass over the composition brought to 100 %."""
-    total = sum(quantity.si for _, quantity in matrix.composition)
-    arguments: dict[str, str] = {}
-    for index, (species, quantity) in enumerate(matrix.composition, start=1):
-        share = quantity.si / total
-        arguments[f"x_{index}"] = draft.leaf(Leaf(
-            f"x_{species.id}", share, significant(share, 6), "mol/mol", "typed",
-            f"typed in It was in ({quantity.number.text} %, brought to a total of 100 %)", "gas.matrix_gas"))
-        arguments[f"M_{index}"] = leaves.species_mass(draft, f"M_{species.id}", species, "gas.matrix_gas")
-    relation = relations.molar_mass_of_mixture(len(matrix.composition))
-    return draft.step(Step(relation, arguments, "M_gas", _GRAM_PER_MOLE))
+    return composition.molar_mass(draft, matrix)
 
 
 def _combustion_gas(draft: Drafting, case: Case, matrix: MatrixGas) -> str:
     oxygen = oxygen_dry(draft, case)
-    if case.gas.carbon_dioxide is None:
-        raise Missing("The molar mass of a combustion gas is worked out from its oxygen and carbon dioxide.",
-                      hint="Add the carbon dioxide, e.g. '10.1 % CO2 dry', or give the molar mass: 'M 30.2 g/mol'.",
-                      field="gas.carbon_dioxide")
-    name = leaves.from_quantity(draft, case, "CO2", case.gas.carbon_dioxide, "gas.carbon_dioxide")
-    if case.gas.carbon_dioxide_water == WET:
-        name = _dried(draft, case, "oxygen_dry_from_wet", "O_wet", name, "CO2_dry", "%", 0.01)
+    name = carbon_dioxide_dry(draft, case)
     rounded = {f"M_{gas}": _method_3(draft, gas) for gas in ("O2", "CO2", "N2")}
     return draft.step(Step(relations.get("molar_mass_of_combustion_gas"), {"O2": oxygen, "CO2": name, **rounded}, "M_gas", _GRAM_PER_MOLE))
 

@@ -2,12 +2,11 @@
 from __future__ import annotations
 
 from gasbasis import facts, relations
-from gasbasis.calculation import leaves
+from gasbasis.calculation import composition, leaves
 from gasbasis.calculation.case import Case
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Shown, Step
 from gasbasis.errors import Missing, OutOfRange
 from gasbasis.language.basis import Quantity
-from gasbasis.language.numbers import significant
 
 _ONE = Shown(1.0, "")
 _KELVIN = {"0": 273.15, "15": 288.15, "15.55": 288.7, "20": 293.15}      # degC as the table heads its columns; 15.55 stands for 60 degF
@@ -22,16 +21,14 @@ def compression_factor(draft: Drafting, case: Case, side: str, temperature: Quan
     table = facts.table("iso6976_2016")
     column = _column(temperature)
     rows = {row["species"]: row["s"][column] for row in table["components"]}
-    total = sum(quantity.si for _, quantity in matrix.composition)
+    fractions = composition.amount_fractions(draft, matrix)
     source = f"{facts.source(table['source']).title}, {table['locator']}"
     arguments = {}
-    for index, (species, quantity) in enumerate(matrix.composition, start=1):
+    for index, (species, _) in enumerate(matrix.composition, start=1):
         if species.id not in rows:
             raise OutOfRange(f"{species.name} has no summation factor in ISO 6976.", hint="Leave it out of the composition, or leave out 'real gas'.",
                              field="gas.matrix_gas")
-        share = quantity.si / total
-        arguments[f"x_{index}"] = draft.leaf(Leaf(f"x_{species.id}", share, significant(share, 6), "mol/mol", "typed",
-                                                  "typed in It was in, brought to a total of 100 %", "gas.matrix_gas"))
+        arguments[f"x_{index}"] = fractions[species.id]
         arguments[f"s_{index}"] = draft.leaf(Leaf(f"s_{species.id}_{column}", float(rows[species.id]), rows[species.id], "", TABLE, f"{source}, {column} °C"))
     s = draft.step(Step(relations.summation_factor_of_mixture(len(matrix.composition)), arguments, f"s_{side}", _ONE))
     p_0 = draft.leaf(Leaf("p_0_iso_6976", float(table["p0"]) * 1e3, table["p0"], "kPa", TABLE, source))

@@ -13,7 +13,7 @@ from gasbasis.calculation import leaves, matrix, pressure, real_gas, rules, wate
 from gasbasis.calculation.basis_words import basis_words, species_words, unit_words
 from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_CONCENTRATION, MASS_FRACTION,
                                        MASS_LIKE, PARTIAL_PRESSURE, UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor,
-                                       same_conditions, stated_oxygen)
+                                       diluent_changes, same_conditions, stated_carbon_dioxide, stated_oxygen)
 from gasbasis.calculation.entity import entities_per, entity
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Path, Shown, Step
 from gasbasis.errors import Missing, OutOfRange
@@ -237,6 +237,21 @@ class _Laying:
                              {"A": ambient, "O_ref": self.oxygen_leaf("hold"), "O": matrix.oxygen_dry(self.draft, self.case)},
                              "oxygen as measured")
 
+    def to_carbon_dioxide(self) -> None:
+        """Refer the content to the owed carbon dioxide, on dry gas: contents go as the carbon dioxide does."""
+        held, owed = stated_carbon_dioxide(self.case.hold), stated_carbon_dioxide(self.case.owe)
+        if owed is None and (held is None or self.case.owe.carbon_dioxide_meaning != "measured"):
+            return
+        if held is not None and owed is not None and held.si == owed.si:
+            return
+        if self.place.water == WET:
+            self.to_water(DRY)
+        sides = {side: leaves.from_quantity(self.draft, self.case, f"CO2_ref_{side}", quantity, f"{side}.carbon_dioxide")
+                 for side, quantity in (("hold", held), ("owe", owed)) if quantity is not None}
+        measured = matrix.carbon_dioxide_dry(self.draft, self.case) if len(sides) == 1 else ""
+        label = f"carbon dioxide to {owed.number.text} %" if owed is not None else "carbon dioxide as measured"
+        self.oxygen_step("corrected_to_reference_carbon_dioxide", {"CO2_ref": sides.get("owe", measured), "CO2": sides.get("hold", measured)}, label)
+
     def correct_oxygen(self, ambient: str, owed: Quantity) -> None:
         """From the measured oxygen to the owed one, as far as the rule lets it."""
         rule, measured = self.case.rule, matrix.oxygen_dry(self.draft, self.case)
@@ -295,9 +310,7 @@ class _Laying:
     def needs_basis_change(self) -> bool:
         hold, owe = self.case.hold, self.case.owe
         water = hold.water is not None and owe.water is not None and hold.water != owe.water
-        held, owed = stated_oxygen(hold), stated_oxygen(owe)
-        return water or (owed is not None and (held is None or held.si != owed.si)) or (
-            held is not None and owe.oxygen_meaning == "measured")
+        return water or diluent_changes(hold, owe)
 
     def to_owed_kind(self) -> None:
         if self.place.kind not in MASS_LIKE:
@@ -325,7 +338,9 @@ class _Laying:
 
     def to_bases(self) -> None:
         self.behind_cooler()
-        self.to_oxygen()
+        undo_oxygen_first = stated_carbon_dioxide(self.case.owe) is not None
+        for move in (self.to_oxygen, self.to_carbon_dioxide) if undo_oxygen_first else (self.to_carbon_dioxide, self.to_oxygen):
+            move()
         self.to_water(self.case.owe.water)
 
     def from_or_to_mass_fraction(self) -> None:

@@ -18,6 +18,27 @@ _HIGHEST = 5e5                         # Pa; at 60 bar p_sat/p is a third too lo
 
 def water_content(draft: Drafting, case: Case, why: str) -> str:
     """The name of the water content. [mol/mol] Raises Missing, saying `why` it is needed."""
+    if case.gas.droplets:
+        return _with_droplets(draft, case, why)
+    return _measured(draft, case, why)
+
+
+def _with_droplets(draft: Drafting, case: Case, why: str) -> str:
+    """Droplets show that the gas is saturated: the lower of measured and saturated counts (US EPA Method 4)."""
+    if case.gas.temperature is None:
+        raise Missing("With droplets the gas is saturated at its own temperature, which is needed.",
+                      hint="Add it to the gas, e.g. '48 °C', and its pressure.", field="gas.temperature")
+    saturated = _saturated_at(draft, case, case.gas.temperature, None, "gas.temperature", "gas")
+    if case.gas.water_content is None and case.gas.water_route is None:
+        return saturated
+    measured = _measured(draft, case, why)
+    taken, words = (measured, "measured") if draft.value(measured) < draft.value(saturated) else (saturated, "saturated")
+    draft.choose(f"Droplets: the {words} water content is taken", "droplets are caught with the vapour, so the lower of measured and saturated counts",
+                 facts.source("us-epa-method-4").title)
+    return taken
+
+
+def _measured(draft: Drafting, case: Case, why: str) -> str:
     if case.gas.water_content is not None:
         return leaves.from_quantity(draft, case, "h", case.gas.water_content, "gas.water_content")
     route = case.gas.water_route
@@ -127,8 +148,12 @@ def _collected(draft: Drafting, case: Case, route: Route) -> str:
     if water.unit.kind == "volume":
         mass = draft.step(Step(relations.get("mass_of_collected_water"), {"V_l": mass, "rho": _constant(draft, "density_of_water", 1e3)}, "m_water", Shown(1e-3, "g")))
     n_w = draft.step(Step(relations.get("amount_of_collected_water"), {"m": mass, "M_water": _water_mass(draft)}, "n_w", _MOLE))
+    volume = leaves.from_quantity(draft, case, "V_metered", route.get("volume"), _FIELD)
+    if case.gas.meter_factor is not None:
+        factor = leaves.from_quantity(draft, case, "Y", case.gas.meter_factor, "gas.meter_factor")
+        volume = draft.step(Step(relations.get("metered_volume"), {"V_read": volume, "Y": factor}, "V_true", Shown(1.0, "m³")))
     n_g = draft.step(Step(relations.get("amount_of_metered_gas"), {
-        "V": leaves.from_quantity(draft, case, "V_metered", route.get("volume"), _FIELD), "p": leaves.from_quantity(draft, case, "p_meter", route.get("pressure"), _FIELD),
+        "V": volume, "p": leaves.from_quantity(draft, case, "p_meter", route.get("pressure"), _FIELD),
         "T": leaves.from_temperature(draft, case, "T_meter", route.get("temperature"), _FIELD), "Z": leaves.ideal(draft, "Z_meter"), "R": leaves.gas_constant(draft)},
         "n_g", _MOLE))
     return draft.step(Step(relations.get("water_from_amounts"), {"n_w": n_w, "n_g": n_g}, "h", _PERCENT))

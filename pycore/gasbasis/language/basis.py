@@ -86,6 +86,7 @@ class MatrixGas:
     id: str                            # nitrogen | dry_air | combustion_gas | stated | composition
     molar_mass: Quantity | None = None
     composition: tuple[tuple[Species, Quantity], ...] = ()
+    by_mass: bool = False              # the composition's percents count masses
 
 
 @dataclass(frozen=True)
@@ -151,6 +152,9 @@ class Statement:
     oxygen: Quantity | None = None        # "at 9.2 % O2"
     oxygen_meaning: str | None = None     # MEASURED | CORRECTED
     oxygen_water: str | None = None       # WET | DRY, how that oxygen was read
+    carbon_dioxide: Quantity | None = None        # "corrected to 12 % CO2"
+    carbon_dioxide_meaning: str | None = None     # MEASURED | CORRECTED
+    carbon_dioxide_water: str | None = None
     ambient_oxygen: Quantity | None = None
     reported_as: Species | None = None
     matrix_gas: MatrixGas | None = None
@@ -171,6 +175,8 @@ class Gas:
     ambiguities: tuple[Doubt, ...] = ()
     water_content: Quantity | None = None
     water_route: Route | None = None      # where the water content comes from, when it is not stated in percent
+    droplets: bool = False                # the gas carries water as droplets: it is saturated, whatever was collected
+    meter_factor: Quantity | None = None  # Y of the meter the dry gas volume of collected water was read on
     cooler: Quantity | None = None        # temperature of the cooler before the analyser that read the held value
     oxygen: Quantity | None = None
     oxygen_water: str | None = None

@@ -29,6 +29,8 @@ FIELDS: Mapping[str, Field] = {
     "water": Field("water", "Whether the value counts the water vapour in the gas (wet) or not (dry).", "dry", ("dry", "wet")),
     "water_content": Field("water content", "The share of water vapour in the wet gas, by volume.", "12 % H2O", numeric=True),
     "water_route": Field("water content from", "A dew point, a humidity, wet and dry bulb, water collected, or water per dry gas.", "dew point 45 °C"),
+    "droplets": Field("droplets", "Water droplets in the gas: it is saturated, and the lower of measured and saturated water counts.", "with droplets"),
+    "meter_factor": Field("meter factor", "What the reading of the dry gas meter is multiplied by, beside collected water.", "Y 1.012", numeric=True),
     "cooler": Field("cooler", "The temperature of the cooler before the analyser: so much water was still in the gas it read.", "cooler 4 °C"),
     "pressure_route": Field("gauge or static", "The difference from the barometer; it may be negative.", "static -12 mmH2O"),
     "barometer": Field("barometer", "The pressure at the station, not reduced to sea level.", "barometer 1008 hPa"),
@@ -45,6 +47,7 @@ FIELDS: Mapping[str, Field] = {
                         ("in nitrogen", "in dry air", "in combustion gas")),
     "total_pressure": Field("total pressure", "The pressure of the whole gas, for a partial pressure.", "in 1013 hPa", numeric=True),
     "carbon_dioxide": Field("carbon dioxide", "The carbon dioxide of the gas, by volume.", "10.1 % CO2 dry", numeric=True),
+    "carbon_dioxide_meaning": Field("that carbon dioxide is", "Measured in the gas, or the reference the value was corrected to.", "corrected to 12 % CO2"),
     "carbon_dioxide_water": Field("carbon dioxide read", "Whether it was read in dry or in wet gas.", "10.1 % CO2 dry"),
     "averaging": Field("averaging time", "The time the value stands for; it changes no figure and is kept as it was written.", "8-h TWA",
                        ("8-h TWA", "daily mean", "hourly mean")),
@@ -57,7 +60,7 @@ FIELDS: Mapping[str, Field] = {
 # Which pieces can be added to which side, in the order they are offered.
 ADDABLE: Mapping[str, tuple[str, ...]] = {
     "hold": ("species", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as", "matrix_gas"),
-    "gas": ("water_content", "water_route", "cooler", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure", "pressure_route",
+    "gas": ("water_content", "water_route", "droplets", "meter_factor", "cooler", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure", "pressure_route",
             "barometer", "barometer_route", "model"),
     "owe": ("unit", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as"),
     "limit": ("value", "temperature", "pressure", "water", "oxygen"),
@@ -68,5 +71,7 @@ GAS_HELP: Mapping[str, str] = {
     "oxygen": "The oxygen measured in the gas, and whether it was read dry or wet.",
 }
 GAS_TITLES: Mapping[str, str] = {"temperature": "gas temperature", "pressure": "gas pressure", "oxygen": "oxygen measured"}
-GAS_CHOICES: Mapping[str, tuple[str, ...]] = {"temperature": (), "pressure": (), "oxygen": ()}
+GAS_CHOICES: Mapping[str, tuple[str, ...]] = {
+    "temperature": (), "pressure": (), "oxygen": (), "matrix_gas": ("in nitrogen", "in dry air", "in combustion gas", "CH4 93, C2H6 4, CO2 1, N2 2"),
+}
 GAS_EXAMPLES: Mapping[str, str] = {"temperature": "182 °C", "pressure": "1008 hPa", "oxygen": "9.2 % O2 dry"}

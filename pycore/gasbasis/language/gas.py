@@ -16,7 +16,9 @@ from gasbasis.language.units import unit
 _TOTAL, _TOLERANCE = 100.0, 1.0        # a composition in percent
 _FLUE = ("O2", "CO2", "H2O", "CO")     # these alone are measured contents, not a composition
 _BASE = re.compile(r"(?:in\s)?(?:natural gas|pipeline gas|biogas|syngas|gas)\s?[:=]?\s?|composition\s?[:=]?\s?|mol\.?-?\s?%\s?[:=]?\s?", re.IGNORECASE)
-_PERCENT = re.compile(r"\s?(?:mol\.?-?\s?)?%")
+_PERCENT = re.compile(r"\s?(?:(?:mol|vol|wt|mass|weight|m)\.?-?\s?)?%(?:\s?\(?(?:m/m|w/w|mol/mol)\)?)?", re.IGNORECASE)
+_BY_MASS = re.compile(r"(?:composition\s)?(?:by\s(?:mass|weight)|(?:mass|wt|weight|m)\.?-?\s?(?:%|percent|fractions?))\s?[:=]?\s?", re.IGNORECASE)
+_SAID_MASS = re.compile(r"wt|mass|weight|m-?%|m/m|w/w", re.IGNORECASE)
 _SEPARATOR = re.compile(r"\s*(?:[,;+/\n]|and\s)?\s*")
 _AMBIENT = re.compile(r"(?:ambient|air)\s(?:oxygen|O2)\s?[:=]?\s?(?:of\s)?|A\s?=\s?", re.IGNORECASE)
 _MATRIX_ALONE = (
@@ -64,14 +66,19 @@ def _composition(reader) -> bool:
     """ "CH4 93.3, C2H6 2.6, N2 1.0": at least two components, 100 ± 1 % in all."""
     base = _BASE.match(reader.text, reader.place)
     place = base.end() if base else reader.place
+    mass = _BY_MASS.match(reader.text, place)
+    place = mass.end() if mass else place
     parts: list[tuple[Species, Quantity]] = []
-    end = place
+    begin = end = place
     while (component := _component(reader, place)) is not None:
         species, quantity, end = component
         parts.append((species, quantity))
         place = _SEPARATOR.match(reader.text, end).end()
     if len(parts) < 2 or all(species.id in _FLUE for species, _ in parts):
         return False
+    behind = re.compile(r"[\s,(]*" + _BY_MASS.pattern + r"\)?", re.IGNORECASE).match(reader.text, end)
+    end = behind.end() if behind else end
+    by_mass = bool(mass or behind or _SAID_MASS.search(reader.text[begin:end]))
     start, reader.place = reader.place, end
     total = sum(quantity.si for _, quantity in parts) * _TOTAL
     names = [species.id for species, _ in parts]
@@ -82,7 +89,7 @@ def _composition(reader) -> bool:
                                  hint="Add what is missing, for example 'N2 1.0', or correct a component.",
                                  field="gas.matrix_gas"), start, end)
     else:
-        reader.take("matrix_gas", MatrixGas("composition", composition=tuple(parts)), start, end)
+        reader.take("matrix_gas", MatrixGas("composition", composition=tuple(parts), by_mass=by_mass), start, end)
     return True
 
 
@@ -122,6 +129,18 @@ def _matrix_alone(reader) -> bool:
     return False
 
 
+_DROPLETS = re.compile(r"(?:with\s|water\s|carries\s)?(?:droplets?(?:[ -]laden)?|mist)(?:\spresent)?", re.IGNORECASE)
+
+
+def _droplets(reader) -> bool:
+    found = _DROPLETS.match(reader.text, reader.place)
+    if found is None:
+        return False
+    reader.take("droplets", True, reader.place, found.end())
+    reader.place = found.end()
+    return True
+
+
 def _gas_word(reader) -> bool:
     """ "wet", "dry" and "natural gas" on their own say nothing the gas line needs: named, not dropped."""
     found = re.compile(r"natural gas|pipeline gas|flue gas", re.IGNORECASE).match(reader.text, reader.place)
@@ -134,6 +153,6 @@ def _gas_word(reader) -> bool:
     return True
 
 
-_CLAUSES = (readers.late_spread, readers.coverage, *gas_routes.CLAUSES, _model, _ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
+_CLAUSES = (readers.late_spread, readers.coverage, *gas_routes.CLAUSES, _model, _droplets, _ambient, _composition, readers.named_share, readers.stated_molar_mass, readers.matrix_gas, _matrix_alone,
             _gas_word, readers.number_led)
 

@@ -5,8 +5,9 @@ import re
 from dataclasses import replace
 
 from gasbasis.errors import NotUnderstood
-from gasbasis.language.basis import Quantity, Route
+from gasbasis.language.basis import Quantity, Route, Unit
 from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, uncertainty_at
+from gasbasis.language.columns import column_at
 from gasbasis.language.units import unit
 
 _ANY_UNIT = re.compile(r"\s?(?P<unit>(?:mm ?Hg|in\.? ?Hg|mm ?H2O|mm ?WC|in\.? ?H2O|in\.? ?w\.?c\.?|%|° ?[CFKR]|deg ?[CF]|kg/kg|g/kg|g/m3|mg/m3|kPa|hPa|MPa|Pa|mbar|bar|psi|atm|"
@@ -27,8 +28,10 @@ def _quantity(reader, place: int, kinds: tuple[str, ...]) -> tuple[Quantity, int
     measured = _ANY_UNIT.match(reader.text, after)
     if measured is None:
         return None
-    read = unit(measured["unit"])
-    return (Quantity(number, read), measured.end()) if read.kind in kinds else None
+    read, end = unit(measured["unit"]), measured.end()
+    if read.kind == "pressure":
+        read, end = column_at(reader, end, read)
+    return (Quantity(number, read), end) if read.kind in kinds else None
 
 
 def _more(reader, place: int, wanted: dict[str, tuple[str, ...]]) -> tuple[dict[str, Quantity], int]:
@@ -137,4 +140,22 @@ def _plain(field: str, head: str, kinds: tuple[str, ...]):
 _barometer = _plain("barometer", r"(?:barometer|barometric(?:\spressure)?|p_?bar|station pressure|ambient pressure)\s?[:=]?\s?(?:of\s)?", _P)
 _cooler = _plain("cooler", r"(?:(?:behind|after)\s(?:a\s)?)?(?:sample\s|gas\s)?(?:cooler|chiller|condenser)\s?(?:at|of|@|:|=)?\s?", _T)
 
-CLAUSES = (wet_and_dry_bulb, _barometer, _cooler, *ROUTES)
+_FACTOR = re.compile(r"(?:(?:dry\s)?(?:gas\s)?meter\s?(?:calibration\s)?factor\s?(?:Y|gamma)?|Y)\s?[:=]?\s?(?=\d)", re.IGNORECASE)
+
+
+def _meter_factor(reader) -> bool:
+    """ "Y 1.012", "meter factor 0.998": what the meter's reading is multiplied by."""
+    found = _FACTOR.match(reader.text, reader.place)
+    number = NUMBER.match(reader.text, found.end()) if found else None
+    if number is None:
+        return False
+    typed, end = number_at(number, reader.original[number.start():number.end()].strip()), number.end()
+    spread = PLUS_MINUS.match(reader.text, end + (1 if reader.text[end:end + 1] == " " else 0))
+    if spread:
+        typed, end = replace(typed, uncertainty=uncertainty_at(spread)), spread.end()
+    reader.take("meter_factor", Quantity(typed, Unit("1", "", "number", 1.0)), reader.place, end)
+    reader.place = end
+    return True
+
+
+CLAUSES = (wet_and_dry_bulb, _meter_factor, _barometer, _cooler, *ROUTES)

@@ -10,6 +10,7 @@ from gasbasis.errors import NotUnderstood
 from gasbasis.language import tokens
 from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Route, Species, Uncertainty
 from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, uncertainty_at
+from gasbasis.language.columns import column_at
 from gasbasis.language.species import find, match_at
 from gasbasis.language.units import unit
 
@@ -105,8 +106,8 @@ def _take_share(reader, field: str, number: Number, start: int, end: int, water:
     if field in ("oxygen", "carbon_dioxide") and (water or read):
         reader.take(f"{field}_water", water or read, start, end)
     meaning = meaning or reader.fields.pop("oxygen_ahead", None)
-    if field == "oxygen" and meaning:
-        reader.take("oxygen_meaning", meaning, start, end)
+    if field in ("oxygen", "carbon_dioxide") and meaning:
+        reader.take(f"{field}_meaning", meaning, start, end)
     reader.place = end
     return True
 
@@ -205,7 +206,8 @@ def _pressure(reader, number: Number, start: int, after: int) -> bool:
         return False
     gauge = found["gauge"]
     text = found.group()[:len(found.group()) - len(gauge or "")]
-    quantity = Quantity(_plausible(number, unit(text.strip()).factor, 2e4, 4e7), unit(text.strip()))
+    measured, end = column_at(reader, found.end(), unit(text.strip()))
+    quantity = Quantity(_plausible(number, measured.factor, 2e4, 4e7), measured)
     if reader.side == "gas" and gauge:
         if "g" in gauge.lower():
             return _take(reader, "pressure_route", Route("gauge", (("pressure", quantity),)), start, found.end())
@@ -215,16 +217,16 @@ def _pressure(reader, number: Number, start: int, after: int) -> bool:
                                     hint="Give the absolute pressure: gauge plus barometer."), start, found.end())
         reader.place = found.end()
         return True
-    inside = re.compile(r"\s?(?:in|of)\s(?=[\d.,])").match(reader.text, found.end())
+    inside = re.compile(r"\s?(?:in|of)\s(?=[\d.,])").match(reader.text, end)
     if inside and "value" not in reader.fields and reader.side != "gas":
-        reader.take("value", quantity, start, found.end())
+        reader.take("value", quantity, start, end)
         reader.fields["unit"] = quantity.unit
         reader.fields["partial"] = True
     elif reader.fields.get("partial"):
-        reader.take("total_pressure", quantity, start, found.end())
+        reader.take("total_pressure", quantity, start, end)
     else:
-        reader.take("pressure", quantity, start, found.end())
-    reader.place = found.end()
+        reader.take("pressure", quantity, start, end)
+    reader.place = end
     return True
 
 
@@ -443,7 +445,7 @@ def oxygen_meaning(reader) -> bool:
     """ "corrected to", "ref.", "measured at": what the oxygen behind it is."""
     for meaning, pattern in ((CORRECTED, tokens.CORRECTED), (MEASURED, tokens.MEASURED)):
         found = pattern.match(reader.text, reader.place)
-        if found and re.compile(rf"[\d<.,]|{tokens.OXYGEN_NAME}", re.IGNORECASE).match(reader.text, found.end()):
+        if found and re.compile(rf"[\d<.,]|{tokens.OXYGEN_NAME}|{tokens.CARBON_DIOXIDE_NAME}", re.IGNORECASE).match(reader.text, found.end()):
             reader.fields["oxygen_ahead"] = meaning
             reader.place = found.end()
             return True

@@ -20,6 +20,7 @@ from gasbasis.language.basis import Doubt, Gas, Statement
 from gasbasis.language.gas import read_gas
 from gasbasis.language.numbers import half_last_digit, significant
 from gasbasis.language.statement import read_statement
+from gasbasis.records.about_gas import about_gas
 from gasbasis.records.sheet import Sheet
 from gasbasis.records.sides import side_record
 from gasbasis.records.worth import budget_record, verdict_record, worth_problem
@@ -86,7 +87,9 @@ def _restated(sheet: Sheet, hold: Statement, hold_problems: tuple[CoreError, ...
             problems.append(worth_problem(error))
     result["warnings"] = [*result["warnings"], *_said_loosely(hold, limit)]
     sides = {"hold": hold, "gas": gas, "owe": owe, "limit": limit}
-    return {**{side: side_record(side, record, settled, problems) for side, record in sides.items()},
+    records = {side: side_record(side, record, settled, problems) for side, record in sides.items()}
+    records["gas"]["about"] = about_gas(settled.case) if not gas_problems else []
+    return {**records,
             "problems": [error.as_json() for error in problems], **result}
 
 

@@ -1,6 +1,7 @@
 """One side of a sheet for the page: its text, its pieces with their state, and what could be added."""
 from __future__ import annotations
 
+from gasbasis.calculation.composition import total_text
 from gasbasis.calculation.outcomes import Settled
 from gasbasis.errors import CoreError
 from gasbasis.language.basis import Doubt, Gas, Piece, Statement
@@ -51,8 +52,18 @@ def _words(piece: Piece, record: Statement | Gas) -> str:
 def _stated(side: str, piece: Piece, record: Statement | Gas, wrong: set[str], doubts: dict[str, Doubt]) -> dict:
     state = "wrong" if piece.field in wrong else "open" if piece.field in doubts else "stated"
     doubt = doubts[piece.field].id if piece.field in doubts else _number_doubt(piece, doubts)
-    return {"field": piece.field, "text": _words(piece, record), "span": list(piece.span), "state": "open" if doubt else state,
+    return _components(piece, record) | {"field": piece.field, "text": _words(piece, record), "span": list(piece.span), "state": "open" if doubt else state,
             "doubt": doubt, **_described(side, piece.field)}
+
+
+def _components(piece: Piece, record: Statement | Gas) -> dict:
+    """A composition's components, as typed, for its editor."""
+    gas = record.matrix_gas if piece.field == "matrix_gas" else None
+    if gas is None or not gas.composition:
+        return {}
+    total = total_text(gas)
+    return {"components": [{"name": species.id, "text": quantity.number.text} for species, quantity in gas.composition],
+            "by_mass": gas.by_mass, "total_text": total, "whole": float(total) == 100.0}
 
 
 def _number_doubt(piece: Piece, doubts: dict[str, Doubt]) -> str | None:

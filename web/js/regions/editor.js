@@ -1,5 +1,6 @@
 /** The small form right under a piece that changes, adds, settles or takes out this piece. */
 import { button, clonedElement, keyed, part, say } from "../page.js";
+import { mountComposition } from "./composition.js";
 import { readingButton, updateReading } from "./readings.js";
 
 const SHOWN_SPECIES = 6;
@@ -32,7 +33,10 @@ export function mountEditor(side, dispatch, pieceOf) {
     input.dataset.numeric = entry.numeric ? "yes" : "";
     if (entry.numeric) input.inputMode = "decimal";
     part(form, "choices").append(...entry.choices.map((choice) => button(choice, () => set(choice))));
-    form.addEventListener("submit", (event) => { event.preventDefault(); set(input.value); });
+    const composition = mountComposition(part(form, "composition"));
+    composition.show(entry);
+    label.hidden = input.hidden = Boolean(entry.components);
+    form.addEventListener("submit", (event) => { event.preventDefault(); set(composition.text() ?? input.value); });
     if (entry.field === "species") input.addEventListener("input", () => dispatch({ type: "find-species", text: input.value }));
     remove.addEventListener("click", () => set(""));
     remove.hidden = !entry.span;
@@ -43,7 +47,8 @@ export function mountEditor(side, dispatch, pieceOf) {
     note.value = doubt?.note ?? "";
     place();
     update(entry, doubt, null, []);
-    (doubt ? part(form, "readings").querySelector("button") ?? input : input).focus({ preventScroll: true });
+    const first = entry.components ? part(form, "composition").querySelector("input") : input;
+    (doubt ? part(form, "readings").querySelector("button") ?? first : first).focus({ preventScroll: true });
     form.scrollIntoView({ block: "nearest" });
   }
 

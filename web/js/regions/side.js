@@ -43,6 +43,7 @@ export function mountSide(root, side, dispatch) {
       pieces(list, record.pieces, state, "piece");
       pieces(part(tray, "adds"), record.adds, state, "piece add");
       say(words, record.pieces.length ? "+ more" : "+ piece by piece");
+      showAbout(part(root, "about"), record.about ?? []);
       more.hidden = !record.adds.length;
       if (more.hidden) tray.hidden = true;
     }
@@ -87,6 +88,19 @@ function showProblems(list, problems) {
     node.dataset.kind = problem.kind;
     say(node.firstElementChild, problem.message);
     say(node.lastElementChild, problem.hint);
+  });
+}
+
+/** What the gas line comes to: its water content, pressure, molar mass. */
+function showAbout(list, rows) {
+  list.hidden = !rows.length;
+  keyed(list, rows, (row) => row.title, () => {
+    const node = element("div");
+    node.append(element("dt"), element("dd", "", "figures"));
+    return node;
+  }, (node, row) => {
+    say(node.firstElementChild, row.title);
+    say(node.lastElementChild, row.text);
   });
 }
 

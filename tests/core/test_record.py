@@ -89,7 +89,7 @@ def test_a_record_whose_figure_is_not_ours_differs() -> None:
 
 def test_open_doubts_are_recorded_as_open() -> None:
     record = made(Sheet(hold="Hg 1 ppb", owe="ug/m3 at 20 °C, 1 atm"))
-    assert record["figure"] is None and record["spread"]["text"].endswith("depends on: parts by")
+    assert record["figure"] is None and record["spread"]["depends"] == "depends on: parts by"
     assert [doubt["title"] for doubt in record["left_open"]] == ["parts by"]
     assert open_record(record)["same"] and "left open" in plain_record(record)
 

@@ -64,11 +64,14 @@ export function keepMany(entries) {
   });
 }
 
-/** What is there already is not kept twice. @param {import("./state.js").Sheet} sheet @param {string} figure @returns {Promise<Row | null>} the new row */
-export function keepUnlessKept(sheet, figure) {
+/**
+ * What is there already is not kept twice.
+ * @param {import("./state.js").Sheet} sheet @param {string} figure @param {string} title what it is called if it is kept @returns {Promise<Row | null>} the new row
+ */
+export function keepUnlessKept(sheet, figure, title) {
   return within("readwrite", async (store) => {
     const content = contentOf({ sheet });
-    return (await store.getAll()).some((row) => contentOf(row) === content) ? null : add(store, sheet, figure);
+    return (await store.getAll()).some((row) => contentOf(row) === content) ? null : add(store, { ...sheet, title }, figure);
   });
 }
 
@@ -103,5 +106,7 @@ async function add(store, sheet, figure) {
 
 const now = () => new Date().toISOString();
 const sorted = (record) => Object.entries(record ?? {}).filter(([, text]) => text).sort(([one], [other]) => (one < other ? -1 : 1));
+/** @param {import("./state.js").Sheet} one @param {import("./state.js").Sheet} other */
+export const sameSheet = (one, other) => contentOf({ sheet: one }) === contentOf({ sheet: other });
 /** What makes two sheets the same, whatever the order of their parts. */
 const contentOf = ({ sheet }) => JSON.stringify([sheet.hold, sheet.gas, sheet.owe, sheet.limit, sheet.rule_book, sheet.title, sorted(sheet.settled), sorted(sheet.notes)].map((part) => part ?? ""));

@@ -24,8 +24,8 @@ def _head(record: dict) -> list[str]:
 
 
 def _figure(record: dict) -> list[str]:
-    part = record["figure"] or record["spread"]
-    lines = ["FIGURE" if not record["challenge"] else "WHAT THE CLAUSE COULD MEAN", *_wrapped(part["text"])]
+    text = record["figure"]["text"] if record["figure"] else f"{record['spread']['text']}, {record['spread']['depends']}"
+    lines = ["FIGURE" if not record["challenge"] else "WHAT THE CLAUSE COULD MEAN", *_wrapped(text)]
     lines += [line for warning in record["warnings"] for line in _wrapped(warning)]
     verdict = record["verdict"]
     if verdict:

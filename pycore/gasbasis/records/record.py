@@ -137,7 +137,7 @@ def _results(found: dict) -> dict:
     between = None
     if spread and "low" in spread:
         low, high, unit = spread["low"]["text"], spread["high"]["text"], spread["unit_text"]
-        between = {"text": f"{low if low == high else f'{low} to {high}'} {unit}, {found['sentence']}", "counted": spread["counted"], "complete": spread["complete"]}
+        between = {"text": f"{low if low == high else f'{low} to {high}'} {unit}", "depends": found["sentence"], "counted": spread["counted"], "complete": spread["complete"]}
     return {"figure": texts, "spread": between, "warnings": list(found["warnings"]), "challenge": found["challenge"],
             "uncertainty": _uncertainty(found["uncertainty"]), "verdict": _verdict(found["verdict"])}
 

@@ -37,7 +37,7 @@ export function keptActs({ state, core, headline, show }) {
       const kept = row && !anew ? await keepChange(row, sheet, headline()) : { row: await keepNew(sheet, headline()), copied: false };
       const moved = state.get().sheet === before ? sheet : { ...state.get().sheet, title };      // somebody may have typed on meanwhile
       show(moved, { row: kept.row, pristine: moved === sheet ? moved : null, answer: state.get().answer });
-      say(kept.copied ? `“${title}” was changed or deleted in another tab meanwhile: this is kept as a sheet of its own.` : `Kept as “${title}”.`);
+      say(kept.copied ? `${nameOf(kept.row)} was changed or deleted in another tab meanwhile: this is kept as a sheet of its own.` : `Kept as ${nameOf(kept.row)}.`);
     });
   }
 
@@ -45,11 +45,11 @@ export function keptActs({ state, core, headline, show }) {
   async function replace(sheet, more = {}) {
     const { sheet: here, pristine, row } = state.get(), figure = headline();
     const worth = !isEmpty(here) && here !== pristine;
-    show({ ...emptySheet(), ...sheet }, { row: null, pristine: null, editing: null, sent: null, before: worth || !isEmpty(here) ? { sheet: here, row } : state.get().before, ...more });
+    show({ ...emptySheet(), ...sheet }, { row: null, pristine: null, editing: null, sent: null, before: !isEmpty(here) ? { sheet: here, row } : state.get().before, ...more });
     if (!worth) return;
     const back = [["Back to it", { type: "back" }]];
     try {
-      const kept = await keepUnlessKept(row && here.title ? { ...here, title: `${here.title} (as left)` } : here, figure);
+      const kept = await keepUnlessKept(here, figure, row && here.title ? `${here.title} (as left)` : here.title);
       if (kept && !isEmpty(state.get().sheet)) say(`What was on the page is kept: ${nameOf(kept)}.`, back);
       if (kept && state.get().rows) list();
     } catch (error) {

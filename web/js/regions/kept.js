@@ -1,19 +1,32 @@
 /** Kept sheets: this one by its name, the others found by typing. */
 import { nameOf } from "../acts/kept.js";
+import { handOverFile } from "../hand-over.js";
+import { sameSheet } from "../kept-store.js";
 import { button, element, keyed, part, say } from "../page.js";
 
 const SHOWN = 30;                      // more only when asked for: a thousand rows stay quick
 
-/** @param {HTMLElement} root @param {(intention: object) => void} dispatch @param {{proposed: () => string, file: () => string, handOver: any}} page */
-export function mountKept(root, dispatch, { proposed, file, handOver }) {
+/** @param {HTMLElement} root @param {(intention: object) => void} dispatch @param {{proposed: () => string, file: () => string}} page */
+export function mountKept(root, dispatch, { proposed, file }) {
   const form = root.querySelector("form"), name = part(root, "name"), anew = root.querySelector('[data-action="keep-anew"]'), search = part(root, "search");
   const list = part(root, "list"), more = root.querySelector('[data-action="more-rows"]'), save = root.querySelector('[data-action="save-all"]');
   let rows = null, limit = SHOWN, open = "", namedFor = null, now = null;
-  form.addEventListener("submit", (event) => { event.preventDefault(); dispatch({ type: "keep", title: name.value.trim() || proposed() }); });
-  anew.addEventListener("click", () => dispatch({ type: "keep", title: name.value.trim() || proposed(), anew: true }));
+  form.addEventListener("submit", (event) => { event.preventDefault(); dispatch({ type: "keep", title: name.value.trim() }); });
+  anew.addEventListener("click", () => dispatch({ type: "keep", title: name.value.trim(), anew: true }));
+  name.addEventListener("input", () => offer());
   search.addEventListener("input", () => { limit = SHOWN; find(); });
   more.addEventListener("click", () => { limit += SHOWN; find(); });
-  save.addEventListener("click", () => handOver(file(), "kept-sheets.gasbasis.json", "application/json"));
+  save.addEventListener("click", async () => say(part(root, "told"), await handOverFile(file(), "kept-sheets.gasbasis.json", "application/json")));
+  root.querySelector('[data-action="take-in"]').addEventListener("click", () => dispatch({ type: "panel", name: "receive" }));
+
+  /** A sheet that is kept as it stands needs no button. */
+  function offer() {
+    const kept = now.rows?.find((row) => row.id === now.row?.id), same = Boolean(kept) && sameSheet(kept.sheet, { ...now.sheet, title: name.value.trim() });
+    part(root, "keep-row").hidden = same;
+    part(root, "kept-already").hidden = !same;
+    anew.hidden = !kept;
+    say(form.querySelector('[type="submit"]'), kept ? "Keep the changes" : "Keep this sheet");
+  }
 
   function find() {
     const words = search.value.toLowerCase().split(/\s+/).filter(Boolean);
@@ -27,7 +40,7 @@ export function mountKept(root, dispatch, { proposed, file, handOver }) {
   }
 
   function make(row) {
-    const node = element("li"), opens = button("", () => dispatch({ type: "open-kept", row: node.row }), "row-opens"), about = button("…", () => { open = open === row.id ? "" : row.id; find(); }, "bare about");
+    const node = element("li"), opens = button("", () => dispatch({ type: "open-kept", row: node.row }), "row-opens"), about = button("…", () => { open = open === row.id ? "" : row.id; find(); }, "bare row-more");
     opens.append(element("b"), element("span", "", "typed quiet"), element("span", "", "quiet"));
     const acts = element("div", "", "row acts");
     acts.append(...[["Duplicate", "duplicate"], ["Compare with this one", "compare"], ["Delete", "delete-kept"]].map(([label, type]) =>
@@ -50,13 +63,13 @@ export function mountKept(root, dispatch, { proposed, file, handOver }) {
   return (state) => {
     now = state;
     const of = root.hidden ? null : state.row?.id ?? "";
-    if (of !== null && of !== namedFor) name.value = state.sheet.title || proposed();
+    if (of !== null && of !== namedFor) name.value = state.sheet.title;
+    name.placeholder = proposed();     // a sheet without a name is listed by its figure
     namedFor = of;
-    if (root.hidden) return;
+    if (root.hidden) { open = ""; return; }
     const empty = !["hold", "gas", "owe", "limit"].some((side) => state.sheet[side].trim());
     form.hidden = empty;
-    anew.hidden = !state.row;
-    say(form.querySelector('[type="submit"]'), state.row ? "Keep the changes" : "Keep this sheet");
+    offer();
     say(part(root, "problem"), state.rowsProblem);
     part(root, "problem").hidden = !state.rowsProblem;
     if (!state.rows) return;

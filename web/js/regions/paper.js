@@ -9,7 +9,7 @@ const READ = { memory: "from memory, not from the document", secondary: "read in
 
 /** @param {HTMLElement} paper @param {any} record @param {any[]} working the steps with their formula trees */
 export function drawPaper(paper, record, working) {
-  paper.append(head(record), figure(record), typed(record), ...doubts(record), ...worth(record), steps(record, working), ...sources(record), ...notes(record), foot(record));
+  paper.append(head(record), figure(record), typed(record), ...doubts(record), ...worth(record), ...steps(record, working), ...sources(record), ...notes(record), foot(record));
 }
 
 function block(title, ...children) {
@@ -39,7 +39,7 @@ function figure({ figure: found, spread, warnings, verdict, challenge }) {
   const node = element("section", "", "paper-figure");
   node.append(element("h3", challenge ? "What the clause could mean" : joined("Figure", found?.species_text)));
   node.append(element("p", found ? `${found.number_text} ${found.unit_text}` : spread.text, "value figures"));
-  if (found) node.append(element("p", found.basis));
+  node.append(element("p", found ? found.basis : spread.depends));
   node.append(...warnings.map((text) => element("p", text)));
   if (!verdict) return node;
   node.append(element("p", `Limit ${verdict.limit_text}: ${verdict.sentence}`, "verdict-line"), element("p", [`Decision rule: ${verdict.rule}`, verdict.rule_means, verdict.rule_source].filter(Boolean).join(". ").replace("..", "."), "quiet"));
@@ -86,11 +86,12 @@ function worth({ uncertainty }) {
 }
 
 function steps({ working }, drawn) {
+  if (!working.length) return [];
   const list = element("ol");
   for (const step of working) {
     const item = element("li"), tree = drawn.find((one) => one.number === step.number && one.formula && one.substitution_text === step.substitution_text);
     item.append(element("h4", [`${step.number}. ${step.title}`, step.factor_text].filter(Boolean).join("  ")));
-    if (tree) item.append(formula(tree.result.symbol, tree.formula, step.formula_text), formula(tree.result.symbol, tree.substitution, step.substitution_text));
+    if (tree) item.append(formulas(formula(tree.result.symbol, tree.formula, step.formula_text), formula(tree.result.symbol, tree.substitution, step.substitution_text)));
     else item.append(...[step.formula_text, step.substitution_text].filter(Boolean).map((text) => element("p", text, "typed")));
     if (step.result) item.append(element("p", `= ${step.result.text}`, "result-line figures"));
     const inputs = step.inputs.map((one) => `${one.symbol}: ${one.meaning}, ${one.text}, ${one.origin}`).join("; ");
@@ -99,7 +100,13 @@ function steps({ working }, drawn) {
     if (source) item.append(element("p", source, "quiet"));
     list.append(item);
   }
-  return block("Working", list);
+  return [block("Working", list)];
+}
+
+function formulas(...drawn) {
+  const node = element("div", "", "formulas");
+  node.append(...drawn);
+  return node;
 }
 
 function formula(symbol, tree, text) {

@@ -17,6 +17,7 @@ export function mountPassOn(root, dispatch) {
 
   return (state) => {
     if (root.hidden) return;
+    names.closest("label").hidden = !state.sheet.title && !Object.values(state.sheet.notes).some(Boolean);
     const stale = state.answer && state.answeredFor === state.sheet && (state.passed?.sheet !== state.sheet || state.passed?.answer !== state.answer);
     if (stale) queueMicrotask(() => dispatch({ type: "link", withNames: names.checked }));
     if (state.passed === passed) return;

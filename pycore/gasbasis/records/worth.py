@@ -116,7 +116,7 @@ def _decision(found: Judged, unit_text: str) -> dict:
 
 def _turned(found: Judged) -> dict | None:
     """What the display shows when the figure stands at the limit."""
-    if found.path is None:
+    if found.path is None or not found.path.held:      # readings corrected one by one have no one display reading
         return None
     unit_text = found.path.leaves[found.path.held].unit_text
     targets = {"lower": found.limits.lower, "upper": found.limits.upper}

@@ -98,9 +98,6 @@ def _said_loosely(hold: Statement, limit: Statement) -> list[str]:
     """What a text says that no calculation can take up."""
     loose = [f"{title} is said to be approximate: no figure can be better than that."
              for title, statement in (("What you hold", hold), ("The limit", limit)) if statement.approximate]
-    if limit.second_value is not None:
-        loose.append(f"The limit is said twice; {limit.second_value.number.text} {limit.second_value.unit.text} is not compared here: "
-                     "type it alone to see which of the two binds.")
     return loose
 
 

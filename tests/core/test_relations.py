@@ -33,10 +33,11 @@ ORDINARY = {
     "a_6": 1.8, "T_t": 273.16, "theta": 0.93, "p_t": 611.657, "b_1": 0.0033, "b_2": 1.21, "b_3": 1.70, "e": 2300.0, "phi": 0.6,
     "p_s": 2339.0, "p_w": 1800.0, "T_d": 298.0, "T_w": 290.0, "V_l": 5e-5, "rho": 998.2, "m": 0.05, "V_read": 0.8, "Y": 0.995, "V": 0.79,
     "n_w": 2.8, "n_g": 33.0, "g": 0.1, "r": 0.06, "X": 0.11, "h_r": 0.008, "p_b": 99e3, "p_g": -120.0, "p_0": 101325.0, "T_0": 288.15,
-    "L": 0.0065, "H": 420.0, "p_sl": 101500.0, "z": 0.05, "s": 0.048,
+    "d_0": 2858.0, "d": 2858.4, "p_T": 28840.0, "p_d": 1857.0, "f": 1.0, "L": 0.0065, "H": 420.0, "p_sl": 101500.0, "z": 0.05, "s": 0.048,
 }
 # Where the same letter is another quantity, or another range, in one relation.
 IN_ONE = {
+    "amount_density_step": {"p": 6e6, "p_0": 5.99e6, "T": 288.15, "T_0": 288.0}, "compression_factor_from_amount_density": {"p": 6e6, "T": 288.0},
     "vapour_pressure_from_wet_bulb": {"A": 6.62e-4}, "barometer_at_altitude": {"g": 9.80665, "M": 0.0289644},
     "barometer_from_sea_level": {"g": 9.80665, "M": 0.0289644}, "liquid_column": {"g": 9.80665, "rho": 13595.1},
     "sublimation_pressure_over_ice": {"a_1": -21.2, "a_2": 27.3, "a_3": -6.1}, "reduced_temperature": {"T": 253.0},

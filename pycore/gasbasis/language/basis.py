@@ -190,4 +190,4 @@ class Gas:
     pressure_route: Route | None = None   # gauge or static: the difference from the barometer
     barometer: Quantity | None = None
     barometer_route: Route | None = None  # altitude, alone or with a sea-level pressure
-    model: str | None = None              # "iso_6976" where a real gas was asked for; None: ideal, and said so
+    model: str | None = None              # "real" (by the equation that reaches the state), "iso_6976", "aga8_detail"; None: ideal, and said so

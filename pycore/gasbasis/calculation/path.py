@@ -54,6 +54,7 @@ class Step:
     through: str | None = None
     parts: tuple[tuple[str, tuple[tuple[str, str], ...]], ...] = ()   # label, arguments to swap to undo it
     note: str = ""
+    solved: bool = False               # its result starts from a root found by iteration; the note tells the residual
 
 
 @dataclass(frozen=True)

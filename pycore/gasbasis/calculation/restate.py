@@ -103,8 +103,7 @@ class _Laying:
         case, draft = self.case, self.draft
         statement = case.record(side)
         if letter == "Z":
-            temperature = case.gas.temperature if statement.actual_volume else statement.temperature
-            return real_gas.ideal_or_real(draft, case, side, temperature, "" if case.gas.model is None else self.condition("p", side))
+            return real_gas.ideal_or_real(draft, case, side, self.condition)
         word = "temperature" if letter == "T" else "pressure"
         if statement.actual_volume and word == "pressure":
             return pressure.gas_pressure(draft, case, "for a volume as it flowed")

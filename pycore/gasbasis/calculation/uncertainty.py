@@ -9,12 +9,14 @@ import math
 from dataclasses import dataclass
 from typing import Mapping
 
-from uncertainties import ufloat
+from uncertainties import ufloat, umath
 
 from gasbasis import facts
 from gasbasis.calculation.path import Leaf, Path, evaluate
 from gasbasis.errors import OutOfRange
+from gasbasis.physics import elementary
 
+elementary.register("uncertainties", lambda name, value: getattr(umath, name)(value))
 COVERAGE_FACTOR = 2.0                  # about 95 % for a Gaussian figure (JCGM 100:2008, 6.3.3)
 
 

@@ -194,4 +194,4 @@ class Gas:
     barometer: Quantity | None = None
     barometer_route: Route | None = None  # altitude, alone or with a sea-level pressure
     correlations: tuple[tuple[tuple[str, ...], tuple[str, ...], Quantity], ...] = ()   # "r(NOx, O2) = 0.6": the fields either may be, and the coefficient
-    model: str | None = None              # "iso_6976" where a real gas was asked for; None: ideal, and said so
+    model: str | None = None              # "real" (by the equation that reaches the state), "iso_6976", "aga8_detail"; None: ideal, and said so

@@ -40,7 +40,7 @@ def budget_record(found: Budget, unit_text: str) -> dict:
 
 _INPUTS = {"hold.value": "held value", "gas.water_content": "water content", "gas.oxygen": "measured oxygen", "hold.oxygen": "oxygen it is stated at",
            "gas.carbon_dioxide": "carbon dioxide", "hold.carbon_dioxide": "carbon dioxide it is stated at", "gas.ambient_oxygen": "ambient oxygen", "gas.matrix_gas": "gas", "hold.temperature": "held temperature",
-           "hold.pressure": "held pressure", "gas.temperature": "gas temperature", "gas.pressure": "gas pressure"}
+           "hold.pressure": "held pressure", "gas.temperature": "gas temperature", "gas.pressure": "gas pressure", "gas.model": "equation of state"}
 
 
 def _input(leaf) -> str:

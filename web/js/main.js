@@ -199,7 +199,7 @@ const INTENTIONS = {
   "rule-book": ({ book }) => changeSheet({ owe: book.owe, rule_book: book.id }),
   "leave-rule-book": () => changeSheet({ rule_book: "" }),
   "find-species": ({ text }) => findSpecies(text),
-  clear: () => { kept.replace({}, { panel: "" }); $("hold-text").focus(); },
+  clear: () => { kept.replace(emptySheet(), { panel: "" }); $("hold-text").focus(); },
   example: ({ sheet }) => { const whole = { ...emptySheet(), ...sheet }; kept.replace(whole, { pristine: whole }); },
   panel, ...kept.acts, ...passing.acts, ...recordActs({ state, core }),
   notice: ({ text }) => state.change({ notice: text }),

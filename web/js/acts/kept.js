@@ -41,11 +41,11 @@ export function keptActs({ state, core, headline, show }) {
     });
   }
 
-  /** Keep what is on the page, then put something else there. @param {object} sheet @param {object} [more] */
+  /** Put another sheet on the page; what was there is kept. @param {object} sheet a whole one @param {object} [more] */
   async function replace(sheet, more = {}) {
     const { sheet: here, pristine, row } = state.get(), figure = headline();
     const worth = !isEmpty(here) && here !== pristine;
-    show({ ...emptySheet(), ...sheet }, { row: null, pristine: null, editing: null, sent: null, before: !isEmpty(here) ? { sheet: here, row } : state.get().before, ...more });
+    show(sheet, { row: null, pristine: null, editing: null, sent: null, before: !isEmpty(here) ? { sheet: here, row } : state.get().before, ...more });
     if (!worth) return;
     const back = [["Back to it", { type: "back" }]];
     try {

@@ -45,7 +45,7 @@ export function passingActs({ state, core, headline, restate, replace, dispatch 
     try {
       const found = await core.ask({ task: "receive", text });
       if (found.form === "record") {
-        await replace(found.sheet, { received: { record: found }, amends: null });
+        await replace({ ...emptySheet(), ...found.sheet }, { received: { record: found }, amends: null });
       } else {
         state.change({ received: null });
         await putSent(found.sheet, found.as_sent ?? "");

@@ -27,7 +27,7 @@ export function mountPassOn(root, dispatch) {
     say(part(root, "problem"), passed.problem);
     part(root, "problem").hidden = !passed.problem;
     for (const node of root.querySelectorAll("[data-when='link']")) node.hidden = Boolean(passed.problem);
-    if (passed.problem) return;
+    if (passed.problem) { part(root, "qr").replaceChildren(); return; }
     link = linkOf(passed.code);
     field.value = link;
     act("share").hidden = !canShare();

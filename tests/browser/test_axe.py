@@ -108,7 +108,7 @@ def states_of_the_panels(sheet: Sheet):
     expect(box.locator(".problem")).to_be_visible()
     yield "nothing of ours"
     sheet.line("hold").fill("NOx 142 ± 5 ppmv as NO, dry")
-    expect(sheet.value).to_have_text("290 ± 12 mg/m³")
+    expect(sheet.value).to_have_text("290 ± 13 mg/m³")
     compare = panel(sheet, "Compare")
     compare.locator("textarea").fill(link)
     compare.get_by_role("button", name="Compare", exact=True).click()

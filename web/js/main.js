@@ -24,6 +24,7 @@ import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
 import { mountExamples, mountTools } from "./regions/tools.js";
+import { mountVary } from "./regions/vary.js";
 import { mountVerdict } from "./regions/verdict.js";
 import { mountWorking } from "./regions/working.js";
 import { createState, emptySheet } from "./state.js";
@@ -32,7 +33,7 @@ import { measureViewport } from "./viewport.js";
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
-const first = { sheet: { ...emptySheet(), ...typedAlready(sheetInHand()) }, row: rowInHand(), pristine: null, answer: null, answeredFor: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null,
+const first = { sheet: { ...emptySheet(), ...typedAlready(sheetInHand()) }, row: rowInHand(), pristine: null, answer: null, answeredFor: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, varied: null,
   notice: "", aside: null, panel: "", rows: null, rowsProblem: "", passed: null, received: null, record: null, amends: null, compared: null,
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
@@ -168,6 +169,15 @@ async function draw({ trials }) {
   }
 }
 
+async function vary({ field, low, high }) {
+  const { sheet } = state.get(), key = JSON.stringify([field, low, high, sheet]);
+  try {
+    state.change({ varied: { sheet, key, record: await core.ask({ task: "vary", sheet: { schema: 1, ...sheet }, field, low, high }, { channel: "vary" }) } });
+  } catch (error) {
+    state.change({ varied: { sheet, key, error: `${error.message} ${error.problem?.hint ?? ""}` } });
+  }
+}
+
 const kept = keptActs({ state, core, headline: figureNamed, show });
 const passing = passingActs({ state, core, headline: figureNow, restate, replace: kept.replace, dispatch: (intention) => dispatch(intention) });
 
@@ -205,7 +215,7 @@ const INTENTIONS = {
   panel, ...kept.acts, ...passing.acts, ...recordActs({ state, core }),
   notice: ({ text }) => state.change({ notice: text }),
   restart: () => { core.restart(); restate(); },
-  draw,
+  draw, vary,
   "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
   later: () => state.change({ offline: { ...state.get().offline, update: false } }),
@@ -216,7 +226,7 @@ const regions = [
   mountPanels(["pass-on", "kept", "receive", "record", "compare"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
   ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
   mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
-  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch),
+  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch), mountVary($("vary"), dispatch),
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
   mountPassOn($("pass-on"), dispatch), mountKept($("kept"), dispatch, { proposed: figureNamed, file: kept.fileOf }), mountReceive($("receive"), dispatch),
   mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountAside($("aside"), dispatch),

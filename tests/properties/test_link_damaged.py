@@ -2,7 +2,6 @@
 from __future__ import annotations
 
 import json
-import os
 import random
 import time
 import zlib
@@ -14,7 +13,7 @@ from gasbasis.records import link
 from gasbasis.records.link import read_code, write_code
 from gasbasis.records.sheet import Sheet
 
-COUNT = 20_000 if os.environ.get("GASBASIS_LONG") else 2_000
+COUNT = 20_000
 LONGEST_S = 0.2
 ALPHABET = "ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789-_"
 SHEETS = (

@@ -94,6 +94,13 @@ def test_open_doubts_are_recorded_as_open() -> None:
     assert open_record(record)["same"] and "left open" in plain_record(record)
 
 
+def test_what_was_not_asked_says_what_it_was_computed_as() -> None:
+    """A bare ± is taken as U with k = 2 (JCGM 100:2008, 6.2 leaves k to be stated): that is no silent choice."""
+    record = made(Sheet(hold="NOx 142 ± 5 ppmv as NO2, dry", owe="mg/m3 at 273.15 K, 101.3 kPa, dry"))
+    unseen = next(doubt for doubt in record["no_visible_effect"] if doubt["title"].startswith("±"))
+    assert unseen["computed_as"] == "expanded, k = 2" and "computed as expanded, k = 2" in " ".join(plain_record(record).split())
+
+
 def test_an_amended_record_names_the_one_before_and_why() -> None:
     first = made()
     second = made(amends=first["checksum"], why="limit mistyped")

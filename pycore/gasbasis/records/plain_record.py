@@ -54,7 +54,7 @@ def _texts(record: dict) -> list[str]:
 def _doubts(record: dict) -> list[str]:
     lines = [line for doubt in record["settled"] for line in _wrapped(_settled(doubt), "  ")]
     lines += [line for doubt in record["left_open"] for line in _wrapped(f"left open: {doubt['side']}, {doubt['title']} ({doubt['effect']}): {'; '.join(doubt['readings'])}", "  ")]
-    lines += [line for doubt in record["no_visible_effect"] for line in _wrapped(f"no visible effect: {doubt['side']}, {doubt['title']}: {doubt.get('effect', '')}", "  ")]
+    lines += [line for doubt in record["no_visible_effect"] for line in _wrapped(_unseen(doubt), "  ")]
     return ["DOUBTS", *lines] if lines else []
 
 
@@ -62,6 +62,11 @@ def _settled(doubt: dict) -> str:
     because = f"usual: {doubt['usual_because']}" if doubt["usual_because"] else doubt["source"]
     note = f" - {doubt['note']}" if doubt["note"] else ""
     return f"settled: {doubt['side']}, {doubt['title']} = {doubt['reading']} ({because}){note}"
+
+
+def _unseen(doubt: dict) -> str:
+    computed = f"; computed as {doubt['computed_as']}" if doubt["computed_as"] else ""
+    return f"not asked: {doubt['side']}, {doubt['title']}: {doubt['effect']}{computed}"
 
 
 def _worth(record: dict) -> list[str]:

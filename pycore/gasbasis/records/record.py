@@ -179,15 +179,22 @@ def _rule_book(sheet: Sheet) -> dict | None:
 
 
 def _doubts(found: dict, state: str) -> list[dict]:
-    return [_doubt(doubt) for doubt in found["doubts"] if doubt["state"] == state]
+    return [_doubt(doubt, found) for doubt in found["doubts"] if doubt["state"] == state]
 
 
-def _doubt(doubt: dict) -> dict:
+def _doubt(doubt: dict, found: dict) -> dict:
     taken = next((reading for reading in doubt["readings"] if reading["id"] == doubt["chosen"]), None)
     row = {"side": doubt["side_title"], "title": doubt["title"], "question": doubt["question"]}
+    if doubt["state"] == "calm":
+        return row | {"effect": doubt["effect_text"], "computed_as": _computed_as(doubt["readings"]) if found["figure"] else ""}
     if taken is None:
         return row | {"effect": doubt["effect_text"], "readings": [" ".join(filter(None, (reading["label"], reading["text"]))) for reading in doubt["readings"]]}
     return row | {"reading": taken["label"], "source": _title(taken["source"]), "usual_because": taken["usual_because"], "note": doubt["note"]}
+
+
+def _computed_as(readings: list[dict]) -> str:
+    """The reading that a figure is computed with where none shows in it: the usual, else the first (see settle_calm)."""
+    return next((reading for reading in readings if reading["usual_because"]), readings[0])["label"]
 
 
 def _step(step: dict) -> dict:

@@ -66,7 +66,7 @@ function doubts({ settled, left_open, no_visible_effect }) {
   const entries = [
     ...settled.map((one) => [`${one.side}, ${one.title}`, `${one.reading} (${one.usual_because ? `usual: ${one.usual_because}` : one.source})${one.note ? ` - ${one.note}` : ""}`]),
     ...left_open.map((one) => [`${one.side}, ${one.title}`, `left open${one.effect ? `, ${one.effect}` : ""}: ${one.readings.join("; ")}`]),
-    ...no_visible_effect.map((one) => [`${one.side}, ${one.title}`, one.effect]),
+    ...no_visible_effect.map((one) => [`${one.side}, ${one.title}`, [one.effect, one.computed_as && `computed as ${one.computed_as}`].filter(Boolean).join("; ")]),
   ];
   return entries.length ? [block("Doubts", rows(entries))] : [];
 }

@@ -1,9 +1,10 @@
-"""The same requests from a terminal: `python3 -m gasbasis restate --hold "Hg 1 ppb v/v" --owe "..."`."""
+"""The same requests from a terminal: `python3 -m gasbasis restate --hold "Hg 1 ppb v/v" --owe "..."`; `record` seals the same, `check` reads it back."""
 from __future__ import annotations
 
 import argparse
 import json
 import sys
+from datetime import datetime
 
 from gasbasis.answer import answer
 from gasbasis.errors import CoreError, NotUnderstood
@@ -18,6 +19,8 @@ def main(arguments: list[str] | None = None) -> int:
     """Run one command. Exit status 0: a figure; 3: doubts open; 2: not understood."""
     parser = _parser()
     options = parser.parse_args(arguments)
+    if options.command == "check":
+        return _check(options.file)
     for choice in options.settle:
         if "=" not in choice:
             parser.error(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
@@ -26,7 +29,9 @@ def main(arguments: list[str] | None = None) -> int:
     except CoreError as error:
         print(_problem_text(error.as_json()), file=sys.stderr)
         return NOT_UNDERSTOOD
-    reply = json.loads(answer(json.dumps({"task": "restate", "sheet": sheet, "usual": options.usual})))
+    if options.command == "record":
+        return _record(options, sheet)
+    reply = _asked({"task": "restate", "sheet": sheet, "usual": options.usual})
     if not reply["ok"]:
         print(_problem_text(reply["error"]), file=sys.stderr)
         return NOT_UNDERSTOOD
@@ -35,10 +40,54 @@ def main(arguments: list[str] | None = None) -> int:
     return _status(result)
 
 
+def _asked(request: dict) -> dict:
+    return json.loads(answer(json.dumps(request)))
+
+
+def _record(options: argparse.Namespace, sheet: dict) -> int:
+    """Print a record of the sheet, sealed with this machine's date, as text or as the JSON that `check` and the page read."""
+    about = {"made_at": datetime.now().astimezone().isoformat(timespec="seconds"), "made_by": options.by, "notes": options.note,
+             "amends": options.amends, "why": options.why}
+    reply = _asked({"task": "record", "sheet": sheet, "usual": options.usual, "about": about})
+    if not reply["ok"]:
+        print(_problem_text(reply["error"]), file=sys.stderr)
+        return NOT_UNDERSTOOD
+    made = reply["answer"]
+    print(json.dumps(made["record"], ensure_ascii=False, indent=1) if options.json else made["plain_text"].rstrip("\n"))
+    return FIGURE if made["record"]["figure"] else DOUBTS_OPEN
+
+
+def _check(name: str) -> int:
+    """Say whether a record's checksum holds and whether it comes to the same here. 0: both; 2: it is no record; 3: one does not."""
+    try:
+        with open(name, encoding="utf-8") as file:
+            text = file.read()
+    except (OSError, UnicodeDecodeError) as error:
+        print(f"{name} cannot be read: {error}", file=sys.stderr)
+        return NOT_UNDERSTOOD
+    reply = _asked({"task": "receive", "text": text})
+    if not reply["ok"] or reply["answer"]["form"] != "record":
+        print(_problem_text(reply["error"]) if not reply["ok"] else f"{name} holds a {reply['answer']['form']}, no record.", file=sys.stderr)
+        return NOT_UNDERSTOOD
+    print(reply["answer"]["sentence"])
+    return FIGURE if reply["answer"]["checksum_holds"] and reply["answer"]["same"] else DOUBTS_OPEN
+
+
 def _parser() -> argparse.ArgumentParser:
     parser = argparse.ArgumentParser(prog="gasbasis", description="Restate a trace-gas concentration on another basis.")
     commands = parser.add_subparsers(dest="command", required=True)
-    restate = commands.add_parser("restate", help="restate a held statement as an owed figure")
+    _add_sheet(commands.add_parser("restate", help="restate a held statement as an owed figure"))
+    record = commands.add_parser("record", help="the same, sealed as a record with date, working and checksum")
+    _add_sheet(record)
+    record.add_argument("--by", default="", help="who makes the record")
+    record.add_argument("--note", default="", help="notes for the record")
+    record.add_argument("--amends", default="", metavar="CHECKSUM", help="the checksum of the record that this one amends")
+    record.add_argument("--why", default="", help="why it is amended")
+    commands.add_parser("check", help="read a record back: is it unchanged, does it come to the same?").add_argument("file")
+    return parser
+
+
+def _add_sheet(restate: argparse.ArgumentParser) -> None:
     restate.add_argument("--hold", required=True, help='what you hold, as written: "NOx 142 ppm dry as NO2"')
     restate.add_argument("--owe", required=True, help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
     restate.add_argument("--gas", default="", help='the gas it was in: "12 %% H2O, 9.2 %% O2 dry, ambient O2 20.9 %%"')
@@ -50,7 +99,6 @@ def _parser() -> argparse.ArgumentParser:
     restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
     restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
     restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")
-    return parser
 
 
 def _sheet(options: argparse.Namespace) -> dict:

@@ -7,6 +7,7 @@ import re
 import shutil
 from pathlib import Path
 
+from making.libraries import write_libraries
 from making.licences import licences_text
 from making.media import media_type
 from making.places import DEMO, WEB, Places
@@ -26,6 +27,7 @@ def build_site(runtime: Runtime, places: Places) -> Path:
     fresh = places.work / "site"
     shutil.rmtree(fresh, ignore_errors=True)
     shutil.copytree(WEB, fresh, ignore=shutil.ignore_patterns(*NOT_COPIED, ".*", "*.md"))
+    write_libraries(fresh / "libraries", places)
     _write_page(fresh)
     _write_examples(fresh / "demo")
     _write_runtime(fresh / "runtime", runtime, places)

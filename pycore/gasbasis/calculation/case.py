@@ -7,6 +7,9 @@ from typing import Mapping
 from gasbasis.errors import OutOfRange
 from gasbasis.facts import RuleBook
 from gasbasis.language.basis import Gas, Quantity, Reading, Statement
+from gasbasis.language.emission import Emission
+from gasbasis.language.prepared import Prepared
+from gasbasis.language.sample import Sample
 
 AMOUNT_FRACTION = "amount_fraction"
 MASS_FRACTION = "mass_fraction"
@@ -30,6 +33,9 @@ class Case:
     owe: Statement
     rule: RuleBook | None = None
     chosen: Mapping[str, str] = field(default_factory=dict)     # "hold.parts_by" -> label of the reading taken
+    sample: Sample | None = None       # where the held value comes from, when it is no direct reading
+    prepared: Prepared | None = None
+    emission: Emission | None = None   # what makes a rate of the concentration
 
     def record(self, side: str) -> Statement | Gas:
         return getattr(self, side)

@@ -19,7 +19,7 @@ from gasbasis.physics import elementary
 from gasbasis.relations.relation import Bound, Relation, Symbol
 from gasbasis.relations.trace import Traced, formula_tree, plain_text, python_source, trace
 
-EVERY = (*relations.every(), relations.molar_mass_of_mixture(3), relations.molar_mass_of_mixture_by_mass(3), relations.summation_factor_of_mixture(3), relations.mean_of_roots(3))
+EVERY = (*relations.every(), relations.molar_mass_of_mixture(3), relations.molar_mass_of_mixture_by_mass(3), relations.summation_factor_of_mixture(3), relations.mean_of(3), relations.mean_of_roots(3))
 each_relation = pytest.mark.parametrize("relation", EVERY, ids=lambda relation: relation.id)
 
 # An ordinary value of each argument, in SI, by name; the same quantity has the same name in every relation.
@@ -29,7 +29,7 @@ ORDINARY = {
     "y": 1.5e-4, "h": 0.12, "A": 0.209, "O_wet": 0.07, "O_dry": 0.08, "O_ref": 0.11, "O": 0.085, "O_hold": 0.06, "O_owe": 0.03,
     "CO2": 0.09, "M_O2": 0.032, "M_CO2": 0.044, "M_N2": 0.028, "CO2_wet": 0.085, "CO2_ref": 0.12, "O2": 0.08, "n": 3.0, "M_as": 0.046, "M_dry": 0.0297, "M_water": 0.018015,
     "M_air": 0.028965, "M_O2": 0.032, "M_CO2": 0.044, "M_N2": 0.028, "x_1": 0.7, "x_2": 0.2, "x_3": 0.1, "M_1": 0.016, "M_2": 0.03, "M_3": 0.028, "s_1": 0.045, "s_2": 0.09,
-    "w_1": 0.7, "w_2": 0.2, "w_3": 0.1, "s_3": 0.017, "tau": 0.544, "T_c": 647.096, "p_c": 22.064e6, "a_1": -7.86, "a_2": 1.84, "a_3": -11.8, "a_4": 22.7, "a_5": -16.0,
+    "y_1": 1.4e-4, "y_2": 1.5e-4, "y_3": 1.7e-4, "w_1": 0.7, "w_2": 0.2, "w_3": 0.1, "s_3": 0.017, "tau": 0.544, "T_c": 647.096, "p_c": 22.064e6, "a_1": -7.86, "a_2": 1.84, "a_3": -11.8, "a_4": 22.7, "a_5": -16.0,
     "a_6": 1.8, "T_t": 273.16, "theta": 0.93, "p_t": 611.657, "b_1": 0.0033, "b_2": 1.21, "b_3": 1.70, "e": 2300.0, "phi": 0.6,
     "p_s": 2339.0, "p_w": 1800.0, "T_d": 298.0, "T_w": 290.0, "V_l": 5e-5, "rho": 998.2, "m": 0.05, "V_read": 0.8, "Y": 0.995, "V": 0.79,
     "n_w": 2.8, "n_g": 33.0, "g": 0.1, "r": 0.06, "X": 0.11, "h_r": 0.008, "p_b": 99e3, "p_g": -120.0, "p_0": 101325.0, "T_0": 288.15,

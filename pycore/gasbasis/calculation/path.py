@@ -6,7 +6,7 @@ and a column with array types, because every step is one call of one relation.
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from types import MappingProxyType
 from typing import Mapping
 
@@ -79,6 +79,7 @@ class Path:
     basis: tuple[str, ...]             # the owed basis in words, part by part
     species_text: str = ""
     warnings: tuple[str, ...] = ()
+    correlations: Mapping[tuple[str, str], float] = field(default_factory=dict)   # pairs of leaf names
 
 
 def evaluate(path: Path, values: Mapping[str, object] = MappingProxyType({})) -> dict[str, object]:

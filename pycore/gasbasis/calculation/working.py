@@ -80,7 +80,7 @@ def _number(value: float, shown: Shown) -> str:
 
 def _display(path: Path, name: str, known: dict, shown: dict[str, Shown]) -> float:
     """A result, or the held value, as the number that is printed."""
-    if name == path.held:
+    if name in path.leaves:
         return path.leaves[name].value / path.held_factor
     return known[name] / shown[name].factor
 

@@ -17,7 +17,12 @@ def main(arguments: list[str] | None = None) -> int:
     for choice in options.settle:
         if "=" not in choice:
             parser.error(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
-    reply = json.loads(answer(json.dumps({"task": "restate", "sheet": _sheet(options), "usual": options.usual})))
+    try:
+        sheet = _sheet(options)
+    except (OSError, ValueError) as error:
+        print(f"The sheet {options.file} cannot be read: {error}. Give a file that gasbasis kept, or the texts.", file=sys.stderr)
+        return NOT_UNDERSTOOD
+    reply = json.loads(answer(json.dumps({"task": "restate", "sheet": sheet, "usual": options.usual})))
     if not reply["ok"]:
         print(_problem_text(reply["error"]), file=sys.stderr)
         return NOT_UNDERSTOOD
@@ -30,9 +35,13 @@ def _parser() -> argparse.ArgumentParser:
     parser = argparse.ArgumentParser(prog="gasbasis", description="Restate a trace-gas concentration on another basis.")
     commands = parser.add_subparsers(dest="command", required=True)
     restate = commands.add_parser("restate", help="restate a held statement as an owed figure")
-    restate.add_argument("--hold", required=True, help='what you hold, as written: "NOx 142 ppm dry as NO2"')
-    restate.add_argument("--owe", required=True, help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
+    restate.add_argument("file", nargs="?", default="", metavar="SHEET.json", help="a sheet file; what is given beside it takes the place of its texts")
+    restate.add_argument("--hold", default="", help='what you hold, as written: "NOx 142 ppm dry as NO2"')
+    restate.add_argument("--owe", default="", help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
     restate.add_argument("--gas", default="", help='the gas it was in: "12 %% H2O, 9.2 %% O2 dry, ambient O2 20.9 %%"')
+    restate.add_argument("--sample", default="", help='a collected sample: "Hg 12.4 ng, meter 1204.3 L to 1324.8 L, meter 24 °C, barometer 98.2 kPa, dry"')
+    restate.add_argument("--prepared", default="", help='a prepared gas: "cylinder NO 998 ppm, 250 mL/min at 0 °C, 101.325 kPa, in 4750 mL/min at 0 °C, 101.325 kPa"')
+    restate.add_argument("--emission", default="", help='what makes a rate of it: "flow 42000 m3/h at 273.15 K, 101.325 kPa, dry", "fuel natural gas, 20 MW gross"')
     restate.add_argument("--limit", default="", help='the limit, with its own basis: "200 mg/m3"')
     restate.add_argument("--rule", default="", help="the decision rule agreed, e.g. simple, guarded, three_way")
     restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
@@ -42,14 +51,24 @@ def _parser() -> argparse.ArgumentParser:
     return parser
 
 
+_TEXTS = ("hold", "gas", "owe", "limit", "sample", "prepared", "emission", "rule_book")
+
+
 def _sheet(options: argparse.Namespace) -> dict:
-    settled = {}
+    """The sheet of the file, with what was given beside it in its place. Raises OSError, ValueError for a file that cannot be read."""
+    sheet = {"schema": 1}
+    if options.file:
+        with open(options.file, encoding="utf-8") as file:
+            sheet = json.load(file)
+        if not isinstance(sheet, dict):
+            raise ValueError("it holds no sheet")
+    settled = dict(sheet.get("settled", {}))
     for choice in options.settle:
         doubt, _, reading = choice.partition("=")
         settled[doubt.strip()] = reading.strip()
     if options.rule:
         settled["limit.decision_rule"] = options.rule
-    return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "limit": options.limit, "rule_book": options.rule_book, "settled": settled}
+    return {**sheet, **{name: given for name in _TEXTS if (given := getattr(options, name))}, "settled": settled}
 
 
 def _status(result: dict) -> int:
@@ -64,6 +83,7 @@ def _text(result: dict) -> str:
         lines.append(result["figure"]["text"])
         lines.extend(f"warning  {text}" for text in result["warnings"])
     lines.extend(_problem_text(problem) for problem in result["problems"])
+    lines.extend(f"{row['title']}: {row['text']}" for row in result.get("sample", {}).get("about", ()))
     lines.extend(_verdict_lines(result["verdict"]))
     if result["spread"] and "low" in result["spread"]:
         ends = result["spread"]

@@ -1,17 +1,10 @@
 """What each piece is called, one sentence on it, an example, and the usual choices: one table for page and terminal."""
 from __future__ import annotations
 
-from dataclasses import dataclass
 from typing import Mapping
 
-
-@dataclass(frozen=True)
-class Field:
-    title: str
-    help: str
-    example: str
-    choices: tuple[str, ...] = ()
-    numeric: bool = False
+from gasbasis.language.describe_ways import WAY_ADDABLE, WAY_FIELDS
+from gasbasis.language.described import Field
 
 
 FIELDS: Mapping[str, Field] = {
@@ -66,6 +59,7 @@ ADDABLE: Mapping[str, tuple[str, ...]] = {
     "gas": ("water_content", "water_route", "droplets", "meter_factor", "cooler", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure", "pressure_route",
             "barometer", "barometer_route", "model"),
     "owe": ("unit", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as"),
+    **WAY_ADDABLE,
     "limit": ("value", "temperature", "pressure", "water", "oxygen"),
 }
 # The gas line's own temperature and pressure are those of the gas as it flowed.
@@ -78,3 +72,8 @@ GAS_CHOICES: Mapping[str, tuple[str, ...]] = {
     "temperature": (), "pressure": (), "oxygen": (), "matrix_gas": ("in nitrogen", "in dry air", "in combustion gas", "CH4 93, C2H6 4, CO2 1, N2 2"),
 }
 GAS_EXAMPLES: Mapping[str, str] = {"temperature": "182 °C", "pressure": "1008 hPa", "oxygen": "9.2 % O2 dry"}
+
+
+def fields_of(side: str) -> Mapping[str, Field]:
+    """Every piece a side can have."""
+    return WAY_FIELDS.get(side, FIELDS)

@@ -12,6 +12,7 @@ import { mountBudget } from "./regions/budget.js";
 import { mountCompare } from "./regions/compare.js";
 import { mountDoubts } from "./regions/doubts.js";
 import { mountFigure } from "./regions/figure.js";
+import { mountHelp } from "./regions/help.js";
 import { mountKept } from "./regions/kept.js";
 import { mountKeys } from "./regions/keys.js";
 import { mountPanels } from "./regions/panels.js";
@@ -229,6 +230,7 @@ const regions = [
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
   mountPassOn($("pass-on"), dispatch), mountKept($("kept"), dispatch, { proposed: figureNamed, file: kept.fileOf }), mountReceive($("receive"), dispatch),
   mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountAside($("aside"), dispatch),
+  mountHelp(["hold", "gas", "owe", "limit", "doubts", "steps", "verdict", "working", "budget", "pass-on", "kept", "receive", "record", "compare"].map($)),
 ];
 mountKeys($("keys"));
 measureViewport($("figure"));

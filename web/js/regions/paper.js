@@ -1,10 +1,11 @@
 /** A record on paper: one A4 for a plain sheet. Every word comes from the record; the formulas are drawn where the page has them. */
-import { equation } from "../formula.js";
+import { equation, placeEquation } from "../formula.js";
 import { linkOf } from "../link.js";
 import { element } from "../page.js";
 import { qrCode } from "./qr.js";
 
 const SIDES = [["hold", "You hold"], ["gas", "It was in"], ["owe", "You owe"], ["limit", "Limit"]];
+const COLUMNS = ["input", "value", "u", "sensitivity", "contribution", "share"];
 const READ = { memory: "from memory, not from the document", secondary: "read in a copy", abstract: "abstract only" };
 
 /** @param {HTMLElement} paper @param {any} record @param {any[]} working the steps with their formula trees */
@@ -72,11 +73,15 @@ function doubts({ settled, left_open, no_visible_effect }) {
 
 function worth({ uncertainty }) {
   if (!uncertainty) return [];
-  const { standard_text, unit_text, expanded_text, coverage_text, relative_text } = uncertainty, table = element("table"), body = element("tbody"), top = element("tr");
-  top.append(...["input", "value", "u", "sensitivity", "contribution", "share"].map((name) => { const cell = element("th", name); cell.scope = "col"; return cell; }));
+  const { standard_text, unit_text, expanded_text, coverage_text, relative_text } = uncertainty, table = element("table", "", "stacks"), body = element("tbody"), top = element("tr");
+  top.append(...COLUMNS.map((name) => { const cell = element("th", name); cell.scope = "col"; return cell; }));
   for (const row of uncertainty.rows) {
     const line = element("tr");
-    line.append(...[row.input, row.value_text, `${row.standard_text} (${row.distribution})`, row.sensitivity_text, row.contribution_text, row.share_text].map((text) => element("td", text)));
+    line.append(...[row.input, row.value_text, `${row.standard_text} (${row.distribution})`, row.sensitivity_text, row.contribution_text, row.share_text].map((text, index) => {
+      const cell = element("td", text);
+      cell.dataset.label = COLUMNS[index];
+      return cell;
+    }));
     body.append(line);
   }
   const topped = element("thead");
@@ -111,7 +116,7 @@ function formulas(...drawn) {
 
 function formula(symbol, tree, text) {
   const node = element("div", "", "formula");
-  node.append(equation(symbol, tree, text));
+  placeEquation(node, equation(symbol, tree, text));
   return node;
 }
 

@@ -87,7 +87,7 @@ def look(sample: bytes, said: Mapping[str, object] | None = None) -> Layout:
     """
     said, draft = said or {}, _Draft()
     encoding = str(said.get("encoding") or _encoding(sample, draft))
-    lines = _decoded(sample, encoding).splitlines()
+    lines = [line.rstrip("\r") for line in _decoded(sample, encoding).split("\n")]
     if len(sample) >= SAMPLE:
         lines = lines[:-1]              # the last one may be cut
     lines = lines[:_ROWS]

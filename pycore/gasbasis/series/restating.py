@@ -39,17 +39,24 @@ class Restating:
 
     def figure(self, texts: Sequence[str], values: Sequence[float]) -> float:
         """The figure in the owed unit. Raises CoreError with the reason there is none."""
-        for function in self.functions:
+        for index, function in enumerate(self.functions):
             found = function(*values)
             if found == found:
+                if index:              # what held for this row is likely to hold for the next
+                    self.functions.insert(0, self.functions.pop(index))
                 return found
         return self._laid(texts, values)
 
     def column(self, columns: Sequence[Sequence[float]]) -> list[float]:
-        """The figures of many rows by the path met most lately; NaN where it does not hold."""
+        """The figures of many rows by the paths met so far; NaN where none of them holds."""
         if not self.functions:
-            return [NAN] * len(columns[0])
-        return list(map(self.functions[0], *columns))
+            return [NAN] * len(columns[0]) if columns else []
+        found = list(map(self.functions[0], *columns))
+        for function in self.functions[1:]:
+            if not math.isnan(sum(found)):
+                break
+            found = [figure if figure == figure else function(*row) for figure, row in zip(found, zip(*columns))]
+        return found
 
     def _laid(self, texts: Sequence[str], values: Sequence[float]) -> float:
         row = self.template.row(texts)
@@ -64,13 +71,6 @@ class Restating:
             else:
                 self.functions.append(function)
         return figure
-
-    def promote(self, texts: Sequence[str], values: Sequence[float]) -> None:
-        """Bring the path that holds for this row to the front, where whole columns are tried."""
-        for index, function in enumerate(self.functions):
-            if function(*values) == function(*values):
-                self.functions.insert(0, self.functions.pop(index))
-                return
 
 
 def _same(first: float, second: float) -> bool:

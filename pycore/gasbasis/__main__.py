@@ -6,6 +6,11 @@ import json
 import sys
 
 from gasbasis.answer import answer
+from gasbasis.errors import CoreError, NotUnderstood
+from gasbasis.language.edit import edit
+from gasbasis.language.gas import read_gas
+from gasbasis.language.statement import read_statement
+from gasbasis.series import terminal
 
 FIGURE, NOT_UNDERSTOOD, DOUBTS_OPEN = 0, 2, 3
 
@@ -14,15 +19,22 @@ def main(arguments: list[str] | None = None) -> int:
     """Run one command. Exit status 0: a figure; 3: doubts open; 2: not understood."""
     parser = _parser()
     options = parser.parse_args(arguments)
+    if options.command == "series":
+        return options.run(options)
     for choice in options.settle:
         if "=" not in choice:
             parser.error(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
-    reply = json.loads(answer(json.dumps({"task": "restate", "sheet": _sheet(options), "usual": options.usual})))
+    try:
+        sheet = _with_uncertainties(_sheet(options), options.uncertain)
+    except CoreError as error:
+        print(_problem_text(error.as_json()), file=sys.stderr)
+        return NOT_UNDERSTOOD
+    reply = json.loads(answer(json.dumps({"task": "restate", "sheet": sheet, "usual": options.usual})))
     if not reply["ok"]:
         print(_problem_text(reply["error"]), file=sys.stderr)
         return NOT_UNDERSTOOD
     result = reply["answer"]
-    print(json.dumps(result, ensure_ascii=False, indent=1) if options.json else _text(result))
+    print(json.dumps(_named(result), ensure_ascii=False, indent=1) if options.json else _text(result))
     return _status(result)
 
 
@@ -36,9 +48,12 @@ def _parser() -> argparse.ArgumentParser:
     restate.add_argument("--limit", default="", help='the limit, with its own basis: "200 mg/m3"')
     restate.add_argument("--rule", default="", help="the decision rule agreed, e.g. simple, guarded, three_way")
     restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
+    restate.add_argument("--uncertain", action="append", default=[], metavar='"NAME ± ..."',
+                         help='the uncertainty of an input: "T 2 K", "O2 0.2 % (k=2)", "value 5 %%"; repeatable')
     restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
     restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
     restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")
+    terminal.add_command(commands)
     return parser
 
 
@@ -50,6 +65,32 @@ def _sheet(options: argparse.Namespace) -> dict:
     if options.rule:
         settled["limit.decision_rule"] = options.rule
     return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "limit": options.limit, "rule_book": options.rule_book, "settled": settled}
+
+
+_INPUTS = {"value": (("hold", "value"),), "O2": (("gas", "oxygen"), ("hold", "oxygen")), "CO2": (("gas", "carbon_dioxide"),), "H2O": (("gas", "water_content"), ("gas", "water_route")),
+           "T": (("gas", "temperature"), ("hold", "temperature")), "p": (("gas", "pressure"), ("gas", "pressure_route"), ("hold", "pressure")), "barometer": (("gas", "barometer"),)}
+
+
+def _with_uncertainties(sheet: dict, stated: list[str]) -> dict:
+    """The texts with each stated uncertainty written behind its input. Raises CoreError."""
+    for text in stated:
+        name, _, amount = text.strip().partition(" ")
+        if name not in _INPUTS or not amount.strip():
+            raise NotUnderstood(f"--uncertain '{text}' names no input and its uncertainty.", hint=f"For example 'T 2 K'; inputs: {', '.join(_INPUTS)}.")
+        for side, field in _INPUTS[name]:
+            record, _ = read_gas(sheet[side]) if side == "gas" else read_statement(sheet[side], side)
+            piece = next((piece for piece in record.pieces if piece.field == field), None)
+            if piece is not None:
+                sheet[side] = edit(sheet[side], side, field, f"{piece.text} ± {amount.strip().lstrip('±').strip()}")
+                break
+        else:
+            raise NotUnderstood(f"--uncertain '{text}': that input is not in the texts.", hint="Type the input first, or name another.")
+    return sheet
+
+
+def _named(result: dict) -> dict:
+    """The answer with the budget and the display reading also under names of their own, for scripts."""
+    return result | {"budget": (result["uncertainty"] or {}).get("rows", []), "turned_round": (result["verdict"] or {}).get("turned_round")}
 
 
 def _status(result: dict) -> int:

@@ -15,6 +15,7 @@ from gasbasis.records.restated import restated
 from gasbasis.records import bounded_json
 from gasbasis.records import simulated as simulated_record
 from gasbasis.records.sheet import read_sheet, write_sheet
+from gasbasis.records.varied import varied
 
 LONGEST_REQUEST = 200_000              # characters; a sheet is far below, a pasted file far above
 SIDES = ("hold", "gas", "owe", "limit")
@@ -101,6 +102,10 @@ def _monte_carlo(request: Mapping) -> dict:
     return simulated_record.simulated(read_sheet(request.get("sheet")), request.get("seed", 1), request.get("trials"), request.get("usual") is True)
 
 
+def _vary(request: Mapping) -> dict:
+    return varied(read_sheet(request.get("sheet")), request.get("field"), request.get("low"), request.get("high"), request.get("usual") is True)
+
+
 TASKS: Mapping[str, Callable[[Mapping], dict]] = {
     "restate": _restate,
     "edit": _edit,
@@ -108,6 +113,7 @@ TASKS: Mapping[str, Callable[[Mapping], dict]] = {
     "link": _link,
     "open": _open,
     "monte_carlo": _monte_carlo,
+    "vary": _vary,
     "catalogue": lambda request: catalogue(),
     "version": lambda request: {"version": __version__},
 }

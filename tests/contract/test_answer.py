@@ -31,7 +31,8 @@ def test_every_task_answers() -> None:
     code = json.loads(answer(json.dumps({"task": "link", "sheet": sheet, "figure": "8.339 µg/m³"})))["answer"]["code"]
     requests = {"restate": {"sheet": sheet}, "edit": {"text": "CO 1 ppm", "side": "hold", "field": "water", "to": "dry"},
                 "search": {"what": "species", "text": "merc"}, "link": {"sheet": sheet, "figure": ""}, "open": {"code": code},
-                "monte_carlo": {"sheet": {**sheet, "hold": "Hg 1 ± 0.1 ppb v/v"}}}
+                "vary": {"sheet": sheet, "field": "hold.value", "low": "1", "high": "3"},
+                    "monte_carlo": {"sheet": {**sheet, "hold": "Hg 1 ± 0.1 ppb v/v"}}}
     for task in TASKS:
         reply = json.loads(answer(json.dumps({"task": task, **requests.get(task, {})})))
         assert reply["ok"], (task, reply)

@@ -306,9 +306,9 @@ RESTS_ON_MEMORY = {
     "rule_book": {"eu_incineration", "eu_incineration_waste_oil", "us_hazardous_waste_7", "us_boiler_3", "us_turbine_15",
                   "us_mercury_utility", "china_thermal_power", "china_incineration", "japan_coal", "japan_gas", "japan_waste",
                   "india_incinerator", "eu_ambient_air", "uk_workplace_air", "gas_iso_mercury", "gas_normal", "gas_us_14696"},
-    "table": {"student_t", "f_factor_coefficients", "mercury_vapour dumarey", "f_factors municipal_waste", "liquid_densities water", "liquid_densities mercury"},
+    "table": {"aga8_ranges", "student_t", "f_factor_coefficients", "mercury_vapour dumarey", "f_factors municipal_waste", "liquid_densities water", "liquid_densities mercury"},
 }
-COEFFICIENT_TABLES = ("aga8_detail", "cautious_names", "confidence_intervals", "f_factor_coefficients", "f_factors", "iso6976_2016", "liquid_densities",
+COEFFICIENT_TABLES = ("aga8_detail", "aga8_ranges", "cautious_names", "confidence_intervals", "f_factor_coefficients", "f_factors", "iso6976_2016", "liquid_densities",
                       "mercury_vapour", "student_t", "water_saturation")
 
 

@@ -19,7 +19,7 @@ from gasbasis.physics import elementary
 from gasbasis.relations.relation import Bound, Relation, Symbol
 from gasbasis.relations.trace import Traced, formula_tree, plain_text, python_source, trace
 
-EVERY = (*relations.every(), relations.molar_mass_of_mixture(3), relations.molar_mass_of_mixture_by_mass(3), relations.summation_factor_of_mixture(3))
+EVERY = (*relations.every(), relations.molar_mass_of_mixture(3), relations.molar_mass_of_mixture_by_mass(3), relations.summation_factor_of_mixture(3), relations.mean_of(3), relations.mean_of_roots(3))
 each_relation = pytest.mark.parametrize("relation", EVERY, ids=lambda relation: relation.id)
 
 # An ordinary value of each argument, in SI, by name; the same quantity has the same name in every relation.
@@ -29,14 +29,25 @@ ORDINARY = {
     "y": 1.5e-4, "h": 0.12, "A": 0.209, "O_wet": 0.07, "O_dry": 0.08, "O_ref": 0.11, "O": 0.085, "O_hold": 0.06, "O_owe": 0.03,
     "CO2": 0.09, "M_O2": 0.032, "M_CO2": 0.044, "M_N2": 0.028, "CO2_wet": 0.085, "CO2_ref": 0.12, "O2": 0.08, "n": 3.0, "M_as": 0.046, "M_dry": 0.0297, "M_water": 0.018015,
     "M_air": 0.028965, "M_O2": 0.032, "M_CO2": 0.044, "M_N2": 0.028, "x_1": 0.7, "x_2": 0.2, "x_3": 0.1, "M_1": 0.016, "M_2": 0.03, "M_3": 0.028, "s_1": 0.045, "s_2": 0.09,
-    "w_1": 0.7, "w_2": 0.2, "w_3": 0.1, "s_3": 0.017, "tau": 0.544, "T_c": 647.096, "p_c": 22.064e6, "a_1": -7.86, "a_2": 1.84, "a_3": -11.8, "a_4": 22.7, "a_5": -16.0,
+    "y_1": 1.4e-4, "y_2": 1.5e-4, "y_3": 1.7e-4, "w_1": 0.7, "w_2": 0.2, "w_3": 0.1, "s_3": 0.017, "tau": 0.544, "T_c": 647.096, "p_c": 22.064e6, "a_1": -7.86, "a_2": 1.84, "a_3": -11.8, "a_4": 22.7, "a_5": -16.0,
     "a_6": 1.8, "T_t": 273.16, "theta": 0.93, "p_t": 611.657, "b_1": 0.0033, "b_2": 1.21, "b_3": 1.70, "e": 2300.0, "phi": 0.6,
     "p_s": 2339.0, "p_w": 1800.0, "T_d": 298.0, "T_w": 290.0, "V_l": 5e-5, "rho": 998.2, "m": 0.05, "V_read": 0.8, "Y": 0.995, "V": 0.79,
     "n_w": 2.8, "n_g": 33.0, "g": 0.1, "r": 0.06, "X": 0.11, "h_r": 0.008, "p_b": 99e3, "p_g": -120.0, "p_0": 101325.0, "T_0": 288.15,
-    "L": 0.0065, "H": 420.0, "p_sl": 101500.0, "z": 0.05, "s": 0.048,
+    "C_p": 0.84, "D": 1.8, "a": 1.2, "b": 2.1, "v": 14.0, "q": 12.0, "m_dry": 0.1,
+    "E": 2e-11, "P": 2e7, "F_d": 2.3e-7, "F_w": 2.8e-7, "F_c": 2.8e-8, "B": 0.027, "K_h": 22.7, "K_c": 9.55, "K_s": 3.56, "K_n": 0.874, "K_o": 2.87, "C": 0.75, "N": 0.014,
+    "S": 0.012, "Q": 29e6, "dp_1": 120.0, "dp_2": 130.0, "dp_3": 141.0, "V_end": 1.3248, "V_start": 1.2043, "m_front": 12e-12, "m_back": 0.4e-12, "m_blank": 0.3e-12,
+    "gamma_a": 1.0e-10, "gamma_b": 1.1e-10, "t": 3600.0, "n_c": 1.8e-4, "n_d": 3.3e-3, "e_2": 1.89, "e_3": 2.0, "e_4": 8.0, "e_5": 8.5, "e_6": 9.0, "d_0": 2858.0, "d": 2858.4, "p_T": 28840.0, "p_d": 1857.0, "f": 1.0, "L": 0.0065, "H": 420.0, "p_sl": 101500.0, "z": 0.05, "s": 0.048,
 }
 # Where the same letter is another quantity, or another range, in one relation.
 IN_ONE = {
+    "duct_velocity": {"M": 0.0288, "s": 11.4}, "volume_flow": {"A": 2.5}, "dry_gas_factor": {"H": 0.051, "O": 0.079}, "mass_for_recovery": {"r": 0.96, "m": 12e-12},
+    "mass_less_blank": {"m": 12e-12}, "mass_concentration_of_sample": {"m": 12e-12, "V": 0.12}, "mass_per_product": {"m": 0.002, "r": 3.0}, "mass_rate": {"gamma": 2e-4},
+    "mass_concentration_of_permeation": {"m": 2e-12, "q": 2.5e-5}, "amount_flow": {"q": 4e-6}, "mass_of_vapour": {"gamma": 1.4e-5, "V": 1e-7},
+    "mass_concentration_of_injection": {"m": 1.4e-12, "V": 0.002}, "saturated_mass_concentration": {"A": -8.134459741, "B": 3240.871534, "D": 3.21652261},
+    "vapour_pressure_of_mercury": {"T_c": 1764.0, "p_c": 167e6, "a_1": -4.57618368, "a_2": -1.40726277, "a_3": 2.36263541, "a_4": -31.0889985, "a_5": 58.0183959, "a_6": -27.6304546},
+    "mass_concentration_of_vapour": {"p_s": 0.17, "M": 0.20059}, "mean_rate": {"V": 0.12}, "carbon_dioxide_factor": {"K_c": 2.0}, "mass_per_output": {"m": 0.002},
+    "mass_per_heat_from_mass_rate": {"m": 0.002},
+    "amount_density_step": {"p": 6e6, "p_0": 5.99e6, "T": 288.15, "T_0": 288.0}, "compression_factor_from_amount_density": {"p": 6e6, "T": 288.0},
     "vapour_pressure_from_wet_bulb": {"A": 6.62e-4}, "barometer_at_altitude": {"g": 9.80665, "M": 0.0289644},
     "barometer_from_sea_level": {"g": 9.80665, "M": 0.0289644}, "liquid_column": {"g": 9.80665, "rho": 13595.1},
     "sublimation_pressure_over_ice": {"a_1": -21.2, "a_2": 27.3, "a_3": -6.1}, "reduced_temperature": {"T": 253.0},

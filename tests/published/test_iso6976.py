@@ -80,8 +80,8 @@ def test_a_real_gas_through_the_one_door() -> None:
 
 
 @pytest.mark.parametrize(("gas", "owe", "message"), [
-    ("CH4 96, N2 4, real gas", "mg/m3 at 25 °C, 101.325 kPa", "0, 15, 15.55 and 20"), ("CH4 96, N2 4, real gas", "mg/m3 at 15 °C, 60 bar", "90 kPa to 110 kPa"),
-    ("CH4 96, C6H5Cl 4, real gas", "mg/m3 at 15 °C, 101.325 kPa", "no summation factor"), ("real gas", "mg/m3 at 15 °C, 101.325 kPa", "needs its composition")])
+    ("CH4 96, N2 4, real gas by ISO 6976", "mg/m3 at 25 °C, 101.325 kPa", "0, 15, 15.55 and 20"), ("CH4 96, N2 4, real gas by ISO 6976", "mg/m3 at 15 °C, 60 bar", "90 kPa to 110 kPa"),
+    ("CH4 96, C6H5Cl 4, real gas by ISO 6976", "mg/m3 at 15 °C, 101.325 kPa", "no summation factor"), ("real gas", "mg/m3 at 15 °C, 101.325 kPa", "needs its composition")])
 def test_where_iso_6976_ends(gas: str, owe: str, message: str) -> None:
     result = json.loads(answer(json.dumps({"task": "restate", "sheet": {"hold": "H2S 4 ppmv", "owe": owe, "gas": gas}})))["answer"]
     assert result["figure"] is None and any(message in problem["message"] for problem in result["problems"]), result["problems"]

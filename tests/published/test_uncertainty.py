@@ -7,7 +7,8 @@ import math
 import pytest
 
 from gasbasis.answer import answer
-from gasbasis.calculation.monte_carlo import cholesky, correlation_matrix, numerical_tolerance, shortest_interval
+from gasbasis.calculation.correlations import cholesky, correlation_matrix
+from gasbasis.calculation.monte_carlo import numerical_tolerance, shortest_interval
 from gasbasis.errors import OutOfRange
 
 

@@ -13,6 +13,7 @@ import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
 import { mountExamples, mountTools } from "./regions/tools.js";
+import { mountVary } from "./regions/vary.js";
 import { mountVerdict } from "./regions/verdict.js";
 import { mountWorking } from "./regions/working.js";
 import { createState, emptySheet } from "./state.js";
@@ -21,7 +22,7 @@ import { measureViewport } from "./viewport.js";
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
-const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, notice: "",
+const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, varied: null, notice: "",
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
 const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
@@ -146,6 +147,15 @@ async function draw({ trials }) {
   }
 }
 
+async function vary({ field, low, high }) {
+  const { sheet } = state.get(), key = JSON.stringify([field, low, high, sheet]);
+  try {
+    state.change({ varied: { sheet, key, record: await core.ask({ task: "vary", sheet: { schema: 1, ...sheet }, field, low, high }, { channel: "vary" }) } });
+  } catch (error) {
+    state.change({ varied: { sheet, key, error: `${error.message} ${error.problem?.hint ?? ""}` } });
+  }
+}
+
 async function send() {
   const { sheet, answer } = state.get();
   try {
@@ -190,7 +200,7 @@ const INTENTIONS = {
   send,
   notice: ({ text }) => state.change({ notice: text }),
   restart: () => { core.restart(); restate(); },
-  draw,
+  draw, vary,
   "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
   later: () => state.change({ offline: { ...state.get().offline, update: false } }),
@@ -200,7 +210,7 @@ const dispatch = (intention) => INTENTIONS[intention.type](intention);
 const regions = [
   ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
   mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
-  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch),
+  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch), mountVary($("vary"), dispatch),
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
 ];
 mountKeys($("keys"));

@@ -39,11 +39,13 @@ def basis_words(case: Case, water: str | None, draft: Drafting) -> tuple[str, ..
         words.append(_MATRIX[matrix.id])
     if any(name.startswith("Z_") for name in draft.leaves):
         words.append("ideal gas")
-    if case.gas.model is not None and any(step.result.startswith("Z_") for step in draft.steps):
-        words.append("real gas by ISO 6976")
+    equations = dict.fromkeys(name for step in draft.steps if (name := _EQUATIONS.get(step.relation.id)))
+    if equations:
+        words.append(f"real gas by {' and '.join(equations)}")
     return tuple(words)
 
 
+_EQUATIONS = {"compression_factor": "ISO 6976", "compression_factor_from_amount_density": "AGA8 DETAIL"}
 _MATRIX = {"nitrogen": "in nitrogen", "dry_air": "in dry air", "combustion_gas": "in combustion gas",
            "stated": "in a gas of stated molar mass", "composition": "in the stated gas"}
 

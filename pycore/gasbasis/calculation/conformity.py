@@ -6,7 +6,8 @@ from typing import Mapping
 
 from gasbasis.calculation.basis_words import unit_words as printed_unit
 from gasbasis.calculation.case import Case, make_case
-from gasbasis.calculation.outcomes import BOUND, Settled, Spread, settle, spread
+from gasbasis.calculation.comparison import ROUNDING, counted, option
+from gasbasis.calculation.outcomes import BOUND, Outcome, Settled, Spread, settle, spread
 from gasbasis.calculation.path import Path, evaluate
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.uncertainty import Budget, budget
@@ -41,15 +42,18 @@ def unit_words(limit: Statement, owe: Statement) -> str:
     return printed_unit(limit_statement(limit, owe))
 
 
-def limits_of(limit: Statement) -> Limits:
-    """The interval in the limit's own unit. Raises Missing."""
+def limits_of(limit: Statement, choices: Mapping[str, str]) -> Limits:
+    """The interval in the limit's own unit, with the rounding agreed for the comparison. Raises Missing, OutOfRange."""
     if limit.value is None:
         raise Missing("The limit has no value.", hint="For example '200 mg/m3', or 'at least 20 ppm'.", field="limit")
-    first = float(limit.value.number.decimal)
+    typed, rounding = limit.value.number.decimal, option(ROUNDING, choices)
+    def rounded(value: float) -> float:
+        return rounding.apply(value, typed)
+    first = float(typed)
     upper = getattr(limit, "upper_value", None)
     if upper is not None:
-        return Limits(first, float(upper.number.decimal))
-    return Limits(lower=first) if getattr(limit, "limit_direction", None) == "lower" else Limits(upper=first)
+        return Limits(first, float(upper.number.decimal), rounded)
+    return Limits(lower=first, rounded=rounded) if getattr(limit, "limit_direction", None) == "lower" else Limits(upper=first, rounded=rounded)
 
 
 def on_limit_basis(settled: Settled, limit: Statement, choices: Mapping[str, str], take_usual: bool) -> Settled:
@@ -71,6 +75,8 @@ class Judged:
     problems: Mapping[str, CoreError]              # rule id -> why it cannot decide
     path: Path | None                              # when no doubt is open
     budget: Budget | None
+    outcomes: tuple[Outcome, ...]                  # those judged, in the order of the verdicts
+    open: tuple[Doubt, ...]                        # what the figure on the limit's basis still leaves open
 
     @property
     def spread_open(self) -> bool:
@@ -81,10 +87,26 @@ class Judged:
         """The distinct verdicts under a rule, over all readings."""
         return tuple(dict.fromkeys(verdict.words for verdict in self.verdicts.get(rule, ())))
 
+    def words_with(self, rule: str, doubt: str, reading: str) -> tuple[str, ...]:
+        """The distinct verdicts under a rule with one reading of a doubt, over all readings of the others."""
+        pairs = zip(self.outcomes, self.verdicts.get(rule, ()))
+        return tuple(dict.fromkeys(verdict.words for outcome, verdict in pairs if outcome.readings.get(doubt) == reading))
+
+    def decides(self, rule: str, doubt: str) -> bool:
+        """Whether the verdict changes with this doubt alone, somewhere; as a whole where one reading opens further doubts."""
+        groups: dict[tuple, set[str]] = {}
+        for outcome, verdict in zip(self.outcomes, self.verdicts.get(rule, ())):
+            if doubt in outcome.readings:
+                others = tuple(sorted(item for item in outcome.readings.items() if item[0] != doubt))
+                groups.setdefault(others, set()).add(verdict.words)
+        readings = {outcome.readings[doubt] for outcome in self.outcomes if doubt in outcome.readings}
+        aligned = any(len(words) > 1 for words in groups.values())
+        return aligned or len({frozenset(self.words_with(rule, doubt, reading)) for reading in readings}) > 1
+
 
 def judged(settled: Settled, limit: Statement, choices: Mapping[str, str], take_usual: bool = False, bound: int = BOUND) -> Judged:
     """The verdicts under the chosen rule, or under every rule when none is chosen. Raises CoreError."""
-    limits = limits_of(limit)
+    limits = limits_of(limit, choices)
     _refuse_number(choices.get(NUMBER))
     there = on_limit_basis(settled, limit, choices, take_usual)
     found = spread(there.case, bound)
@@ -92,7 +114,9 @@ def judged(settled: Settled, limit: Statement, choices: Mapping[str, str], take_
         raise next(outcome.problem for outcome in found.outcomes)
     path = lay(there.case) if not there.open else None
     known = budget(path) if path else None
-    results = [Result(outcome.value, *_uncertainty(there.case, outcome.readings, known)) for outcome in _telling(found)]
+    below, typed = settled.case.hold.value.number.below, limit.value.number.decimal
+    telling = tuple(_telling(found))
+    results = [Result(counted(outcome.value, below, typed, choices), *_uncertainty(there.case, outcome.readings, known)) for outcome in telling]
     chosen = choices.get(RULE) if choices.get(RULE) in RULES else None
     verdicts, problems = {}, {}
     for rule in [chosen] if chosen else RULES:
@@ -100,7 +124,7 @@ def judged(settled: Settled, limit: Statement, choices: Mapping[str, str], take_
             verdicts[rule] = tuple(judge(rule, result, limits, _number(choices)) for result in results)
         except CoreError as error:
             problems[rule] = error
-    return Judged(limits, found, chosen, verdicts, problems, path, known)
+    return Judged(limits, found, chosen, verdicts, problems, path, known, telling, there.open)
 
 
 def _telling(found: Spread, most: int = 64) -> list:

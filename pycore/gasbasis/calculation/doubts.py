@@ -15,6 +15,7 @@ from gasbasis.calculation.case import (MASS_FRACTION, MASS_LIKE, PARTIAL_PRESSUR
                                        same_conditions, stated_carbon_dioxide, stated_oxygen)
 from gasbasis.calculation.conditions import conditions_doubt, pressure_doubt, temperature_doubt
 from gasbasis.calculation.leaves import SIDE_TITLES, fixed_quantity
+from gasbasis.calculation.repeated import order_doubt
 from gasbasis.calculation.rules import with_usual
 from gasbasis.language.basis import (CORRECTED, DRY, MASS, MASS_BY_VOLUME, MEASURED, VOLUME, WET, Doubt, MatrixGas,
                                      Reading, Route)
@@ -312,4 +313,4 @@ def _basis_changes(case: Case) -> bool:
 
 
 _RULES: tuple[Callable[[Case], list[Doubt]], ...] = (
-    _parts_by, _conditions, _gauge_or_absolute, _column_temperature, _printed_conditions, _barometer, _reported_as, _diluent_meaning, _owed_diluent, _water, _oxygen_water, _ambient_oxygen, _matrix_gas)
+    _parts_by, _conditions, _gauge_or_absolute, _column_temperature, _printed_conditions, _barometer, _reported_as, _diluent_meaning, _owed_diluent, _water, _oxygen_water, _ambient_oxygen, _matrix_gas, order_doubt)

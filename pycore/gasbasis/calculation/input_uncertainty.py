@@ -2,6 +2,7 @@
 from __future__ import annotations
 
 import math
+from statistics import stdev
 
 from gasbasis.errors import OutOfRange
 from gasbasis.language.basis import Quantity, Uncertainty
@@ -11,7 +12,20 @@ UNSTATED_COVERAGE = 2.0                # how a bare "±" is taken until its doub
 
 
 def standard_uncertainty(quantity: Quantity) -> float:
-    """The standard uncertainty. [SI unit of the kind; that of a temperature is a difference] Raises OutOfRange."""
+    """The standard uncertainty. [SI unit of the kind; that of a temperature is a difference] Raises OutOfRange.
+
+    What was stated and the scatter of repeated readings add as variances.
+    """
+    return math.hypot(_stated(quantity), scatter(quantity))
+
+
+def scatter(quantity: Quantity) -> float:
+    """The standard uncertainty of the mean of repeated readings, s/sqrt(n); 0 without any (JCGM 100:2008, 4.2.3). [SI unit]"""
+    readings = quantity.number.readings
+    return stdev(map(float, readings)) / math.sqrt(len(readings)) * quantity.unit.factor if readings else 0.0
+
+
+def _stated(quantity: Quantity) -> float:
     stated = quantity.number.uncertainty
     if stated is None:
         return 0.0
@@ -42,11 +56,13 @@ def distribution(quantity: Quantity) -> str:
 
 
 def degrees_of_freedom(quantity: Quantity) -> float:
-    """As stated, else infinite. Raises OutOfRange."""
+    """As stated, and n - 1 of repeated readings, brought together (JCGM 100:2008, G.2b); else infinite. Raises OutOfRange."""
     stated = quantity.number.uncertainty
-    if stated is None or stated.degrees_of_freedom is None:
-        return math.inf
-    if stated.degrees_of_freedom <= 0:
-        raise OutOfRange(f"{stated.degrees_of_freedom} degrees of freedom were given; they are above zero.",
-                         hint="For n repeated readings they are n - 1.")
-    return float(stated.degrees_of_freedom)
+    own = math.inf if stated is None or stated.degrees_of_freedom is None else float(stated.degrees_of_freedom)
+    if own <= 0:
+        raise OutOfRange(f"{own:g} degrees of freedom were given; they are above zero.", hint="For n repeated readings they are n - 1.")
+    repeated = scatter(quantity)
+    if not repeated:
+        return own
+    bottom = repeated**4 / (len(quantity.number.readings) - 1) + _stated(quantity) ** 4 / own
+    return standard_uncertainty(quantity) ** 4 / bottom

@@ -6,8 +6,9 @@ from array import array
 from dataclasses import dataclass
 from random import Random
 from statistics import fmean, pstdev
-from typing import Callable, Mapping, Sequence
+from typing import Callable, Sequence
 
+from gasbasis.calculation.correlations import Correlations, cholesky, correlation_matrix
 from gasbasis.calculation.fuse import fuse
 from gasbasis.calculation.path import Leaf, Path
 from gasbasis.errors import OutOfRange
@@ -34,18 +35,17 @@ class Simulation:
     edges: tuple[float, float]
 
 
-def simulate(path: Path, seed: int, correlations: Mapping[tuple[str, str], float] | None = None,
-             progress: Callable[[int, int], None] = lambda done, of: None, most: int = MOST) -> Simulation:
+def simulate(path: Path, seed: int, progress: Callable[[int, int], None] = lambda done, of: None, most: int = MOST) -> Simulation:
     """Draw the inputs until mean, u and interval are stable, FEWEST trials at least.
 
-    `correlations` maps pairs of leaf names to coefficients (Gaussian inputs only). Raises OutOfRange.
+    Correlated inputs are drawn together; they must be Gaussian. Raises OutOfRange.
     """
     if not FEWEST <= most <= MOST:
         raise OutOfRange(f"{most} trials were asked for; {FEWEST} to {MOST} can be run.", hint="Leave it at the usual number.",
                          field="monte_carlo.trials")
     leaves = [leaf for leaf in path.leaves.values() if leaf.standard_uncertainty]
     figure = fuse(path, [leaf.name for leaf in leaves], checked=True)
-    draw = _drawing(leaves, correlations or {}, Random(seed))
+    draw = _drawing(leaves, path.correlations, Random(seed))
     values, blocks, outside, drawn = array("d"), [], 0, 0
     stable = False
     while drawn < most and not (stable and drawn >= FEWEST):
@@ -71,63 +71,43 @@ def _refuse_loss(outside: int, drawn: int) -> None:
                               "Check the largest ones.", field="uncertainty")
 
 
-def _drawing(leaves: Sequence[Leaf], correlations: Mapping[tuple[str, str], float], random: Random) -> Callable[[], list[float]]:
-    """A function that draws one set of inputs."""
-    gauss, uniform = random.gauss, random.uniform
-    rows = cholesky(correlation_matrix([leaf.name for leaf in leaves], correlations)) if correlations else None
+def _drawing(leaves: Sequence[Leaf], correlations: Correlations, random: Random) -> Callable[[], list[float]]:
+    """A function that draws one set of inputs; those that are correlated are drawn together."""
+    names = list(dict.fromkeys(name for pair in correlations for name in pair))
+    together = [leaf for leaf in leaves if leaf.name in names]
+    for leaf in together:
+        if leaf.distribution != "normal":
+            raise OutOfRange(f"A {leaf.distribution} input cannot be drawn with a correlation: only Gaussian ones can.",
+                             hint="State its uncertainty with a k, or leave the correlation out.", field="gas.correlations")
+    rows = cholesky(correlation_matrix([leaf.name for leaf in together], correlations))
+    makers = [None if leaf in together else _maker(leaf, random) for leaf in leaves]
+    gauss = random.gauss
 
     def independent() -> list[float]:
         return [one() for one in makers]
 
     def correlated() -> list[float]:
-        normal = [gauss(0.0, 1.0) for _ in leaves]
-        return [leaf.value + leaf.standard_uncertainty * sum(a * z for a, z in zip(row, normal)) for leaf, row in zip(leaves, rows)]
+        normal = [gauss(0.0, 1.0) for _ in together]
+        joint = iter([leaf.value + leaf.standard_uncertainty * sum(a * z for a, z in zip(row, normal)) for leaf, row in zip(together, rows)])
+        return [one() if one else next(joint) for one in makers]
 
-    def maker(leaf: Leaf) -> Callable[[], float]:
-        value, u = leaf.value, leaf.standard_uncertainty
-        if leaf.distribution == "rectangular":
-            half = u * math.sqrt(3.0)
-            return lambda: uniform(value - half, value + half)
-        if leaf.distribution == "triangular":
-            half = u * math.sqrt(6.0)
-            return lambda: random.triangular(value - half, value + half, value)
-        if math.isfinite(leaf.degrees_of_freedom):
-            freedom = leaf.degrees_of_freedom     # scaled and shifted t (JCGM 101:2008, 6.4.9)
-            return lambda: value + u * gauss(0.0, 1.0) / math.sqrt(random.gammavariate(freedom / 2, 2.0) / freedom)
-        return lambda: gauss(value, u)
-
-    makers = [maker(leaf) for leaf in leaves]
-    return correlated if rows else independent
+    return correlated if together else independent
 
 
-def correlation_matrix(names: Sequence[str], correlations: Mapping[tuple[str, str], float]) -> list[list[float]]:
-    """The full matrix of the stated coefficients. Raises OutOfRange outside -1..1."""
-    matrix = [[1.0 if a == b else 0.0 for b in names] for a in names]
-    for (first, second), coefficient in correlations.items():
-        if not -1.0 <= coefficient <= 1.0:
-            raise OutOfRange(f"A correlation of {coefficient:g} was given; it lies from -1 to 1.", hint="Check its sign and point.",
-                             field="correlations")
-        i, j = names.index(first), names.index(second)
-        matrix[i][j] = matrix[j][i] = coefficient
-    return matrix
-
-
-def cholesky(matrix: Sequence[Sequence[float]]) -> list[list[float]]:
-    """The lower triangle L with L L^T = matrix. Raises OutOfRange when it is not positive definite."""
-    size = len(matrix)
-    rows = [[0.0] * size for _ in range(size)]
-    for i in range(size):
-        for j in range(i + 1):
-            rest = matrix[i][j] - sum(rows[i][k] * rows[j][k] for k in range(j))
-            if i == j:
-                if rest <= 0.0:
-                    raise OutOfRange("The correlations contradict each other (the matrix is not positive definite).",
-                                     hint="Lower the coefficients between inputs that cannot all move together.",
-                                     field="correlations")
-                rows[i][i] = math.sqrt(rest)
-            else:
-                rows[i][j] = rest / rows[j][j]
-    return rows
+def _maker(leaf: Leaf, random: Random) -> Callable[[], float]:
+    """A function that draws one input from its distribution."""
+    value, u = leaf.value, leaf.standard_uncertainty
+    gauss, uniform = random.gauss, random.uniform
+    if leaf.distribution == "rectangular":
+        half = u * math.sqrt(3.0)
+        return lambda: uniform(value - half, value + half)
+    if leaf.distribution == "triangular":
+        half = u * math.sqrt(6.0)
+        return lambda: random.triangular(value - half, value + half, value)
+    if math.isfinite(leaf.degrees_of_freedom):
+        freedom = leaf.degrees_of_freedom     # scaled and shifted t (JCGM 101:2008, 6.4.9)
+        return lambda: value + u * gauss(0.0, 1.0) / math.sqrt(random.gammavariate(freedom / 2, 2.0) / freedom)
+    return lambda: gauss(value, u)
 
 
 def shortest_interval(ordered: Sequence[float], coverage: float = _COVERAGE) -> tuple[float, float]:

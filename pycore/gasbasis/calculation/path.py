@@ -6,7 +6,7 @@ and a column with array types, because every step is one call of one relation.
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from types import MappingProxyType
 from typing import Mapping
 
@@ -55,6 +55,7 @@ class Step:
     through: str | None = None
     parts: tuple[tuple[str, tuple[tuple[str, str], ...]], ...] = ()   # label, arguments to swap to undo it
     note: str = ""
+    solved: bool = False               # its result starts from a root found by iteration; the note tells the residual
 
 
 @dataclass(frozen=True)
@@ -92,6 +93,7 @@ class Path:
     species_text: str = ""
     warnings: tuple[str, ...] = ()
     decisions: tuple[Decision, ...] = ()
+    correlations: Mapping[tuple[str, str], float] = field(default_factory=dict)   # pairs of leaf names
 
 
 def evaluate(path: Path, values: Mapping[str, object] = MappingProxyType({})) -> dict[str, object]:

@@ -14,10 +14,12 @@ from gasbasis.calculation.basis_words import basis_words, species_words, unit_wo
 from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_CONCENTRATION, MASS_FRACTION,
                                        MASS_LIKE, PARTIAL_PRESSURE, UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor,
                                        diluent_changes, same_conditions, stated_carbon_dioxide, stated_oxygen)
+from gasbasis.calculation.correlations import correlations_of
 from gasbasis.calculation.entity import entities_per, entity
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Path, Shown, Step
+from gasbasis.calculation.repeated import corrected_one_by_one
 from gasbasis.errors import Missing, OutOfRange
-from gasbasis.language.basis import DRY, WET, Quantity, Species
+from gasbasis.language.basis import DRY, EACH, TOGETHER, WET, Quantity, Species
 from gasbasis.language.numbers import significant
 
 MASS_PER_AMOUNT = "mass_per_amount_of_gas"
@@ -101,8 +103,7 @@ class _Laying:
         case, draft = self.case, self.draft
         statement = case.record(side)
         if letter == "Z":
-            temperature = case.gas.temperature if statement.actual_volume else statement.temperature
-            return real_gas.ideal_or_real(draft, case, side, temperature, "" if case.gas.model is None else self.condition("p", side))
+            return real_gas.ideal_or_real(draft, case, side, self.condition)
         word = "temperature" if letter == "T" else "pressure"
         if statement.actual_volume and word == "pressure":
             return pressure.gas_pressure(draft, case, "for a volume as it flowed")
@@ -355,7 +356,13 @@ class _Laying:
 
 def lay(case: Case) -> Path:
     """The path of a settled case. Raises Missing, naming what a relation needs and was not given."""
-    return _Laying(case).lay()
+    if case.hold.averaging_order == EACH:
+        return corrected_one_by_one(case, lay)
+    path = _Laying(case).lay()
+    if not case.gas.correlations and case.hold.averaging_order != TOGETHER:
+        return path
+    found, warnings = correlations_of(case, path.leaves)
+    return replace(path, correlations=found, warnings=(*path.warnings, *warnings))
 
 
 def _one_species(case: Case) -> Species | None:

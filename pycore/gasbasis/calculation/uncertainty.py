@@ -7,15 +7,16 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass
-from types import MappingProxyType
 from typing import Mapping
 
-from uncertainties import ufloat
+from uncertainties import ufloat, umath
 
 from gasbasis import facts
 from gasbasis.calculation.path import Leaf, Path, evaluate
 from gasbasis.errors import OutOfRange
+from gasbasis.physics import elementary
 
+elementary.register("uncertainties", lambda name, value: getattr(umath, name)(value))
 COVERAGE_FACTOR = 2.0                  # about 95 % for a Gaussian figure (JCGM 100:2008, 6.3.3)
 
 
@@ -42,11 +43,9 @@ class Budget:
         return self.coverage_factor * self.standard_uncertainty
 
 
-def budget(path: Path, correlations: Mapping[tuple[str, str], float] = MappingProxyType({})) -> Budget | None:
-    """The uncertainty budget of a path; None when no input carries an uncertainty.
-
-    `correlations` maps pairs of leaf names to coefficients.
-    """
+def budget(path: Path) -> Budget | None:
+    """The uncertainty budget of a path, with its correlations; None when no input carries an uncertainty."""
+    correlations = path.correlations
     uncertain = {name: leaf for name, leaf in path.leaves.items() if leaf.standard_uncertainty}
     if not uncertain:
         return None

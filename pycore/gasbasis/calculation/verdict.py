@@ -16,15 +16,21 @@ NOT_SHOWN, NOT_DECIDED = "not shown within", "not decided"
 GUARD_ONE_SIDED = 1.64                 # w = 1.64 u leaves 5 % at the limit (ILAC-G8:09/2019, table 1)
 
 
+def _unrounded(value: float) -> float:
+    return value
+
+
 @dataclass(frozen=True)
 class Limits:
     """The tolerance interval, in the figure's unit. None: no limit on that side."""
 
     lower: float | None = None
     upper: float | None = None
+    rounded: Callable[[float], float] = _unrounded
 
     def beyond(self, value: float) -> str | None:
-        """On which side a value lies outside, in words; None inside or on a limit."""
+        """On which side a value, rounded as agreed, lies outside, in words; None inside or on a limit."""
+        value = self.rounded(value)
         high = self.upper is not None and value > self.upper
         low = self.lower is not None and value < self.lower
         if self.lower is not None and self.upper is not None:
@@ -33,7 +39,7 @@ class Limits:
 
     def moved(self, guard: float) -> "Limits":
         """The acceptance interval with both limits moved inwards by a guard band (outwards when negative)."""
-        return Limits(None if self.lower is None else self.lower + guard, None if self.upper is None else self.upper - guard)
+        return Limits(None if self.lower is None else self.lower + guard, None if self.upper is None else self.upper - guard, self.rounded)
 
 
 @dataclass(frozen=True)
@@ -62,7 +68,7 @@ class Verdict:
     compared: float                    # the value after subtraction and rounding, in the figure's unit
     guard_band: float
     probability_of_conformity: float | None
-    note: str = ""
+    counted: float = math.nan          # the value the result counts as, before subtraction and rounding
 
 
 def probability_of_conformity(result: Result, limits: Limits) -> float | None:
@@ -189,4 +195,4 @@ def judge(rule_id: str, result: Result, limits: Limits, typed: float | None = No
         raise OutOfRange("The figure is not a number.", field="limit")
     rule = RULES[rule_id]
     words, compared, guard = rule.decide(result, limits, typed)
-    return Verdict(words, rule.title, compared, guard, probability_of_conformity(result, limits))
+    return Verdict(words, rule.title, limits.rounded(compared), guard, probability_of_conformity(result, limits), result.value)

@@ -47,7 +47,7 @@ def _step_record(path: Path, step: Step, known: dict, shown: dict[str, Shown], n
     source = facts.source(relation.source)
     formula, substitution = formula_tree(relation), substituted_tree(relation, substitutes)
     result = ["symbol", relation.result.letter, relation.result.mark]
-    return {"kind": "relation", "relation": relation.id, "title": relation.title,
+    return {"kind": "solved" if step.solved else "relation", "relation": relation.id, "title": relation.title,
             "formula": formula, "substitution": substitution,
             "formula_text": f"{plain_text(result)} = {plain_text(formula)}",
             "substitution_text": f"{plain_text(result)} = {plain_text(substitution)}", "inputs": inputs,
@@ -80,7 +80,7 @@ def _number(value: float, shown: Shown) -> str:
 
 def _display(path: Path, name: str, known: dict, shown: dict[str, Shown]) -> float:
     """A result, or the held value, as the number that is printed."""
-    if name == path.held:
+    if name in path.leaves:
         return path.leaves[name].value / path.held_factor
     return known[name] / shown[name].factor
 

@@ -11,6 +11,7 @@ VOLUME, MASS, MASS_BY_VOLUME = "volume", "mass", "mass_by_volume"
 WET, DRY = "wet", "dry"
 MEASURED, CORRECTED = "measured", "corrected"
 UPPER, LOWER = "upper", "lower"
+EACH, TOGETHER, APART = "each", "together", "apart"
 
 
 @dataclass(frozen=True)
@@ -34,6 +35,7 @@ class Number:
     below: bool = False
     uncertainty: Uncertainty | None = None
     thousands: Decimal | None = None   # the other reading of "1,234": its separator groups thousands
+    readings: tuple[Decimal, ...] = ()  # repeated readings; `decimal` is their mean
 
 
 @dataclass(frozen=True)
@@ -161,6 +163,7 @@ class Statement:
     total_pressure: Quantity | None = None  # "15 Pa in 1013 hPa"
     averaging: str | None = None          # "8-h TWA", "daily mean", as it was written
     approximate: bool = False             # "approx. 10 ppm"
+    averaging_order: str | None = None    # EACH | TOGETHER | APART: what repeated readings of several quantities have to do with each other
     limit_direction: str | None = None    # UPPER | LOWER, as a limit says it; None with an upper_value: between the two
     upper_value: Quantity | None = None   # "5-10 ppm": `value` is the lower end, this the upper, in the same unit
     second_value: Quantity | None = None  # "10 ppm (15 mg/m3)": the same said a second time, in another unit
@@ -190,4 +193,5 @@ class Gas:
     pressure_route: Route | None = None   # gauge or static: the difference from the barometer
     barometer: Quantity | None = None
     barometer_route: Route | None = None  # altitude, alone or with a sea-level pressure
-    model: str | None = None              # "iso_6976" where a real gas was asked for; None: ideal, and said so
+    correlations: tuple[tuple[tuple[str, ...], tuple[str, ...], Quantity], ...] = ()   # "r(NOx, O2) = 0.6": the fields either may be, and the coefficient
+    model: str | None = None              # "real" (by the equation that reaches the state), "iso_6976", "aga8_detail"; None: ideal, and said so

@@ -107,14 +107,17 @@ def _component(reader, place: int) -> tuple[Species, Quantity, int] | None:
     return species, Quantity(replace(typed, thousands=None), unit("%")), percent.end() if percent else number.end()
 
 
-_REAL = re.compile(r"(?:as\s)?(?:a\s)?real gas(?:\s(?:by|per|to)\sISO\s?6976(?::2016)?)?|(?:Z\s)?(?:by|per)\sISO\s?6976(?::2016)?", re.IGNORECASE)
+_EQUATION = r"(?:ISO\s?6976(?::2016)?|AGA\s?-?8(?:\sDETAIL)?|DETAIL|ISO\s?(?:20765-1|12213-2))(?!\w)"
+_REAL = re.compile(rf"(?:as\s)?(?:a\s)?real gas(?:\s(?:by|per|to)\s{_EQUATION})?|(?:Z\s)?(?:by|per)\s{_EQUATION}", re.IGNORECASE)
 
 
 def _model(reader) -> bool:
     found = _REAL.match(reader.text, reader.place)
     if found is None:
         return False
-    reader.take("model", "iso_6976", reader.place, found.end())
+    said = found.group().upper()
+    model = "iso_6976" if "6976" in said else "aga8_detail" if re.search(r"AGA|DETAIL|20765|12213", said) else "real"
+    reader.take("model", model, reader.place, found.end())
     reader.place = found.end()
     return True
 

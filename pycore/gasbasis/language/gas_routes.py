@@ -158,4 +158,31 @@ def _meter_factor(reader) -> bool:
     return True
 
 
-CLAUSES = (wet_and_dry_bulb, _meter_factor, _barometer, _cooler, *ROUTES)
+_NAMES = (
+    (("hold.value",), r"value|reading|NOx|SO2|CO|Hg|dust"), (("gas.oxygen", "hold.oxygen"), r"O2|oxygen"),
+    (("gas.carbon_dioxide", "hold.carbon_dioxide"), r"CO2"), (("gas.water_content", "gas.water_route"), r"H2O|water|moisture|h"),
+    (("gas.temperature",), r"T|temperature"), (("gas.pressure", "gas.pressure_route", "gas.barometer"), r"p|pressure"),
+)
+_NAME = r"[A-Za-z][A-Za-z0-9]*"
+_CORRELATION = re.compile(rf"(?:(?:r|corr(?:elation)?)\s?\(|corr(?:elation)?\s(?:of|between)\s)\s?(?P<first>{_NAME})\s?(?:,|;|and|with)\s?"
+                          rf"(?P<second>{_NAME})(?:\s?\)\s?[=:]?|\s?[=:]|\s)\s?(?=[-+]?[\d.,])", re.IGNORECASE)
+
+
+def _correlation(reader) -> bool:
+    """ "r(NOx, O2) = 0.6": two inputs whose errors move together."""
+    found = _CORRELATION.match(reader.text, reader.place)
+    number = NUMBER.match(reader.text, found.end()) if found else None
+    if number is None:
+        return False
+    start, reader.place = reader.place, number.end()
+    pair = [next((fields for fields, pattern in _NAMES if re.fullmatch(pattern, name.strip(), re.IGNORECASE)), None) for name in (found["first"], found["second"])]
+    if None in pair or pair[0] == pair[1]:
+        reader.refuse(NotUnderstood("A correlation stands between two different inputs.",
+                                    hint="Names: value, O2, CO2, H2O, T, p; for example 'r(value, O2) = 0.6'."), start, number.end())
+        return True
+    typed = number_at(number, reader.original[number.start():number.end()].strip())
+    reader.take_one_more("correlations", (*pair, Quantity(replace(typed, thousands=None), Unit("1", "", "number", 1.0))), start, number.end())
+    return True
+
+
+CLAUSES = (wet_and_dry_bulb, _correlation, _meter_factor, _barometer, _cooler, *ROUTES)

@@ -45,6 +45,34 @@ def number_at(found: re.Match, text: str) -> Number:
     return Number(value, text, below=found["below"] is not None, thousands=thousands)
 
 
+_LEAD = re.compile(r"(?:(?:the\s)?(?:mean|average)\sof|readings?|runs?)\s?[:=]?\s?", re.IGNORECASE)
+_NEXT = {True: re.compile(r"\s?(?:;|,(?=\s)|\sand(?=\s))\s?"), False: re.compile(r"\s?;\s?")}   # a bare comma parts readings only behind "mean of"
+
+
+def numbers_at(text: str, original: str, place: int) -> tuple[Number, int] | None:
+    """A number at a place, or a list of repeated readings ("141; 143; 142", "mean of 141, 143 and 142"), and where it ends."""
+    lead = _LEAD.match(text, place)
+    found = NUMBER.match(text, lead.end() if lead else place)
+    if found is None:
+        return None
+    first = number_at(found, original[found.start():found.end()].strip())
+    readings, end = [first], found.end()
+    while (sign := _NEXT[lead is not None].match(text, end)) and (found := NUMBER.match(text, sign.end())) and not found["below"]:
+        readings.append(number_at(found, original[found.start():found.end()].strip()))
+        end = found.end()
+    return (first if len(readings) == 1 else _repeated(readings), end)
+
+
+def _repeated(readings: list[Number]) -> Number:
+    """The mean of repeated readings, which keeps them."""
+    values = tuple(number.decimal for number in readings)
+    mean = sum(values) / len(values)
+    decimals = max(0, *(-value.as_tuple().exponent for value in values))
+    grouped = [number.thousands for number in readings]
+    return Number(mean, format(round_decimals(mean, decimals + 1).normalize(), "f"), readings=values,
+                  thousands=sum(grouped) / len(grouped) if all(grouped) else None)
+
+
 def uncertainty_at(found: re.Match) -> Uncertainty:
     """The uncertainty of a PLUS_MINUS match; its coverage factor is read elsewhere."""
     amount, _ = _decimal(found["amount"])

@@ -9,7 +9,7 @@ from typing import Callable
 from gasbasis.errors import NotUnderstood
 from gasbasis.language import tokens
 from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Route, Species, Uncertainty
-from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, uncertainty_at
+from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, numbers_at, uncertainty_at
 from gasbasis.language.columns import column_at
 from gasbasis.language.species import find, match_at
 from gasbasis.language.units import unit
@@ -24,11 +24,10 @@ _CONTENTS = (("oxygen", tokens.OXYGEN_NAME), ("water_content", tokens.WATER_NAME
 
 def number_led(reader) -> bool:
     """A number and what follows it: a concentration, a temperature, a pressure, a share of O2 or water."""
-    found = NUMBER.match(reader.text, reader.place)
+    found = numbers_at(reader.text, reader.original, reader.place)
     if found is None or glued_sign(reader.text, reader.place):
         return False
-    start, after = found.start(), found.end()
-    number = number_at(found, reader.original[start:after].strip())
+    start, (number, after) = reader.place, found
     after, number = _spread(reader, after, number)
     for follow in (_share, _concentration, _molar_mass, _pressure, _temperature):
         if follow(reader, number, start, after):
@@ -126,11 +125,13 @@ def named_share(reader) -> bool:
     for field, name in _CONTENTS:
         found = re.compile(rf"(?P<ambient>ambient\s)?(?P<ref>ref(?:erence|\.)?\s)?(?P<said>(?:dry|wet)\s)?(?:{name})\s?(?:ref\.?\s?)?(?:content\s)?[:=]?\s?(?:of\s)?"
                            rf"(?P<read>\((?:dry|wet)\)\s?)?", re.IGNORECASE).match(reader.text, reader.place)
-        number = NUMBER.match(reader.text, found.end()) if found else None
-        percent = _PERCENT.match(reader.text, _spread(reader, number.end(), _as_number(reader, number))[0]) if number else None
+        listed = numbers_at(reader.text, reader.original, found.end()) if found else None
+        if listed is None:
+            continue
+        after, value = _spread(reader, listed[1], listed[0])
+        percent = _PERCENT.match(reader.text, after)
         if percent is None:
             continue
-        value = _spread(reader, number.end(), _as_number(reader, number))[1]
         if found["ambient"]:
             return _take(reader, "ambient_oxygen", Quantity(value, unit("%")), reader.place, percent.end())
         words = (found["said"] or found["read"] or "").lower()
@@ -464,7 +465,10 @@ def coverage(reader) -> bool:
     if quantity is None or quantity.number.uncertainty is None:
         return False
     found = tokens.COVERAGE.match(reader.text, reader.place)
-    if found:
+    freedom = tokens.DEGREES_OF_FREEDOM.match(reader.text, reader.place)
+    if freedom:
+        found, changed = freedom, replace(quantity.number.uncertainty, degrees_of_freedom=Decimal(freedom["dof"].replace(",", ".")))
+    elif found:
         changed = replace(quantity.number.uncertainty, coverage_factor=Decimal(found["k"].replace(",", ".")))
     else:
         form, found = next(((name, match) for name, pattern in _FORMS if (match := pattern.match(reader.text, reader.place))), (None, None))

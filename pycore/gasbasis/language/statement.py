@@ -58,6 +58,12 @@ class Reader:
         if span not in [piece.span for piece in self.pieces if piece.field == field]:
             self.pieces.append(Piece(field, self.given[slice(*span)], span))
 
+    def take_one_more(self, field: str, value: object, start: int, end: int) -> None:
+        """Record one more piece of a field that may stand several times."""
+        self.fields[field] = (*self.fields.get(field, ()), value)
+        span = self.typed(start, end)
+        self.pieces.append(Piece(field, self.given[slice(*span)], span))
+
     def amend(self, quantity: Quantity, end: int) -> None:
         """The quantity read last, with what stood behind it up to `end`; its piece grows by that."""
         self.fields[self.last] = quantity
@@ -261,7 +267,8 @@ def _number_doubt(quantity: Quantity, field: str, side: str) -> Doubt:
     number = quantity.number
     readings = []
     for identity, value, label in (("decimal", number.decimal, "decimal sign"), ("thousands", number.thousands, "thousands")):
-        settled = replace(quantity, number=replace(number, decimal=value, thousands=None, text=str(value)))
+        repeated = tuple(reading * value / number.decimal for reading in number.readings)
+        settled = replace(quantity, number=replace(number, decimal=value, thousands=None, text=str(value), readings=repeated))
         readings.append(Reading(identity, f"{value} ({label})", ((field, settled),), _COMMON))
     return Doubt(f"{side}.number" if field == "value" else f"{side}.{field}_number", "decimal sign",
                  f"Is '{number.text}' {number.decimal} or {number.thousands}?",

@@ -57,6 +57,7 @@ CARBON_DIOXIDE_NAME = r"(?:CO2|carbon dioxide)(?![A-Za-z0-9])"
 CORRECTED = re.compile(r"(?:corrected(?:\s(?:to|for))?|corr\.?(?:\sto)?|referred to|reference|ref\.?|normali[sz]ed to|norm\. to|standardi[sz]ed to|related to|based on|@\s?ref\.?)\s*:?\s*(?:of\s)?", re.IGNORECASE)
 MEASURED = re.compile(r"(?:measured(?:\sat|\swith)?|meas\.?(?:\sat)?|actual|found|operating)\s*:?\s*", re.IGNORECASE)
 COVERAGE = re.compile(r"\(?\s?k\s?=\s?(?P<k>\d+(?:[.,]\d+)?)\s?\)?", re.IGNORECASE)
+DEGREES_OF_FREEDOM = re.compile(r"\(?\s?(?:dof|d\.o\.f\.|degrees of freedom|ν)\s?[=:]?\s?(?P<dof>-?\d+(?:[.,]\d+)?)\s?\)?", re.IGNORECASE)
 MATRIX = (
     ("nitrogen", re.compile(r"(?:in|balance|bal\.?|rest)\s(?:dry\s)?(?:nitrogen|N2)(?![A-Za-z0-9])", re.IGNORECASE)),
     ("dry_air", re.compile(r"in\s(?:dry\s|synthetic\s|zero\s|clean\s)?air(?![A-Za-z0-9])", re.IGNORECASE)),
@@ -83,7 +84,7 @@ _MEAN = r"(?:mean|average|avg\.?|averaging (?:time|period))(?: values?)?"
 _EVERY = r"(?:half[- ]hourly|half[- ]hour|hourly|daily|weekly|monthly|annual|yearly|rolling|calendar[- ](?:day|year)|moving|arithmetic)"
 AVERAGING = re.compile(
     rf"(?:averaged over (?:a |an )?|over (?:a |an )?)?(?:{_PERIOD}[ -]?)?(?:{_EVERY}\s)*"
-    rf"(?:TWA|time[- ]weighted average|STEL|short[- ]term exposure limit|ceiling(?: limit)?|{_MEAN}|(?<=-)value)(?![A-Za-z0-9])(?: over {_PERIOD})?"
+    rf"(?:TWA|time[- ]weighted average|STEL|short[- ]term exposure limit|ceiling(?: limit)?|{_MEAN}(?!\s?of\s?\d)|(?<=-)value)(?![A-Za-z0-9])(?: over {_PERIOD})?"
     rf"|(?:averaged over |over )?(?:a |an )?{_PERIOD}|{_EVERY}(?: values?)?(?![A-Za-z0-9])", re.IGNORECASE)
 APPROXIMATE = re.compile(r"(?:approx(?:\.|imately)?|about|around|circa|ca\.?)(?![A-Za-z0-9])|~|≈", re.IGNORECASE)
 # A mass, amount or length alone is no concentration.

@@ -8,21 +8,23 @@ from typing import Mapping
 from gasbasis.calculation.basis_words import unit_words
 from gasbasis.calculation.case import Case, make_case
 from gasbasis.calculation.leaves import SIDE_TITLES
-from gasbasis.calculation.outcomes import BOUND, Settled, Spread, effect, reading_problem, reading_range, settle, spread
+from gasbasis.calculation.outcomes import BOUND, Settled, Spread, effect, reading_problem, reading_range, settle, settle_calm, spread
 from gasbasis.calculation.path import figure_value
+from gasbasis.calculation.repeated import repeated_inputs
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.uncertainty import budget
 from gasbasis.calculation.working import bars, working
 from gasbasis.calculation.rules import find_rule
 from gasbasis.errors import CoreError, Missing, NotUnderstood
 from gasbasis.facts import RuleBook
-from gasbasis.language.basis import Doubt, Gas, Statement
+from gasbasis.language.basis import APART, EACH, Doubt, Gas, Statement
 from gasbasis.language.gas import read_gas
 from gasbasis.language.numbers import half_last_digit, significant
 from gasbasis.language.statement import read_statement
 from gasbasis.records.about_gas import about_gas
 from gasbasis.records.sheet import Sheet
 from gasbasis.records.sides import side_record
+from gasbasis.records.varied import variables
 from gasbasis.records.worth import budget_record, verdict_record, worth_problem
 
 DIGITS = 4                             # significant digits of a figure without uncertainty
@@ -70,7 +72,7 @@ def _restated(sheet: Sheet, hold: Statement, hold_problems: tuple[CoreError, ...
     owe, owe_problems = read_statement(sheet.owe, "owe")
     limit, limit_problems = read_statement(sheet.limit, "limit")
     problems = [*hold_problems, *gas_problems, *owe_problems, *_incomplete(hold, owe)]
-    result: dict = {"verdict": None, "uncertainty": None, "figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "warnings": []}
+    result: dict = {"verdict": None, "uncertainty": None, "figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "varies": [], "warnings": []}
     settled = Settled(Case(hold, gas, owe), (), ())
     if not problems:
         try:
@@ -97,9 +99,6 @@ def _said_loosely(hold: Statement, limit: Statement) -> list[str]:
     """What a text says that no calculation can take up."""
     loose = [f"{title} is said to be approximate: no figure can be better than that."
              for title, statement in (("What you hold", hold), ("The limit", limit)) if statement.approximate]
-    if limit.second_value is not None:
-        loose.append(f"The limit is said twice; {limit.second_value.number.text} {limit.second_value.unit.text} is not compared here: "
-                     "type it alone to see which of the two binds.")
     return loose
 
 
@@ -142,15 +141,6 @@ def _outcome(settled: Settled, sheet: Sheet, below: bool, bound: int) -> dict:
                      "problems": _shared_problem(found)}
 
 
-def settle_calm(settled: Settled) -> Case:
-    """The case with every remaining doubt at its usual, else first, reading: none of them shows in the figure."""
-    case = settled.case
-    for doubt in (*settled.open, *settled.about_spread):
-        reading = next((reading for reading in doubt.readings if reading.usual_because), doubt.readings[0])
-        case = case.taking(doubt.id, reading)
-    return case
-
-
 def _figure(case: Case, below: bool) -> dict:
     try:
         path = lay(case)
@@ -166,7 +156,19 @@ def _figure(case: Case, below: bool) -> dict:
     return {"uncertainty": worth, "figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,
                        "species_text": path.species_text, "basis": basis,
                        "text": f"{path.species_text} {number} {path.shown.unit_text} {basis}".strip()},
-            "working": working(path), "steps": bars(path), "warnings": list(path.warnings)}
+            "working": working(path), "steps": bars(path), "varies": variables(case, path), "warnings": [*path.warnings, *_other_order(case, path.shown.unit_text)]}
+
+
+def _other_order(case: Case, unit_text: str) -> list[str]:
+    """What repeated readings come to in the order that was not taken."""
+    order = case.hold.averaging_order
+    counts = {len(quantity.number.readings) for _, quantity in repeated_inputs(case)}
+    if order is None or len(counts) != 1:
+        return []
+    taken, other, words = (("corrected one by one and averaged", APART, "the means, corrected, come to") if order == EACH else
+                           ("averaged and then corrected", EACH, "corrected one by one and averaged they come to"))
+    value = figure_value(lay(replace(case, hold=replace(case.hold, averaging_order=other))))
+    return [f"The readings were {taken}; {words} {significant(value, DIGITS)} {unit_text}."]
 
 
 def _is_calm(size: float, found: Spread) -> bool:

@@ -2,10 +2,14 @@
 from __future__ import annotations
 
 import math
+from typing import Mapping
 
-from gasbasis.calculation import conformity
+from gasbasis.calculation import conformity, two_limits
+from gasbasis.calculation.comparison import BELOW_DETECTION, CHOICES, NEGATIVE, ROUNDING, option
 from gasbasis.calculation.conformity import NUMBER, Judged, judged, rule_doubt, turned_round
+from gasbasis.calculation.leaves import SIDE_TITLES
 from gasbasis.calculation.outcomes import Settled
+from gasbasis.calculation.two_limits import FIRST, SECOND
 from gasbasis.calculation.uncertainty import Budget
 from gasbasis.calculation.verdict import ABOVE, BELOW, OUTSIDE, RULES, WITHIN, Verdict, risk_at_guard
 from gasbasis.errors import CoreError
@@ -36,24 +40,72 @@ def budget_record(found: Budget, unit_text: str) -> dict:
 
 _INPUTS = {"hold.value": "held value", "gas.water_content": "water content", "gas.oxygen": "measured oxygen", "hold.oxygen": "oxygen it is stated at",
            "gas.carbon_dioxide": "carbon dioxide", "hold.carbon_dioxide": "carbon dioxide it is stated at", "gas.ambient_oxygen": "ambient oxygen", "gas.matrix_gas": "gas", "hold.temperature": "held temperature",
-           "hold.pressure": "held pressure", "gas.temperature": "gas temperature", "gas.pressure": "gas pressure"}
+           "hold.pressure": "held pressure", "gas.temperature": "gas temperature", "gas.pressure": "gas pressure", "gas.model": "equation of state"}
+
+
+def input_title(field: str) -> str:
+    """What an input is called, from its field."""
+    return _INPUTS.get(field, field.partition(".")[2].replace("_", " "))
 
 
 def _input(leaf) -> str:
-    return _INPUTS.get(leaf.field, leaf.field.partition(".")[2].replace("_", " ") or leaf.name)
+    return input_title(leaf.field) or leaf.name
 
 
 def verdict_record(settled: Settled, limit: Statement, sheet: Sheet, take_usual: bool, bound: int) -> dict:
     """The verdict under the chosen rule, or under every rule; and the display reading at the limit. Raises CoreError."""
     found = judged(settled, limit, sheet.settled, take_usual, bound)
-    below = settled.case.hold.value.number.below
-    unit_text = conformity.unit_words(limit, settled.case.owe)
+    below = settled.case.hold.value.number.below and option(BELOW_DETECTION, sheet.settled).id == "bound"
+    unit_text = found.path.shown.unit_text if found.path else conformity.unit_words(limit, settled.case.owe)
     record = {
         "unit_text": unit_text, "limit_text": _limit_text(found, limit, unit_text), "compared_on": ", ".join(found.path.basis) if found.path else "",
         "values_text": _values(found), "rule": found.chosen, "below": below,
         "rules": [_rule_record(found, rule.id, unit_text, below) for rule in rule_doubt(found.limits).readings],
-        "number": sheet.settled.get(NUMBER, ""), "turned_round": _turned(found)}
-    return record | _headline(found, below) | ({"decision": _decision(found, unit_text)} if found.chosen and not found.spread_open else {})
+        "number": sheet.settled.get(NUMBER, ""), "turned_round": _turned(found),
+        "doubts": _doubts_of_limit(found, settled),
+        "choices": _choices(settled, found, sheet.settled)}
+    record |= _headline(found, below) | ({"decision": _decision(found, unit_text)} if found.chosen and not found.spread_open else {})
+    return record if limit.second_value is None else _with_second(record, settled, limit, sheet, take_usual, bound)
+
+
+_STRICTNESS = {"within": 0, "open": 1, "beyond": 2}
+
+
+def _with_second(record: dict, settled: Settled, limit: Statement, sheet: Sheet, take_usual: bool, bound: int) -> dict:
+    """A limit said twice in units that do not convert into each other: both verdicts, the stricter in front, and which binds."""
+    other = verdict_record(settled, two_limits.second(limit), sheet, take_usual, bound)
+    binds = two_limits.binding(settled, limit, sheet.settled, take_usual, bound)
+    said = {FIRST: f"{record['limit_text']} binds", SECOND: f"{other['limit_text']} binds", None: "which of the two binds depends on the open doubts"}[binds.which]
+    sentence = f"On one basis {limit.value.number.text} {limit.value.unit.text} stands for {binds.low_text}" + (
+        f" to {binds.high_text}" if binds.high_text != binds.low_text else "") + f" {other['unit_text']}: {said}."
+    stricter = max(record, other, key=lambda one: _STRICTNESS[one["shape"]])
+    return record | {"second": {name: other[name] for name in ("limit_text", "values_text", "unit_text", "sentence", "words", "shape")} | {"binding": sentence},
+                     **{name: stricter[name] for name in ("words", "shape", "sentence")}}
+
+
+def _doubts_of_limit(found: Judged, settled: Settled) -> list[dict]:
+    """Each open doubt with the verdict under each of its readings; the limit's own doubts can be settled here."""
+    rules = [found.chosen] if found.chosen else list(found.verdicts)
+    figure = {doubt.id for doubt in settled.open}
+    records = []
+    for doubt in found.open:
+        readings = [{"id": reading.id, "label": reading.label, "source": reading.source, "usual_because": reading.usual_because, "problem": None,
+                     "words": list(dict.fromkeys(word for rule in rules for word in found.words_with(rule, doubt.id, reading.id)))} for reading in doubt.readings]
+        own = doubt.id.startswith("owe.") and doubt.id not in figure
+        records.append({"id": f"limit.{doubt.id.partition('.')[2]}" if own else doubt.id, "own": own, "title": doubt.title, "question": _of_limit(doubt.question) if own else doubt.question,
+                        "changes": doubt.changes, "decides": any(found.decides(rule, doubt.id) for rule in rules), "chosen": None, "readings": readings})
+    return records
+
+
+def _of_limit(question: str) -> str:
+    return question.replace(SIDE_TITLES["owe"], SIDE_TITLES["limit"])
+
+
+def _choices(settled: Settled, found: Judged, chosen: Mapping[str, str]) -> list[dict]:
+    """The named choices of the comparison that matter for this result, with the one taken."""
+    wanted = [ROUNDING] + [BELOW_DETECTION] * settled.case.hold.value.number.below + [NEGATIVE] * any(value < 0 for value in found.spread.values)
+    return [{"id": choice, "title": CHOICES[choice][0], "chosen": option(choice, chosen).id,
+             "options": [{"id": entry.id, "title": entry.title, "source": entry.source} for entry in CHOICES[choice][1]]} for choice in wanted]
 
 
 def _limit_text(found: Judged, limit: Statement, unit_text: str) -> str:
@@ -84,7 +136,8 @@ def _headline(found: Judged, below: bool) -> dict:
         sure = "whatever was meant" if found.spread_open else "" if found.chosen else "under every decision rule that could be applied"
         place = " the limit" if words[0] in (WITHIN, ABOVE, BELOW) else ""
         return {"words": words[0], "shape": _shape(words[0]), "sentence": f"{words[0]}{place} {sure}".strip()}
-    depends = ([] if found.chosen else ["decision rule"]) + (["the open doubts"] if found.spread_open else [])
+    deciding = [doubt.title for doubt in found.open if any(found.decides(rule, doubt.id) for rule in rules)]
+    depends = ([] if found.chosen else ["decision rule"]) + (deciding or ["the open doubts"] if found.spread_open else [])
     return {"words": "not decided", "shape": "open", "sentence": f"depends on: {', '.join(depends)}" if depends else "not decided"}
 
 
@@ -107,16 +160,22 @@ def _decision(found: Judged, unit_text: str) -> dict:
     probability = verdict.probability_of_conformity
     guard = verdict.guard_band
     u = found.budget.standard_uncertainty if found.budget else None
-    return {"rule": verdict.rule, "raw_text": _values(found), "compared_text": significant(verdict.compared, _DIGITS),
+    return {"rule": verdict.rule, "raw_text": _values(found), "counted_text": significant(verdict.counted, _DIGITS), "compared_text": _exactly(verdict.compared),
             "guard_text": f"{significant(abs(guard), 2)} {unit_text}" if guard else "",
             "risk_text": f"{significant(100 * risk_at_guard(guard / u), 2)} %" if u and guard > 0 else "",
             "probability_text": "" if probability is None else f"{significant(100 * probability, 3)} %",
             "probability_note": "" if probability is None else "for a Gaussian figure (JCGM 106:2012, clause 7)"}
 
 
+def _exactly(value: float) -> str:
+    """A rounded value with every digit it has, else to four digits."""
+    plain = format(value, ".12g")
+    return plain.replace("-", "−") if "e" not in plain and len(plain.strip("-").replace(".", "")) <= 6 else significant(value, _DIGITS)
+
+
 def _turned(found: Judged) -> dict | None:
     """What the display shows when the figure stands at the limit."""
-    if found.path is None:
+    if found.path is None or not found.path.held:      # readings corrected one by one have no one display reading
         return None
     unit_text = found.path.leaves[found.path.held].unit_text
     targets = {"lower": found.limits.lower, "upper": found.limits.upper}

@@ -4,14 +4,16 @@ from __future__ import annotations
 from types import MappingProxyType
 from typing import Mapping
 
-from gasbasis.relations import bases, compression, gas_law, humidity, molar_mass, pressure, saturation
+from gasbasis.relations import bases, compression, flow, gas_law, humidity, molar_mass, pressure, sampling, saturation
+from gasbasis.relations.flow import mean_of_roots
+from gasbasis.relations.mean import mean_of
 from gasbasis.relations.mixture import molar_mass_of_mixture, molar_mass_of_mixture_by_mass, summation_factor_of_mixture
 from gasbasis.relations.relation import Relation
 
-__all__ = ["get", "every", "molar_mass_of_mixture", "molar_mass_of_mixture_by_mass", "summation_factor_of_mixture", "Relation"]
+__all__ = ["get", "every", "mean_of", "mean_of_roots", "molar_mass_of_mixture", "molar_mass_of_mixture_by_mass", "summation_factor_of_mixture", "Relation"]
 
 _REGISTER: Mapping[str, Relation] = MappingProxyType(
-    {relation.id: relation for room in (gas_law, bases, molar_mass, saturation, humidity, pressure, compression)
+    {relation.id: relation for room in (gas_law, bases, molar_mass, saturation, humidity, pressure, compression, flow, sampling)
      for relation in room.RELATIONS})
 
 

@@ -317,7 +317,7 @@ def _limits(rows: Rows, species: int, settings: Settings) -> Limits | None:
     if statement.unit.id != owe.unit.id or any(_differs(getattr(there, name), getattr(owe, name)) for name in ("temperature", "pressure", "water", "oxygen", "reported_as")):
         raise OutOfRange("The limit is on another basis than what is owed.", hint="Write what you owe on the limit's unit and basis: rows are restated onto it, never the limit onto theirs.",
                          field="limit")
-    return limits_of(statement)
+    return limits_of(statement, settings.species[species].settled)
 
 
 def _differs(first, second) -> bool:

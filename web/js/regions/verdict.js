@@ -1,5 +1,5 @@
 /** The figure at its limit: every decision rule until one is chosen, what was compared, and the display turned round. */
-import { keyed, part, say } from "../page.js";
+import { element, keyed, part, say } from "../page.js";
 import { readingButton, updateReading } from "./readings.js";
 
 /** @param {HTMLElement} root @param {(intention: object) => void} dispatch */
@@ -26,9 +26,38 @@ export function mountVerdict(root, dispatch) {
     part(root, "number-box").hidden = !needs;
     say(part(root, "number-label"), needs);
     if (document.activeElement !== number) number.value = verdict.number;
+    keyed(part(root, "choices"), verdict.choices, (choice) => choice.id, (choice) => choiceBox(choice, dispatch), (node, choice) => {
+      node.querySelector("select").value = choice.chosen;
+      say(node.querySelector("small"), choice.options.find((option) => option.id === choice.chosen).source);
+    });
+    keyed(part(root, "doubts"), verdict.doubts, (doubt) => doubt.id, () => element("div", "", "at-limit"), (node, doubt) => showDoubt(node, doubt, dispatch));
     say(part(root, "detail"), detail(verdict.decision));
     say(part(root, "turned"), turned(verdict.turned_round));
+    const second = verdict.second;
+    part(root, "second").hidden = !second;
+    say(part(root, "second"), second ? `${second.limit_text}: ${second.values_text} ${second.unit_text} is ${second.sentence}. ${second.binding}` : "");
   };
+}
+
+/** An open doubt with the verdict under each reading. */
+function showDoubt(node, doubt, dispatch) {
+  if (!node.firstChild) node.append(element("p"), element("div", "", "readings"));
+  say(node.firstElementChild, `${doubt.question}${doubt.decides ? " This decides." : ""}`);
+  keyed(node.lastElementChild, doubt.readings, (reading) => reading.id, (reading) => readingButton(doubt, reading, dispatch),
+    (button, reading) => updateReading(button, doubt, { ...reading, text: reading.words.join(" or ") }));
+}
+
+/** A named choice of the comparison: rounding, a result below detection, a negative value. */
+function choiceBox(choice, dispatch) {
+  const box = element("label", "", "note"), select = element("select");
+  for (const option of choice.options) {
+    const entry = element("option", option.title);
+    entry.value = option.id;
+    select.append(entry);
+  }
+  select.addEventListener("change", () => dispatch({ type: "settle", doubt: choice.id, reading: select.value }));
+  box.append(element("span", `For the comparison, ${choice.title}:`), select, element("small", "", "quiet"));
+  return box;
 }
 
 function asReading(rule) {
@@ -37,7 +66,7 @@ function asReading(rule) {
 
 function detail(decision) {
   if (!decision?.rule) return "";
-  return [`raw ${decision.raw_text}, compared ${decision.compared_text}`, decision.guard_text && `guard band ${decision.guard_text}`,
+  return [`raw ${decision.raw_text}, counted as ${decision.counted_text}, compared ${decision.compared_text}`, decision.guard_text && `guard band ${decision.guard_text}`,
     decision.risk_text && `risk of a wrong acceptance at the guarded limit ${decision.risk_text}`,
     decision.probability_text && `probability of conformity ${decision.probability_text} ${decision.probability_note}`].filter(Boolean).join(" · ");
 }

@@ -11,6 +11,7 @@ from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.edit import edit
 from gasbasis.language.gas import read_gas
 from gasbasis.language.statement import read_statement
+from gasbasis.series import terminal
 
 FIGURE, NOT_UNDERSTOOD, DOUBTS_OPEN = 0, 2, 3
 
@@ -21,6 +22,8 @@ def main(arguments: list[str] | None = None) -> int:
     options = parser.parse_args(arguments)
     if options.command == "check":
         return _check(options.file)
+    if options.command == "series":
+        return options.run(options)
     for choice in options.settle:
         if "=" not in choice:
             parser.error(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
@@ -87,6 +90,7 @@ def _parser() -> argparse.ArgumentParser:
     record.add_argument("--amends", default="", metavar="CHECKSUM", help="the checksum of the record that this one amends")
     record.add_argument("--why", default="", help="why it is amended")
     commands.add_parser("check", help="read a record back: is it unchanged, does it come to the same?").add_argument("file")
+    terminal.add_command(commands)
     return parser
 
 

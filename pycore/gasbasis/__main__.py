@@ -11,6 +11,7 @@ from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.edit import edit
 from gasbasis.language.gas import read_gas
 from gasbasis.language.statement import read_statement
+from gasbasis.series import terminal
 
 FIGURE, NOT_UNDERSTOOD, DOUBTS_OPEN = 0, 2, 3
 
@@ -21,6 +22,8 @@ def main(arguments: list[str] | None = None) -> int:
     options = parser.parse_args(arguments)
     if options.command == "check":
         return _check(options.file)
+    if options.command == "series":
+        return options.run(options)
     for choice in options.settle:
         if "=" not in choice:
             parser.error(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
@@ -28,6 +31,9 @@ def main(arguments: list[str] | None = None) -> int:
         sheet = _with_uncertainties(_sheet(options), options.uncertain)
     except CoreError as error:
         print(_problem_text(error.as_json()), file=sys.stderr)
+        return NOT_UNDERSTOOD
+    except (OSError, ValueError) as error:
+        print(f"The sheet {options.file} cannot be read: {error}. Give a file that gasbasis kept, or the texts.", file=sys.stderr)
         return NOT_UNDERSTOOD
     if options.command == "record":
         return _record(options, sheet)
@@ -84,13 +90,18 @@ def _parser() -> argparse.ArgumentParser:
     record.add_argument("--amends", default="", metavar="CHECKSUM", help="the checksum of the record that this one amends")
     record.add_argument("--why", default="", help="why it is amended")
     commands.add_parser("check", help="read a record back: is it unchanged, does it come to the same?").add_argument("file")
+    terminal.add_command(commands)
     return parser
 
 
 def _add_sheet(restate: argparse.ArgumentParser) -> None:
-    restate.add_argument("--hold", required=True, help='what you hold, as written: "NOx 142 ppm dry as NO2"')
-    restate.add_argument("--owe", required=True, help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
+    restate.add_argument("file", nargs="?", default="", metavar="SHEET.json", help="a sheet file; what is given beside it takes the place of its texts")
+    restate.add_argument("--hold", default="", help='what you hold, as written: "NOx 142 ppm dry as NO2"')
+    restate.add_argument("--owe", default="", help='what you owe: "mg/m3 at 273.15 K, 101.3 kPa, dry, 11 %% O2"')
     restate.add_argument("--gas", default="", help='the gas it was in: "12 %% H2O, 9.2 %% O2 dry, ambient O2 20.9 %%"')
+    restate.add_argument("--sample", default="", help='a collected sample: "Hg 12.4 ng, meter 1204.3 L to 1324.8 L, meter 24 °C, barometer 98.2 kPa, dry"')
+    restate.add_argument("--prepared", default="", help='a prepared gas: "cylinder NO 998 ppm, 250 mL/min at 0 °C, 101.325 kPa, in 4750 mL/min at 0 °C, 101.325 kPa"')
+    restate.add_argument("--emission", default="", help='what makes a rate of it: "flow 42000 m3/h at 273.15 K, 101.325 kPa, dry", "fuel natural gas, 20 MW gross"')
     restate.add_argument("--limit", default="", help='the limit, with its own basis: "200 mg/m3"')
     restate.add_argument("--rule", default="", help="the decision rule agreed, e.g. simple, guarded, three_way")
     restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
@@ -101,14 +112,24 @@ def _add_sheet(restate: argparse.ArgumentParser) -> None:
     restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")
 
 
+_TEXTS = ("hold", "gas", "owe", "limit", "sample", "prepared", "emission", "rule_book")
+
+
 def _sheet(options: argparse.Namespace) -> dict:
-    settled = {}
+    """The sheet of the file, with what was given beside it in its place. Raises OSError, ValueError for a file that cannot be read."""
+    sheet = {"schema": 1}
+    if options.file:
+        with open(options.file, encoding="utf-8") as file:
+            sheet = json.load(file)
+        if not isinstance(sheet, dict):
+            raise ValueError("it holds no sheet")
+    settled = dict(sheet.get("settled", {}))
     for choice in options.settle:
         doubt, _, reading = choice.partition("=")
         settled[doubt.strip()] = reading.strip()
     if options.rule:
         settled["limit.decision_rule"] = options.rule
-    return {"hold": options.hold, "gas": options.gas, "owe": options.owe, "limit": options.limit, "rule_book": options.rule_book, "settled": settled}
+    return {**sheet, **{name: given for name in _TEXTS if (given := getattr(options, name))}, "settled": settled}
 
 
 _INPUTS = {"value": (("hold", "value"),), "O2": (("gas", "oxygen"), ("hold", "oxygen")), "CO2": (("gas", "carbon_dioxide"),), "H2O": (("gas", "water_content"), ("gas", "water_route")),
@@ -122,7 +143,7 @@ def _with_uncertainties(sheet: dict, stated: list[str]) -> dict:
         if name not in _INPUTS or not amount.strip():
             raise NotUnderstood(f"--uncertain '{text}' names no input and its uncertainty.", hint=f"For example 'T 2 K'; inputs: {', '.join(_INPUTS)}.")
         for side, field in _INPUTS[name]:
-            record, _ = read_gas(sheet[side]) if side == "gas" else read_statement(sheet[side], side)
+            record, _ = read_gas(sheet.get(side, "")) if side == "gas" else read_statement(sheet.get(side, ""), side)
             piece = next((piece for piece in record.pieces if piece.field == field), None)
             if piece is not None:
                 sheet[side] = edit(sheet[side], side, field, f"{piece.text} ± {amount.strip().lstrip('±').strip()}")
@@ -149,6 +170,7 @@ def _text(result: dict) -> str:
         lines.append(result["figure"]["text"])
         lines.extend(f"warning  {text}" for text in result["warnings"])
     lines.extend(_problem_text(problem) for problem in result["problems"])
+    lines.extend(f"{row['title']}: {row['text']}" for row in result.get("sample", {}).get("about", ()))
     lines.extend(_verdict_lines(result["verdict"]))
     if result["spread"] and "low" in result["spread"]:
         ends = result["spread"]

@@ -18,7 +18,7 @@ from gasbasis.records.sheet import read_sheet, write_sheet
 from gasbasis.records.varied import varied
 
 LONGEST_REQUEST = 200_000              # characters; a sheet is far below, a pasted file far above
-SIDES = ("hold", "gas", "owe", "limit")
+SIDES = ("hold", "gas", "owe", "limit", "sample", "prepared", "emission")
 
 
 def answer(request: str) -> str:

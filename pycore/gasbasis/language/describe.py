@@ -1,17 +1,10 @@
 """What each piece is called, one sentence on it, an example, and the usual choices: one table for page and terminal."""
 from __future__ import annotations
 
-from dataclasses import dataclass
 from typing import Mapping
 
-
-@dataclass(frozen=True)
-class Field:
-    title: str
-    help: str
-    example: str
-    choices: tuple[str, ...] = ()
-    numeric: bool = False
+from gasbasis.language.describe_ways import WAY_ADDABLE, WAY_FIELDS
+from gasbasis.language.described import Field
 
 
 FIELDS: Mapping[str, Field] = {
@@ -66,6 +59,7 @@ ADDABLE: Mapping[str, tuple[str, ...]] = {
     "gas": ("water_content", "water_route", "droplets", "meter_factor", "cooler", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure", "pressure_route",
             "barometer", "barometer_route", "model"),
     "owe": ("unit", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as"),
+    **WAY_ADDABLE,
     "limit": ("value", "temperature", "pressure", "water", "oxygen"),
 }
 # The gas line's own temperature and pressure are those of the gas as it flowed.
@@ -102,3 +96,7 @@ PARTS: Mapping[str, str] = {
     "record": "A record seals the sheet as it is now: date, texts, settled doubts, steps, sources, uncertainty and verdict. To correct one, amend it: the new record names the old.",
     "compare": "Only what differs is listed. Each difference is carried from the other sheet into this one, alone, to see what it does to the figure; then all together.",
 }
+
+def fields_of(side: str) -> Mapping[str, Field]:
+    """Every piece a side can have."""
+    return WAY_FIELDS.get(side, FIELDS)

@@ -31,7 +31,8 @@ def test_a_record_holds_what_a_checker_needs() -> None:
     assert record["made_at"] == AT and record["made_by"] == "A. Tester" and record["notes"] == "Probe moved once."
     assert record["app"]["version"] and len(record["app"]["data"]) == 64
     assert record["sheet"]["hold"] == LIMITED.hold and record["sheet"]["title"] == "Second run"
-    assert {"title": "reported as", "text": "as NO2", "state": "stated"} in record["understood"]["hold"]
+    held = next(line for line in record["texts"] if line["side"] == "hold")
+    assert held["typed"] == LIMITED.hold and {"title": "reported as", "text": "as NO2", "state": "stated"} in held["understood"]
     settled = next(doubt for doubt in record["settled"] if doubt["title"] == "parts by")
     assert settled["note"] == "the analyser's manual, page 4" and settled["reading"].startswith("by volume")
     assert record["verdict"]["rule"] == "guarded acceptance, w = U" and record["verdict"]["words"] == "not shown within"
@@ -39,6 +40,18 @@ def test_a_record_holds_what_a_checker_needs() -> None:
     assert all(step["title"] and (step["source_text"] or step["kind"] == "unit") for step in record["working"])
     assert any(source["text"].startswith("ISO 14912") for source in record["sources"])
     assert record["cautions"] == list(CAUTIONS) and record["link_code"]
+
+
+EMITTED = Sheet(hold="NOx 100 mg/m3 at 273.15 K, 101.325 kPa, dry", owe="kg/h", emission="flow 10000 m3/h at 273.15 K, 101.325 kPa, dry")
+SAMPLED = Sheet(sample="Hg 12.5 ng, volume 10 L at 20 °C, 101.3 kPa", owe="µg/m3 at 0 °C, 101.325 kPa")
+
+
+@pytest.mark.parametrize(("sheet", "side", "title"), [(EMITTED, "emission", "The emission"), (SAMPLED, "sample", "The sample")], ids=["emission", "sample"])
+def test_every_line_of_the_sheet_is_in_its_record(sheet: Sheet, side: str, title: str) -> None:
+    record = made(sheet)
+    line = next(line for line in record["texts"] if line["side"] == side)
+    assert line["typed"] == getattr(sheet, side) and line["title"] == title and line["understood"]
+    assert getattr(sheet, side) in " ".join(plain_record(record).split()) and open_record(json.loads(json.dumps(record)))["same"]
 
 
 def test_only_texts_and_whole_numbers_are_sealed() -> None:

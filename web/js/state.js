@@ -9,8 +9,10 @@ export function emptySheet() {
   return { hold: "", gas: "", owe: "", limit: "", rule_book: "", title: "", settled: {}, notes: {} };
 }
 
-/** @param {Sheet} sheet */
-export const isEmpty = (sheet) => !["hold", "gas", "owe", "limit"].some((side) => sheet[side].trim());
+const NO_CONTENT = ["rule_book", "title"];
+
+/** Whether no line of it says anything. @param {Sheet} sheet */
+export const isEmpty = (sheet) => !Object.entries(sheet).some(([name, text]) => typeof text === "string" && text.trim() && !NO_CONTENT.includes(name));
 
 /** @param {object} first */
 export function createState(first) {

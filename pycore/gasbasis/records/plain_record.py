@@ -4,7 +4,6 @@ from __future__ import annotations
 import textwrap
 
 _WIDTH = 78
-_SIDE_TITLES = {"hold": "You hold", "gas": "It was in", "owe": "You owe", "limit": "Limit"}
 _READ = {"memory": "from memory, not from the document", "secondary": "read in a copy", "abstract": "abstract only", "convention": "", "primary": ""}
 
 
@@ -40,11 +39,9 @@ def _figure(record: dict) -> list[str]:
 
 def _texts(record: dict) -> list[str]:
     lines = ["AS TYPED, AND AS UNDERSTOOD"]
-    for side, title in _SIDE_TITLES.items():
-        text = record["sheet"].get(side, "")
-        if text.strip():
-            lines += _wrapped(f"{title}: {text}")
-            lines += _wrapped("; ".join(f"{piece['title']} = {piece['text']}" for piece in record["understood"][side]), "    ")
+    for line in record["texts"]:
+        lines += _wrapped(f"{line['title']}: {line['typed']}")
+        lines += _wrapped("; ".join(f"{piece['title']} = {piece['text']}" for piece in line["understood"]), "    ")
     if record["rule_book"]:
         book = record["rule_book"]
         lines += _wrapped(f"Rule-book: {', '.join(filter(None, (book['title'], book['clause'], _READ.get(book['read'], ''), book['note'])))}")

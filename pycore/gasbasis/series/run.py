@@ -12,7 +12,7 @@ from gasbasis.errors import Missing, NotUnderstood
 from gasbasis.language.numbers import significant
 from gasbasis.series.layout import SAMPLE, Layout, look
 from gasbasis.series.means import Mean, Means
-from gasbasis.series.rows import Block, Rows, text_lines
+from gasbasis.series.rows import Block, Lines, Rows
 from gasbasis.series.settings import Settings, read_settings
 from gasbasis.series.times import clock_text
 from gasbasis.series.workbook import Workbook
@@ -44,7 +44,7 @@ def restate_file(path: str | os.PathLike, given: Mapping, out: str | None = None
         means = _means(rows, settings, means_out, sinks, given, stack)
         size = os.path.getsize(path)
         source = stack.enter_context(_opened(path))
-        for block in rows.blocks(text_lines(_chunks(source), layout.encoding)):
+        for block in rows.blocks(Lines(_chunks(source), layout.encoding)):
             for sink in sinks:
                 sink.take(block)
             if means is not None:

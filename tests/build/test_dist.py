@@ -148,3 +148,9 @@ def test_transfer_to_the_first_figure_is_within_the_budget(dist):
     """The issue's number: 6.4 MB gzip."""
     from making.sizes import wire_sizes
     assert sum(wire_sizes(dist).values()) / 1e6 <= 6.4
+
+
+def test_the_change_log_begins_with_this_version_and_says_whether_numbers_change(dist):
+    from gasbasis import __version__
+    changes = json.loads((dist / "changes.json").read_text(encoding="utf-8"))
+    assert changes[0]["version"] == __version__ and all(entry["numbers"].strip() and entry["date"] for entry in changes)

@@ -309,7 +309,7 @@ RESTS_ON_MEMORY = {
     "table": {"aga8_ranges", "student_t", "f_factor_coefficients", "mercury_vapour dumarey", "f_factors municipal_waste", "liquid_densities water", "liquid_densities mercury"},
 }
 COEFFICIENT_TABLES = ("aga8_detail", "aga8_ranges", "cautious_names", "confidence_intervals", "f_factor_coefficients", "f_factors", "iso6976_2016", "liquid_densities",
-                      "mercury_vapour", "student_t", "water_saturation")
+                      "mercury_vapour", "sampling_acceptance", "student_t", "water_saturation")
 
 
 @dataclasses.dataclass(frozen=True)

@@ -2,7 +2,9 @@
  * Registers the service worker, tells the page when it is ready offline, and asks before an update.
  *
  * @typedef {{phase: "unsupported"|"fetching"|"ready"|"failed", version: string, done: number, of: number,
- *            checkedAt: string, message: string, update: boolean}} OfflineState
+ *            checkedAt: string, message: string, update: boolean, changes: object[], persistent: boolean | null}} OfflineState
+ *   `persistent`: whether the browser promised not to clear the copy when space is short; null when it does not say.
+ *   `changes`: what the waiting version changes, newest first.
  *   `update`: a newer version is kept and verified, and waits for the person's yes.
  */
 
@@ -14,7 +16,7 @@
  */
 export function startOffline({ onState = () => {}, beforeReload = () => {} } = {}) {
   /** @type {OfflineState} */
-  let state = { phase: "fetching", version: "", done: 0, of: 0, checkedAt: "", message: "", update: false };
+  let state = { phase: "fetching", version: "", done: 0, of: 0, checkedAt: "", message: "", update: false, changes: [], persistent: null };
   /** @type {ServiceWorkerRegistration | null} */
   let registration = null;
   let reloading = false;
@@ -25,6 +27,7 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
   }
 
   function onNews({ data, source }) {
+    if (data?.type === "changes") change({ changes: data.changes });
     if (data?.type !== "offline") return;
     if (registration && source !== registration.active && registration.active) return;   // a newer version being fetched
     const checkedAt = data.phase === "ready" ? new Date().toISOString() : state.checkedAt;
@@ -33,7 +36,11 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
 
   /** A worker that waits is asked about, also when it was left waiting by an earlier visit. */
   function watchForUpdate() {
-    const look = () => change({ update: Boolean(registration.waiting && registration.active) });
+    const look = () => {
+      const update = Boolean(registration.waiting && registration.active);
+      if (update) registration.waiting.postMessage({ type: "changes" });
+      change({ update });
+    };
     look();
     registration.addEventListener("updatefound", () => {
       registration.installing?.addEventListener("statechange", look);
@@ -71,6 +78,7 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
     }
     if (!registration) return;         // service workers are blocked: nothing is kept, nothing is promised
     watchForUpdate();
+    change({ persistent: await navigator.storage?.persist?.().catch(() => null) ?? null });
     registration.active?.postMessage({ type: "started" });
     check();
   }

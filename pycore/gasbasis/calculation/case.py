@@ -7,6 +7,9 @@ from typing import Mapping
 from gasbasis.errors import OutOfRange
 from gasbasis.facts import RuleBook
 from gasbasis.language.basis import Gas, Quantity, Reading, Statement
+from gasbasis.language.emission import Emission
+from gasbasis.language.prepared import Prepared
+from gasbasis.language.sample import Sample
 
 AMOUNT_FRACTION = "amount_fraction"
 MASS_FRACTION = "mass_fraction"
@@ -18,6 +21,7 @@ UNSTATED_PARTS = "parts"                 # a fraction whose kind neither side st
 VOLUMETRIC = (MASS_CONCENTRATION, AMOUNT_CONCENTRATION)
 MASS_LIKE = (MASS_CONCENTRATION, MASS_FRACTION)
 
+WAYS = ("sample", "prepared", "emission")
 _PARTS_KIND = {"volume": AMOUNT_FRACTION, "mass": MASS_FRACTION, "mass_by_volume": MASS_CONCENTRATION}
 # 1 part by mass in volume counts 1 g in 1 mL: 1 ppm (m/v) = 1 g/m3 (common practice).
 _KILOGRAM_PER_CUBIC_METRE_PER_PART = 1000.0
@@ -30,9 +34,17 @@ class Case:
     owe: Statement
     rule: RuleBook | None = None
     chosen: Mapping[str, str] = field(default_factory=dict)     # "hold.parts_by" -> label of the reading taken
+    sample: Sample | None = None       # where the held value comes from, when it is no direct reading
+    prepared: Prepared | None = None
+    emission: Emission | None = None   # what makes a rate of the concentration
 
-    def record(self, side: str) -> Statement | Gas:
+    def record(self, side: str) -> Statement | Gas | Sample | Prepared | Emission:
         return getattr(self, side)
+
+    @property
+    def ways(self) -> dict[str, Sample | Prepared | Emission]:
+        """The sample, the prepared gas and the emission, as far as there are any."""
+        return {side: record for side in WAYS if (record := self.record(side)) is not None}
 
     def taking(self, doubt_id: str, reading: Reading) -> "Case":
         """The case with one doubt settled by one of its readings."""
@@ -44,7 +56,7 @@ class Case:
         return replace(self, **{side: changed}, chosen=chosen)
 
 
-def make_case(hold: Statement, gas: Gas, owe: Statement, rule: RuleBook | None = None) -> Case:
+def make_case(hold: Statement, gas: Gas, owe: Statement, rule: RuleBook | None = None, **ways) -> Case:
     """Bring together what the statement itself says of its gas and what the gas line says.
 
     Raises OutOfRange when the two contradict each other.
@@ -71,7 +83,7 @@ def make_case(hold: Statement, gas: Gas, owe: Statement, rule: RuleBook | None =
         raise OutOfRange("You owe a figure at a reference oxygen and at a reference carbon dioxide: a correction is by one of them.",
                          hint="Keep the one the permit names.", field="owe.carbon_dioxide")
     owe = _undone(hold, owe)
-    return Case(hold, gas, owe, rule)
+    return Case(hold, gas, owe, rule, **ways)
 
 
 def _undone(hold: Statement, owe: Statement) -> Statement:

@@ -59,7 +59,7 @@ def limits_of(limit: Statement, choices: Mapping[str, str]) -> Limits:
 def on_limit_basis(settled: Settled, limit: Statement, choices: Mapping[str, str], take_usual: bool) -> Settled:
     """The same held value on the limit's basis, with the readings already taken and those of the limit's own doubts."""
     owe = limit_statement(limit, settled.case.owe)
-    case = make_case(settled.case.hold, settled.case.gas, replace(owe, value=None), settled.case.rule)
+    case = make_case(settled.case.hold, settled.case.gas, replace(owe, value=None), settled.case.rule, **settled.case.ways)
     own = {f"owe.{doubt.partition('.')[2]}": reading for doubt, reading in choices.items() if doubt.startswith("limit.")}
     return settle(case, {**choices, **own}, take_usual)
 

@@ -16,6 +16,8 @@ from gasbasis.calculation.case import (MASS_FRACTION, MASS_LIKE, PARTIAL_PRESSUR
 from gasbasis.calculation.conditions import conditions_doubt, pressure_doubt, temperature_doubt
 from gasbasis.calculation.leaves import SIDE_TITLES, fixed_quantity
 from gasbasis.calculation.repeated import order_doubt
+from gasbasis.calculation import routes
+from gasbasis.calculation.routes import emission
 from gasbasis.calculation.rules import with_usual
 from gasbasis.language.basis import (CORRECTED, DRY, MASS, MASS_BY_VOLUME, MEASURED, VOLUME, WET, Doubt, MatrixGas,
                                      Reading, Route)
@@ -29,10 +31,14 @@ _SIDES = ("hold", "owe")
 def raised(case: Case) -> list[Doubt]:
     """The doubts a case raises as it stands, in the order a person would settle them."""
     doubts = [*case.hold.ambiguities, *case.gas.ambiguities, *case.owe.ambiguities]
-    for rule in _RULES:
-        doubts.extend(rule(case))
+    doubts.extend(routes.doubts(case))
+    doubts.extend(emission.doubts(case, _of_concentration) if emission.is_owed(case.owe, case.emission) else _of_concentration(case))
     species = case.hold.species or case.owe.species
     return [with_usual(doubt, case.rule, species) for doubt in doubts]
+
+
+def _of_concentration(case: Case) -> list[Doubt]:
+    return [doubt for rule in _RULES for doubt in rule(case)]
 
 
 def _parts_by(case: Case) -> list[Doubt]:

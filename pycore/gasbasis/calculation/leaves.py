@@ -14,7 +14,7 @@ from gasbasis.language.numbers import read_number, significant
 from gasbasis.language.species import molar_mass
 from gasbasis.language.units import unit
 
-SIDE_TITLES = {"hold": "You hold", "gas": "It was in", "owe": "You owe", "limit": "Limit"}
+SIDE_TITLES = {"hold": "You hold", "gas": "It was in", "owe": "You owe", "limit": "Limit", "sample": "The sample", "prepared": "The prepared gas", "emission": "The emission"}
 _GRAMS = 1e3
 
 

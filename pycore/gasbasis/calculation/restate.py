@@ -9,7 +9,7 @@ from __future__ import annotations
 from dataclasses import dataclass, replace
 
 from gasbasis import facts, relations
-from gasbasis.calculation import leaves, matrix, pressure, real_gas, rules, water
+from gasbasis.calculation import leaves, matrix, pressure, real_gas, routes, rules, water
 from gasbasis.calculation.basis_words import basis_words, species_words, unit_words
 from gasbasis.calculation.case import (AMOUNT_CONCENTRATION, AMOUNT_FRACTION, MASS_CONCENTRATION, MASS_FRACTION,
                                        MASS_LIKE, PARTIAL_PRESSURE, UNSTATED_PARTS, VOLUMETRIC, Case, kind_and_factor,
@@ -18,9 +18,11 @@ from gasbasis.calculation.correlations import correlations_of
 from gasbasis.calculation.entity import entities_per, entity
 from gasbasis.calculation.path import TABLE, Drafting, Leaf, Path, Shown, Step
 from gasbasis.calculation.repeated import corrected_one_by_one
+from gasbasis.calculation.routes import emission
 from gasbasis.errors import Missing, OutOfRange
-from gasbasis.language.basis import DRY, EACH, TOGETHER, WET, Quantity, Species
+from gasbasis.language.basis import DRY, EACH, TOGETHER, WET, Quantity, Species, Statement
 from gasbasis.language.numbers import significant
+from gasbasis.language.species import molar_mass
 
 MASS_PER_AMOUNT = "mass_per_amount_of_gas"
 NEAR_AMBIENT = 0.02                    # oxygen this close below ambient is warned of
@@ -64,16 +66,18 @@ class _Laying:
         self.owed_shown = Shown(owed_factor, unit_words(case.owe))
         hold = case.hold
         kind, factor = kind_and_factor(hold)
-        self.held_factor = factor
+        way = routes.lay_held(self.draft, case)
+        self.held, self.held_factor = (way.leaf, way.leaf_factor) if way else (self.typed(hold, factor), factor)
+        self.place = Place(way.name if way else self.held, kind, "hold", hold.water, entity(hold, self.species), Shown(factor, unit_words(hold)))
+        self.uses_partial_pressure = False
+
+    def typed(self, hold: Statement, factor: float) -> str:
         value = hold.value.si if hold.unit.kind != "parts" else float(hold.value.number.decimal) * factor
         spread = leaves.uncertain(hold.value, "hold.value")
         in_si = factor / hold.unit.factor              # parts by mass in volume count in kg/m3
         spread |= {"standard_uncertainty": spread["standard_uncertainty"] * in_si, "unit_factor": factor}
-        held = self.draft.leaf(Leaf("held", value, hold.value.number.text, unit_words(hold), "typed",
+        return self.draft.leaf(Leaf("held", value, hold.value.number.text, unit_words(hold), "typed",
                                     "typed in You hold", "hold.value", **spread))
-        self.place = Place(held, kind, "hold", hold.water, entity(hold, self.species),
-                           Shown(factor, unit_words(hold)))
-        self.uses_partial_pressure = False
 
     # --- supplying what a relation asks for, by the name of its argument ---
 
@@ -92,8 +96,8 @@ class _Laying:
                                   hint="Say what was measured, e.g. 'Hg' or 'SO2', or type its formula.",
                                   field="hold.species")
                 return leaves.species_mass(draft, f"M_{self.place.entity.id}", self.place.entity, "hold.reported_as")
-            case "V_m":
-                return "V_m"
+            case "V_m" | "K":
+                return argument
             case "M_gas":
                 return matrix.gas_molar_mass(draft, case, self.place.water)
         raise KeyError(argument)
@@ -104,6 +108,8 @@ class _Laying:
         statement = case.record(side)
         if letter == "Z":
             return real_gas.ideal_or_real(draft, case, side, self.condition)
+        if side == "hold" and (known := routes.condition(draft, case, letter)):
+            return known
         word = "temperature" if letter == "T" else "pressure"
         if statement.actual_volume and word == "pressure":
             return pressure.gas_pressure(draft, case, "for a volume as it flowed")
@@ -158,6 +164,11 @@ class _Laying:
                 self.draft.choose("The rule's own molar volume", self.difference_from_exact(own, statement),
                                   f"{self.case.rule.title}, {self.case.rule.clause}")
                 return relations.get(f"{owed}_from_molar_volume")
+            printed = rules.printed_factor(self.case.rule, self.species, self.place.entity, statement.temperature, statement.pressure)
+            if printed is not None:
+                self.draft.leaf(Leaf("K", printed[0], printed[1].text, printed[1].unit, TABLE, f"the rule's own, {printed[1].locator}"))
+                self.draft.choose("The rule's own factor", self.factor_from_exact(*printed, statement), f"{self.case.rule.title}, {self.case.rule.clause}")
+                return relations.get(f"{owed}_from_printed_factor")
         return relations.get(f"{owed}_from_{held}")
 
     def difference_from_exact(self, own, statement) -> str:
@@ -165,6 +176,12 @@ class _Laying:
                                                     T=statement.temperature.si, p=statement.pressure.si) * 1e3
         percent = significant(100 * (float(own.number) / exact - 1), 2)
         return f"{own.text} {own.unit} is used as the rule prints it; exact is {significant(exact, 6)} {own.unit}, a difference of {percent} %"
+
+    def factor_from_exact(self, factor: float, own, statement) -> str:
+        exact = relations.get("mass_concentration_from_amount_fraction").value(
+            x=1.0, Z=1.0, R=float(facts.constant("molar_gas_constant").number), T=statement.temperature.si, p=statement.pressure.si, M=molar_mass(self.place.entity)[0])
+        percent = significant(100 * (factor / exact - 1), 2)
+        return f"{own.text} {own.unit} is used as the rule prints it; exact is {significant(float(own.number) * exact / factor, 5)} {own.unit}, a difference of {percent} %"
 
     def to_conditions(self) -> None:
         """Bring a volume from the held temperature and pressure to the owed ones."""
@@ -303,7 +320,7 @@ class _Laying:
         else:
             self.to_owed_kind()
             self.to_bases()
-        return Path(self.draft.leaves, tuple(self.draft.steps), tuple(self.draft.choices), "held", self.held_factor,
+        return Path(self.draft.leaves, tuple(self.draft.steps), tuple(self.draft.choices), self.held, self.held_factor,
                     self.place.name,
                     self.owed_shown, basis_words(case, self.place.water, self.draft), species_words(case, self.place.entity), tuple(self.draft.warnings),
                     tuple(self.draft.decisions))
@@ -358,11 +375,15 @@ def lay(case: Case) -> Path:
     """The path of a settled case. Raises Missing, naming what a relation needs and was not given."""
     if case.hold.averaging_order == EACH:
         return corrected_one_by_one(case, lay)
-    path = _Laying(case).lay()
+    path = emission.lay(case, _concentration) if emission.is_owed(case.owe, case.emission) else _concentration(case)
     if not case.gas.correlations and case.hold.averaging_order != TOGETHER:
         return path
     found, warnings = correlations_of(case, path.leaves)
     return replace(path, correlations=found, warnings=(*path.warnings, *warnings))
+
+
+def _concentration(case: Case) -> Path:
+    return _Laying(case).lay()
 
 
 def _one_species(case: Case) -> Species | None:

@@ -7,6 +7,7 @@ from gasbasis import facts
 from gasbasis.calculation.leaves import fixed_quantity
 from gasbasis.facts import RuleBook
 from gasbasis.language.basis import Doubt, Quantity, Reading, Species
+from gasbasis.language.units import unit
 
 _SAME_KELVIN, _SAME_PASCAL = 0.05, 15.0   # prints of one condition: 68 degF and 20 degC, 29.92 inHg and 101.325 kPa
 
@@ -64,3 +65,20 @@ def molar_volume(rule: RuleBook | None, temperature: Quantity | None, pressure: 
 
 def find_rule(identity: str) -> RuleBook | None:
     return next((book for book in facts.rule_books() if book.id == identity), None)
+
+
+# A rule prints its factor per ppm of the species and cubic foot of its standard gas, in pounds: in SI per whole of the gas.
+_PRINTED_FACTOR = {"lb/scf per ppm": ("lb/ft3", 1e6)}
+
+
+def printed_factor(rule: RuleBook | None, species: Species | None, counted_as: Species | None, temperature: Quantity | None, pressure: Quantity | None):
+    """The rule's own factor from ppm to mass concentration [kg/m3 per mol/mol] and its datum, on the rule's conditions; else None."""
+    own = rule.conventions.get(f"factor:{species.id}") if rule is not None and species is not None else None
+    if own is None or counted_as is None or counted_as.id not in (species.id, rule.usual.get(f"reported_as:{species.id}")):
+        return None
+    if own.unit not in _PRINTED_FACTOR or temperature is None or pressure is None:
+        return None
+    if not (same(temperature, conditions_of(rule)[0], _SAME_KELVIN) and same(pressure, conditions_of(rule)[1], _SAME_PASCAL)):
+        return None
+    unit_text, per = _PRINTED_FACTOR[own.unit]
+    return float(own.number) * unit(unit_text).factor * per, own

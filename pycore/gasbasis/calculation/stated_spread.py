@@ -1,7 +1,7 @@
 """Doubts about what a stated ± means. They never move the figure, only its uncertainty."""
 from __future__ import annotations
 
-from dataclasses import replace
+from dataclasses import fields, replace
 from decimal import Decimal
 
 from gasbasis.calculation.case import Case
@@ -18,10 +18,10 @@ _WORDS = {"value": "the held value", "water_content": "the water content", "carb
 def spread_doubts(case: Case) -> list[Doubt]:
     """One doubt for each ± without a k or a form, and for each "± n %" behind a value that is itself in %."""
     doubts = []
-    for side, fields in _FIELDS.items():
-        for field in fields:
+    for side, names in [*_FIELDS.items(), *((side, tuple(field.name for field in fields(record))) for side, record in case.ways.items())]:
+        for field in names:
             quantity = getattr(case.record(side), field)
-            if quantity is None or quantity.number.uncertainty is None:
+            if not isinstance(quantity, Quantity) or quantity.number.uncertainty is None:
                 continue
             stated = quantity.number.uncertainty
             if stated.form == "expanded" and stated.coverage_factor is None:
@@ -39,7 +39,7 @@ def _coverage(side: str, field: str, quantity: Quantity) -> Doubt:
              ("triangular", "limits: the middle likelier", {"form": "triangular"}, _GUM, ""))
     readings = tuple(Reading(identity, label, ((field, _changed(quantity, **change)),), source, usual)
                      for identity, label, change, source, usual in forms)
-    name = _WORDS.get(field, f"the {field}")
+    name = _WORDS.get(field, f"the {field.replace('_', ' ')}")
     return Doubt(f"{side}.{field}_spread", f"± {amount}", f"What is the ± {amount} of {name}?",
                  "It changes the uncertainty, not the figure.", readings)
 

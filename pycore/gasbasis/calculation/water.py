@@ -85,6 +85,9 @@ def _saturation(draft: Drafting, case: Case, temperature: Quantity, field: str, 
     return draft.step(Step(relations.get("saturation_pressure_over_water"), arguments, f"p_s_{tag}", _PASCAL))
 
 
+saturation_pressure = _saturation      # also of a metered gas, at the meter
+
+
 def _over_ice(draft: Drafting, T: str, tag: str) -> str:
     equation = _equation("iapws-r14-08")
     theta = draft.step(Step(relations.get("reduced_temperature"), {"T": T, "T_t": _table_leaf(draft, "T_t", equation["Tt"], "K", equation)}, f"theta_{tag}", _ONE))

@@ -144,6 +144,7 @@ class Statement:
     value: Quantity | None = None         # None on an owed side
     unit: Unit | None = None
     unit_in_millions: Unit | None = None  # what the unit is when its M is not the gas trade's thousand
+    ton_said: str | None = None           # what a bare "ton" is per: metric, short or long is open
     parts_by: str | None = None           # VOLUME | MASS | MASS_BY_VOLUME, for a unit of kind "parts"
     temperature: Quantity | None = None
     pressure: Quantity | None = None

@@ -147,6 +147,8 @@ def _peeked_unit(reader, place: int):
 class _Looker:
     """A reader that looks and takes nothing."""
 
+    side = ""
+
     def __init__(self, text: str):
         self.text = text
         self.fields: dict[str, object] = {}

@@ -1,17 +1,10 @@
 """What each piece is called, one sentence on it, an example, and the usual choices: one table for page and terminal."""
 from __future__ import annotations
 
-from dataclasses import dataclass
 from typing import Mapping
 
-
-@dataclass(frozen=True)
-class Field:
-    title: str
-    help: str
-    example: str
-    choices: tuple[str, ...] = ()
-    numeric: bool = False
+from gasbasis.language.describe_ways import WAY_ADDABLE, WAY_FIELDS
+from gasbasis.language.described import Field
 
 
 FIELDS: Mapping[str, Field] = {
@@ -66,6 +59,7 @@ ADDABLE: Mapping[str, tuple[str, ...]] = {
     "gas": ("water_content", "water_route", "droplets", "meter_factor", "cooler", "oxygen", "ambient_oxygen", "carbon_dioxide", "matrix_gas", "temperature", "pressure", "pressure_route",
             "barometer", "barometer_route", "model"),
     "owe": ("unit", "parts_by", "temperature", "pressure", "water", "oxygen", "reported_as"),
+    **WAY_ADDABLE,
     "limit": ("value", "temperature", "pressure", "water", "oxygen"),
 }
 # The gas line's own temperature and pressure are those of the gas as it flowed.
@@ -78,3 +72,31 @@ GAS_CHOICES: Mapping[str, tuple[str, ...]] = {
     "temperature": (), "pressure": (), "oxygen": (), "matrix_gas": ("in nitrogen", "in dry air", "in combustion gas", "CH4 93, C2H6 4, CO2 1, N2 2"),
 }
 GAS_EXAMPLES: Mapping[str, str] = {"temperature": "182 °C", "pressure": "1008 hPa", "oxygen": "9.2 % O2 dry"}
+
+# The parts of the page, each with what to do there; shown when somebody asks.
+PARTS: Mapping[str, str] = {
+    "hold": "Write or paste the concentration as it stands on the certificate, the display or the report, with all it says of its basis. Both 8,3 and "
+            "8.3 are read. What was understood appears below, piece by piece; tap a piece to correct it.",
+    "gas": "Write what is known of the gas the value was measured in: water, oxygen, the cooler, temperature, pressure, the carrier. Only what a step needs is "
+           "asked for, so this may stay empty.",
+    "owe": "Write the unit and the basis the figure has to be on, or take them from a rule-book and change what the permit says otherwise.",
+    "limit": "Write the limit with its own basis; what it leaves open is taken from what you owe. With nothing held, the limit itself is "
+             "read closely: all it could mean is shown.",
+    "figure": "One figure once nothing is open that would change it; until then the range of all that could have been meant.",
+    "doubts": "What the texts leave open and what would change the figure, the one that matters most first. Choose what was meant and note why; nothing is assumed "
+              "in silence. What has no visible effect is only listed.",
+    "steps": "By what factor each correction changed the figure. A correction that should not be there shows here first.",
+    "verdict": "The figure is restated onto the limit's basis and compared under the decision rule that was agreed; none is taken for granted. "
+               "Turned round: what the display shows when the figure stands at the limit.",
+    "working": "Every step with its formula, its numbers, where each comes from and the source, so that somebody else can redo it by hand.",
+    "budget": "How far the figure may be off, from the ± of the inputs, each carried through the whole path. The drawing checks the formula against chance itself.",
+    "pass-on": "The link holds the whole sheet. Who opens it sees your figure, then whether it comes to the same there. A phone reads the QR code with its camera.",
+    "kept": "Sheets stay on this device, under a name or under their figure. What you were working on is kept by itself whenever another sheet takes its place.",
+    "receive": "Paste a link or its code, or choose a file: a sheet, a record, or kept sheets. A record is checked: whether it was changed, and whether it comes to the same here.",
+    "record": "A record seals the sheet as it is now: date, texts, settled doubts, steps, sources, uncertainty and verdict. To correct one, amend it: the new record names the old.",
+    "compare": "Only what differs is listed. Each difference is carried from the other sheet into this one, alone, to see what it does to the figure; then all together.",
+}
+
+def fields_of(side: str) -> Mapping[str, Field]:
+    """Every piece a side can have."""
+    return WAY_FIELDS.get(side, FIELDS)

@@ -5,15 +5,21 @@ import re
 
 from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.basis import Gas, Piece, Statement
-from gasbasis.language.describe import FIELDS
+from gasbasis.language.describe import fields_of
+from gasbasis.language.emission import read_emission
 from gasbasis.language.gas import read_gas
+from gasbasis.language.prepared import read_prepared
+from gasbasis.language.sample import read_sample
 from gasbasis.language.statement import read_statement
+
+_READERS = {"gas": read_gas, "sample": read_sample, "prepared": read_prepared, "emission": read_emission}
 
 
 def edit(text: str, side: str, field: str, to: str) -> str:
     """The text with one piece replaced, added or (to = "") taken out. Raises NotUnderstood when it would not read so."""
-    if field not in FIELDS:
-        raise NotUnderstood(f"There is no piece '{field}'.", hint=f"Pieces: {', '.join(FIELDS)}.", field=side)
+    known = fields_of(side)
+    if field not in known:
+        raise NotUnderstood(f"There is no piece '{field}'.", hint=f"Pieces: {', '.join(known)}.", field=side)
     before, problems = _read(text, side)
     pieces = [piece for piece in before.pieces if piece.field == field]
     wanted = to.strip()
@@ -23,7 +29,7 @@ def edit(text: str, side: str, field: str, to: str) -> str:
 
 
 def _read(text: str, side: str) -> tuple[Statement | Gas, tuple[CoreError, ...]]:
-    return read_gas(text) if side == "gas" else read_statement(text, side)
+    return _READERS[side](text) if side in _READERS else read_statement(text, side)
 
 
 def _replaced(text: str, pieces: list[Piece], wanted: str) -> str:
@@ -59,9 +65,10 @@ def _verify(text: str, side: str, field: str, wanted: str, problems_before: int)
     record, problems = _read(text, side)
     has = any(piece.field == field for piece in record.pieces)
     if bool(wanted) != has:
-        title = FIELDS[field].title
+        described = fields_of(side)[field]
+        title = described.title
         given = f"'{wanted}' does not read as {title}" if wanted else f"{title} cannot be taken out here"
-        raise NotUnderstood(f"{given}.", hint=f"For example: {FIELDS[field].example}." if wanted else "Change it in the text line.",
+        raise NotUnderstood(f"{given}.", hint=f"For example: {described.example}." if wanted else "Change it in the text line.",
                             field=f"{side}.{field}")
     if wanted and len(problems) > problems_before:
         raise NotUnderstood(problems[-1].message, hint=problems[-1].hint, field=f"{side}.{field}")

@@ -11,6 +11,7 @@ from gasbasis.language import tokens
 from gasbasis.language.basis import CORRECTED, DRY, MEASURED, WET, MatrixGas, Number, Quantity, Route, Species, Uncertainty
 from gasbasis.language.numbers import NUMBER, PLUS_MINUS, number_at, numbers_at, uncertainty_at
 from gasbasis.language.columns import column_at
+from gasbasis.language.rate_units import rate_unit
 from gasbasis.language.species import find, match_at
 from gasbasis.language.units import unit
 
@@ -254,7 +255,7 @@ def _plausible(number: Number, factor: float, low: float, high: float, offset: f
 
 def concentration_unit(reader, place: int):
     """A unit of concentration at a place, taking what is glued to it as pieces. Returns (unit, end) or None."""
-    for read in (_power_notation, _mass_per_volume, _amount_per_volume, _plain_ratio, _parts):
+    for read in (*((rate_unit,) if reader.side != "hold" else ()), _power_notation, _mass_per_volume, _amount_per_volume, _plain_ratio, _parts):
         found = read(reader, place)
         if found is not None:
             return found

@@ -228,6 +228,8 @@ def ambiguities(record, side: str) -> tuple[Doubt, ...]:
             doubts.append(_number_doubt(quantity, field, side))
     if getattr(record, "unit_in_millions", None) is not None:
         doubts.append(_thousand_doubt(record, side))
+    if getattr(record, "ton_said", None) is not None:
+        doubts.append(_ton_doubt(record, side))
     species = getattr(record, "species", None)
     if species is not None and species.id in _MET_IN_PERCENT and getattr(record, "value", None) and record.value.unit.id == "ppt":
         doubts.append(_trillion_doubt(record, side))
@@ -255,6 +257,15 @@ def _thousand_doubt(record: Statement, side: str) -> Doubt:
         patch = (("unit", measured), ("value", replace(record.value, unit=measured) if record.value else None), ("unit_in_millions", None))
         readings.append(Reading(identity, label, patch, _COMMON, usual))
     return Doubt(f"{side}.unit_count", "M", "Is the M before the volume a thousand or a million?", "It changes the figure a thousandfold.", tuple(readings))
+
+
+def _ton_doubt(record: Statement, side: str) -> Doubt:
+    readings = []
+    for identity, name, label in (("metric", "t", "metric, 1000 kg"), ("short", "short ton", "short, 2000 lb = 907.2 kg"), ("long", "long ton", "long, 2240 lb = 1016 kg")):
+        measured = unit(f"{name}/{record.ton_said}")
+        patch = (("unit", measured), ("value", replace(record.value, unit=measured) if record.value else None), ("ton_said", None))
+        readings.append(Reading(identity, label, patch, _COMMON))
+    return Doubt(f"{side}.ton", "ton", "Is the ton metric, short or long?", "A short ton is 9 % less, a long ton 2 % more than a metric one.", tuple(readings))
 
 
 def _beyond_the_whole(quantity: Quantity) -> bool:

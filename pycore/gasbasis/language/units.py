@@ -19,7 +19,8 @@ from gasbasis.language.normalise import normalise
 # kind -> (SI unit it is measured in, in the definitions' notation)
 _SI = {"mass_concentration": "kg/m**3", "amount_concentration": "mol/m**3", "pressure": "Pa", "mass": "kg", "amount": "mol",
        "volume": "m**3", "length": "m", "area": "m**2", "time": "s", "velocity": "m/s", "mass_rate": "kg/s", "volume_rate": "m**3/s",
-       "molar_mass": "kg/mol", "energy": "J", "mass_per_energy": "kg/J", "volume_per_energy": "m**3/J", "amount_rate": "mol/s"}
+       "molar_mass": "kg/mol", "energy": "J", "mass_per_energy": "kg/J", "volume_per_energy": "m**3/J", "amount_rate": "mol/s",
+       "power": "J/s", "energy_per_mass": "J/kg"}
 
 # Parts without a word on what they count; text as printed.
 _PARTS: Mapping[str, tuple[str, float]] = {
@@ -40,7 +41,8 @@ _ATOMS: Mapping[str, tuple[str, ...]] = {
     "ft**3": ("ft3", "ft^3", "cf", "cu ft", "cu.ft.", "cu. ft.", "cuft", "cubic foot", "cubic feet"),
     "m": (), "mm": (), "cm": (), "in": ("inch", "inches"), "ft": ("foot", "feet"), "m**2": ("m2", "m^2"), "ft**2": ("ft2", "ft^2"),
     "s": ("sec", "second"), "min": ("minute",), "h": ("hr", "hour"), "d": ("day",), "a": ("yr", "year"), "t": (),
-    "J": (), "kJ": (), "MJ": (), "GJ": (), "MWh": (), "GWh": (), "kWh": (), "Btu": ("btu",),
+    "J": (), "kJ": (), "MJ": (), "GJ": (), "TJ": (), "MWh": (), "GWh": (), "kWh": (), "Btu": ("btu", "BTU"), "MMBtu": ("MMBTU", "mmBtu", "million Btu"), "TBtu": ("TBTU",),
+    "W": (), "kW": (), "MW": (), "GW": (), "short_ton": ("short ton", "short tons"), "long_ton": ("long ton", "long tons"),
 }
 _PRESSURES: Mapping[str, tuple[str, ...]] = {
     "Pa": (), "hPa": (), "kPa": ("kpa",), "MPa": ("Mpa",), "mbar": ("millibar", "mb"), "bar": ("bars",),
@@ -54,7 +56,7 @@ _TEMPERATURES: Mapping[str, tuple[str, ...]] = {
     "degR": ("°R", "R", "deg R", "rankine"),
 }
 _PRINTED = {"degC": "°C", "degF": "°F", "degR": "°R", "torr": "Torr", "mmH2O": "mmH₂O", "inH2O": "inH₂O", "technical_atmosphere": "at",
-            "inH2O_60F": "inH₂O (60 °F)", "inHg_60F": "inHg (60 °F)"}
+            "short_ton": "short ton", "long_ton": "long ton", "inH2O_60F": "inH₂O (60 °F)", "inHg_60F": "inHg (60 °F)"}
 
 
 @lru_cache(maxsize=1)
@@ -169,4 +171,6 @@ GROUPS: Mapping[str, tuple[str, ...]] = {
     "amount per volume": ("mol/m3", "mmol/m3", "umol/m3", "nmol/m3", "mmol/L"),
     "pressure": tuple(_PRESSURES),
     "temperature": tuple(_TEMPERATURES),
+    "mass rate": ("g/s", "kg/h", "lb/h", "t/a", "short ton/a", "long ton/a"),
+    "mass per heat or output": ("ng/J", "mg/MJ", "g/GJ", "lb/MMBtu", "lb/TBtu", "g/kWh", "lb/MWh", "lb/GWh", "kg/t"),
 }

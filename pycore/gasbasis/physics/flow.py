@@ -3,17 +3,15 @@ from __future__ import annotations
 
 from gasbasis.physics.elementary import sqrt
 
-_PI = 3.141592653589793
-
 
 def duct_velocity(C_p, s, R, T, p, M):
     """Mean velocity from the mean root of the velocity pressures s, with pressure, temperature and wet molar mass of the duct. [m/s]"""
     return C_p * s * sqrt(2 * R * T / (p * M))
 
 
-def area_of_circle(D):
+def area_of_circle(pi, D):
     """Cross-section of a round duct. [m2]"""
-    return _PI / 4 * D ** 2
+    return pi / 4 * D ** 2
 
 
 def area_of_rectangle(a, b):
@@ -34,6 +32,11 @@ def mass_rate(gamma, q):
 def mass_rate_from_heat_rate(E, P):
     """Mass per time, from mass per heat and heat per time. [kg/s]"""
     return E * P
+
+
+def rate_over_operation(m, t, t_a):
+    """Mass per year of a plant that runs for t of the t_a of a year, as a rate over the whole year. [kg/s]"""
+    return m * t / t_a
 
 
 def mass_per_output(m, P):

@@ -72,6 +72,16 @@ def amount_concentration_at_conditions(c, p_1, T_1, Z_1, p_2, T_2, Z_2):
     return c * p_2 * T_1 * Z_1 / (p_1 * T_2 * Z_2)
 
 
+def mass_concentration_from_printed_factor(x, K):
+    """Amount fraction times a mass concentration per amount fraction that a rule prints. [kg/m3]"""
+    return x * K
+
+
+def amount_fraction_from_printed_factor(gamma, K):
+    """Mass concentration over the factor a rule prints. [mol/mol]"""
+    return gamma / K
+
+
 def mass_per_amount_of_gas_from_mass_fraction(w, M_gas):
     """Mass of a species per amount of gas. [kg/mol]"""
     return w * M_gas

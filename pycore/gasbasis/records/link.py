@@ -27,7 +27,8 @@ _LARGEST_BODY = 64_000                 # bytes, against a deflated bomb
 _CHECK_LENGTH = 7
 _HEAD = 4
 _APP = b"gasbasis"
-_SHORT = {"hold": "h", "gas": "g", "owe": "o", "limit": "l", "rule_book": "r", "title": "t", "settled": "s", "notes": "n"}
+_SHORT = {"hold": "h", "gas": "g", "owe": "o", "limit": "l", "rule_book": "r", "title": "t", "settled": "s", "notes": "n",
+          "sample": "c", "prepared": "p", "emission": "e"}
 _LONG = {short: name for name, short in _SHORT.items()}
 _NAMES = ("title", "notes")            # what may name a site or a person: only on request
 _ALPHABET = "0123456789abcdefghijklmnopqrstuv"

@@ -14,6 +14,7 @@ from gasbasis.calculation.repeated import repeated_inputs
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.uncertainty import budget
 from gasbasis.calculation.working import bars, working
+from gasbasis.calculation.routes.mercury import above_saturation
 from gasbasis.calculation.rules import find_rule
 from gasbasis.errors import CoreError, Missing, NotUnderstood
 from gasbasis.facts import RuleBook
@@ -22,9 +23,11 @@ from gasbasis.language.gas import read_gas
 from gasbasis.language.numbers import half_last_digit, significant
 from gasbasis.language.statement import read_statement
 from gasbasis.records.about_gas import about_gas
+from gasbasis.records.about_ways import about_sample, below_detection
 from gasbasis.records.sheet import Sheet
 from gasbasis.records.sides import side_record
 from gasbasis.records.varied import variables
+from gasbasis.records.ways import held, is_held_by_way, read_ways
 from gasbasis.records.worth import budget_record, verdict_record, worth_problem
 
 DIGITS = 4                             # significant digits of a figure without uncertainty
@@ -38,7 +41,7 @@ def restated(sheet: Sheet, take_usual: bool = False, bound: int = BOUND) -> dict
 
     Up to `bound` combinations of readings are tried; above it the record's spread says that it is not complete.
     """
-    if sheet.limit.strip() and not sheet.hold.strip():
+    if sheet.limit.strip() and not sheet.hold.strip() and not is_held_by_way(sheet):
         return challenged(sheet, take_usual, bound)
     return _restated(sheet, *read_statement(sheet.hold, "hold"), take_usual, bound) | {"challenge": False}
 
@@ -71,12 +74,18 @@ def _restated(sheet: Sheet, hold: Statement, hold_problems: tuple[CoreError, ...
     gas, gas_problems = read_gas(sheet.gas)
     owe, owe_problems = read_statement(sheet.owe, "owe")
     limit, limit_problems = read_statement(sheet.limit, "limit")
-    problems = [*hold_problems, *gas_problems, *owe_problems, *_incomplete(hold, owe)]
+    ways = read_ways(sheet)
+    problems = [*hold_problems, *gas_problems, *owe_problems, *ways.problems]
+    try:
+        hold = held(hold, ways)
+    except CoreError as error:
+        problems.append(error)
+    problems.extend(_incomplete(sheet, hold, owe))
     result: dict = {"verdict": None, "uncertainty": None, "figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "varies": [], "warnings": []}
     settled = Settled(Case(hold, gas, owe), (), ())
     if not problems:
         try:
-            settled = settle(make_case(hold, gas, owe, _rule(sheet)), sheet.settled, take_usual)
+            settled = settle(make_case(hold, gas, owe, _rule(sheet), **ways.records), sheet.settled, take_usual)
             result |= _outcome(settled, sheet, hold.value.number.below, bound)
         except CoreError as error:
             problems.append(error)
@@ -88,8 +97,11 @@ def _restated(sheet: Sheet, hold: Statement, hold_problems: tuple[CoreError, ...
         except CoreError as error:
             problems.append(worth_problem(error))
     result["warnings"] = [*result["warnings"], *_said_loosely(hold, limit)]
-    sides = {"hold": hold, "gas": gas, "owe": owe, "limit": limit}
+    sides = {"hold": hold, "gas": gas, "owe": owe, "limit": limit, **ways.records}
     records = {side: side_record(side, record, settled, problems) for side, record in sides.items()}
+    if "sample" in records:
+        records["sample"]["about"] = result.get("about_sample", [])
+    result.pop("about_sample", None)
     records["gas"]["about"] = about_gas(settled.case) if not gas_problems else []
     return {**records,
             "problems": [error.as_json() for error in problems], **result}
@@ -111,11 +123,11 @@ def _rule(sheet: Sheet) -> RuleBook | None:
     return rule
 
 
-def _incomplete(hold: Statement, owe: Statement) -> list[CoreError]:
+def _incomplete(sheet: Sheet, hold: Statement, owe: Statement) -> list[CoreError]:
     """What must be there before anything can be restated."""
     missing: list[CoreError] = []
     for side, statement in (("hold", hold), ("owe", owe)):
-        if not statement.text.strip():
+        if not statement.text.strip() and not (side == "hold" and is_held_by_way(sheet)):
             message, hint = _NEEDED[side]
             missing.append(Missing(message, hint=hint, field=side))
     if hold.text.strip() and hold.value is None:
@@ -156,7 +168,7 @@ def _figure(case: Case, below: bool) -> dict:
     return {"uncertainty": worth, "figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,
                        "species_text": path.species_text, "basis": basis,
                        "text": f"{path.species_text} {number} {path.shown.unit_text} {basis}".strip()},
-            "working": working(path), "steps": bars(path), "varies": variables(case, path), "warnings": [*path.warnings, *_other_order(case, path.shown.unit_text)]}
+            "about_sample": about_sample(case, path), "working": working(path), "steps": bars(path), "varies": variables(case, path), "warnings": [*path.warnings, *above_saturation(case), *below_detection(case), *_other_order(case, path.shown.unit_text)]}
 
 
 def _other_order(case: Case, unit_text: str) -> list[str]:

@@ -7,7 +7,7 @@ from typing import Mapping
 from gasbasis.errors import NotUnderstood
 
 SCHEMA = 1
-_TEXTS = ("hold", "gas", "owe", "limit", "rule_book", "title")
+_TEXTS = ("hold", "gas", "owe", "limit", "sample", "prepared", "emission", "rule_book", "title")
 _MAPPINGS = ("settled", "notes")
 
 
@@ -17,6 +17,9 @@ class Sheet:
     gas: str = ""
     owe: str = ""
     limit: str = ""
+    sample: str = ""                   # how the held value came about, where it is no direct reading
+    prepared: str = ""
+    emission: str = ""                 # what makes a rate of the concentration
     rule_book: str = ""
     title: str = ""
     settled: Mapping[str, str] = field(default_factory=dict)    # doubt id -> reading id

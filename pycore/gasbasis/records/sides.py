@@ -5,7 +5,7 @@ from gasbasis.calculation.composition import total_text
 from gasbasis.calculation.outcomes import Settled
 from gasbasis.errors import CoreError
 from gasbasis.language.basis import Doubt, Gas, Piece, Statement
-from gasbasis.language.describe import ADDABLE, FIELDS, GAS_CHOICES, GAS_EXAMPLES, GAS_HELP, GAS_TITLES
+from gasbasis.language.describe import ADDABLE, GAS_CHOICES, GAS_EXAMPLES, GAS_HELP, GAS_TITLES, fields_of
 
 
 def side_record(side: str, record: Statement | Gas, settled: Settled, problems: list[CoreError]) -> dict:
@@ -85,7 +85,7 @@ def _settled(side: str, field: str, doubt: Doubt, reading) -> dict:
 
 
 def _described(side: str, field: str) -> dict:
-    described = FIELDS.get(field)
+    described = fields_of(side).get(field)
     if described is None:
         return {"title": field, "help": "", "example": "", "choices": [], "numeric": False}
     in_gas = side == "gas"

@@ -15,6 +15,7 @@ from gasbasis.language.gas import read_gas
 from gasbasis.language.numbers import significant, with_uncertainty
 from gasbasis.language.statement import read_statement
 from gasbasis.records.sheet import Sheet
+from gasbasis.records.ways import held, read_ways
 
 _QUANTILE = NormalDist().inv_cdf(0.975)  # both intervals must hold 95 %; k = 2 would hold 95.45
 _POINTS = 80                           # of the drawn curve
@@ -57,8 +58,10 @@ def settled_sheet(sheet: Sheet, take_usual: bool) -> Settled:
     """The case of a readable sheet with its readings taken. Raises CoreError."""
     (hold, hold_problems), (gas, gas_problems), (owe, owe_problems) = (
         read_statement(sheet.hold, "hold"), read_gas(sheet.gas), read_statement(sheet.owe, "owe"))
-    for problem in (*hold_problems, *gas_problems, *owe_problems):
+    ways = read_ways(sheet)
+    for problem in (*hold_problems, *gas_problems, *owe_problems, *ways.problems):
         raise problem
+    hold = held(hold, ways)
     if hold.value is None or owe.unit is None:
         raise Missing("A figure is needed before it can be drawn.", hint="Type what you hold and what you owe.", field="hold")
-    return settle(make_case(hold, gas, owe, find_rule(sheet.rule_book)), sheet.settled, take_usual)
+    return settle(make_case(hold, gas, owe, find_rule(sheet.rule_book), **ways.records), sheet.settled, take_usual)

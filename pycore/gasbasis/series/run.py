@@ -31,17 +31,18 @@ def layout_of(path: str | os.PathLike, said: Mapping[str, object] | None = None)
 
 
 def restate_file(path: str | os.PathLike, given: Mapping, out: str | None = None, means_out: str | None = None,
-                 progress: Progress = lambda done, of: None, watch: Callable[[Rows, Means | None, Block], None] | None = None) -> dict:
+                 progress: Progress = lambda done, of: None, watch: Callable[[Rows, Means | None, Block], None] | None = None,
+                 listener: Callable[[Means, Mean], None] | None = None) -> dict:
     """Restate a file row by row; write rows and means where asked; return the record. Raises CoreError.
 
-    `progress(bytes done, bytes of)` is called after each block, and `watch` sees each block (the page draws from it).
+    `progress(bytes done, bytes of)` is called after each block, `watch` sees each block and `listener` each mean (the page draws from them).
     """
     settings = read_settings(given)
     layout = layout_of(path, settings.file)
     rows = Rows(layout, settings)
     with ExitStack() as stack:
         sinks, close = _sinks(out, rows, given, stack)
-        means = _means(rows, settings, means_out, sinks, given, stack)
+        means = _means(rows, settings, means_out, sinks, given, stack, listener)
         size = os.path.getsize(path)
         source = stack.enter_context(_opened(path))
         for block in rows.blocks(Lines(_chunks(source), layout.encoding)):
@@ -86,10 +87,10 @@ def _sinks(out: str | None, rows: Rows, given: Mapping, stack: ExitStack):
     return [RowsFile(target, rows, given)], []
 
 
-def _means(rows: Rows, settings: Settings, means_out: str | None, sinks, given: Mapping, stack: ExitStack) -> Means | None:
+def _means(rows: Rows, settings: Settings, means_out: str | None, sinks, given: Mapping, stack: ExitStack, further) -> Means | None:
     if not settings.windows and settings.flow is None:
         return None
-    takers = [sink.take_mean for sink in sinks if isinstance(sink, Workbook)]
+    takers = [sink.take_mean for sink in sinks if isinstance(sink, Workbook)] + ([further] if further else [])
     if means_out is not None:
         takers.append(MeansFile(stack.enter_context(open(means_out, "w", encoding="utf-8", newline="")), rows, given).take)
 

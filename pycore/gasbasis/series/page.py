@@ -90,12 +90,26 @@ class Points:
     """What the page draws: times and figures as they come, and the means."""
 
     def __init__(self, species: int) -> None:
-        self.times, self.figures = array("d"), [array("d") for _ in range(species)]
+        self.times, self.figures, self.offset = array("d"), [array("d") for _ in range(species)], None
 
     def take(self, rows, means, block) -> None:
-        self.times.extend(block.seconds)
+        if rows.clock is None:          # no stamps: the rows are counted
+            self.times.extend(float(line) for line in block.lines)
+        elif self.offset is None and block.seconds:
+            self.offset = rows.clock.offset_at(block.seconds[0]) if block.seconds[0] == block.seconds[0] else 0.0
+        if rows.clock is not None:      # a row whose stamp cannot be read has no place on the axis
+            kept = [place for place, second in enumerate(block.seconds) if second == second and place not in block.problems] if block.problems else None
+            if kept is not None:
+                return self._some(block, kept)
+            self.times.extend(block.seconds)
         for kept, figures in zip(self.figures, block.figures):
             kept.extend(figures)
+
+
+    def _some(self, block, kept) -> None:
+        self.times.extend(block.seconds[place] for place in kept)
+        for column, figures in zip(self.figures, block.figures):
+            column.extend(figures[place] for place in kept)
 
 
 points = Points(0)
@@ -116,7 +130,20 @@ def _run(data: Mapping, progress) -> dict:
 
     windows = given.get("means", {}).get("windows")
     record = restate_file(data["path"], given, BOOK if data.get("book") else ROWS, MEANS if windows else None, progress, points.take, mean)
-    return record | {"text": text_of(record), "mean_names": list(MEAN_NAMES), "means_listed": means, "count": len(points.times)}
+    return record | {"text": text_of(record), "mean_names": list(MEAN_NAMES), "means_listed": means, "count": len(points.times), "offset_s": points.offset or 0.0,
+                     "ends": [_ends(figures) for figures in points.figures], "upper_limits": _upper_limits(record, given)}
+
+
+def _ends(figures: array) -> str:
+    """From the lowest to the highest figure, in words."""
+    known = [figure for figure in figures if figure == figure]
+    return f"from {significant(min(known), 4)} to {significant(max(known), 4)}" if known else ""
+
+
+def _upper_limits(record: dict, given: Mapping) -> list[float | None]:
+    """The limits to draw, species by species."""
+    windows = (record["means"] or {}).get("windows") or []
+    return [species["upper_limit"] for species in windows[0]["species"]] if windows else [None] * len(given["species"])
 
 
 def column_bytes(index: int) -> bytes:

@@ -141,7 +141,7 @@ def _statistics_record(rows: Rows, means: Means, index: int, species: int, momen
             "highest": None if highest is None else {"value": highest.value, "text": significant(highest.value, DIGITS), "from": moment(highest.start), "to": moment(highest.end),
                                                      "percent_of_limit": 100.0 * highest.value / upper if upper else None},
             "percentiles": [{"percent": percent, "value": _or_none(found.percentile(percent))} for percent in rows.settings.percentiles],
-            "exceedances": found.exceedances if limits is not None else None,
+            "upper_limit": upper, "exceedances": found.exceedances if limits is not None else None,
             "listed": [{"from": moment(mean.start), "to": moment(mean.end), "text": significant(mean.value, DIGITS), "verdict": mean.words} for mean in found.listed]}
 
 

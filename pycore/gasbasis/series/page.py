@@ -14,7 +14,7 @@ from gasbasis.language.numbers import significant
 from gasbasis.series.layout import Column, Layout
 from gasbasis.series.run import layout_of, restate_file
 from gasbasis.series.settings import BELOW_RULES, NEGATIVE_RULES, ORDERS, STAMPS
-from gasbasis.series.terminal import text_of
+from gasbasis.series.terminal import statistics_table, text_of
 from gasbasis.series.writing import MEAN_NAMES, mean_cells
 
 ROWS, MEANS, BOOK = "/tmp/rows.csv", "/tmp/means.csv", "/tmp/series.xlsx"
@@ -130,7 +130,7 @@ def _run(data: Mapping, progress) -> dict:
 
     windows = given.get("means", {}).get("windows")
     record = restate_file(data["path"], given, BOOK if data.get("book") else ROWS, MEANS if windows else None, progress, points.take, mean)
-    return record | {"text": text_of(record), "mean_names": list(MEAN_NAMES), "means_listed": means, "count": len(points.times), "offset_s": points.offset or 0.0,
+    return record | {"summary": text_of(record, with_means=False), "statistics": statistics_table(record), "mean_names": list(MEAN_NAMES), "means_listed": means, "count": len(points.times), "offset_s": points.offset or 0.0,
                      "ends": [_ends(figures) for figures in points.figures], "upper_limits": _upper_limits(record, given)}
 
 

@@ -12,7 +12,8 @@ export function mountSeriesResults(box, acts) {
 
 function show(box, acts, found, settings, name) {
   const counts = element("div");
-  counts.append(...found.text.split("\n").filter(Boolean).slice(found.understood.length).filter((line) => !line.startsWith("  ") && !line.startsWith(" line")).map((line) => element("p", line, "figures")));
+  counts.append(...found.summary.map((line) => element("p", line, "figures")));
+  if (found.statistics.length) counts.append(table(found.statistics[0], found.statistics.slice(1)));
   box.replaceChildren(element("h3", "Restated"), counts, files(found, settings, name, acts), badRows(found), ...plots(found), means(found));
   box.querySelector("h3").scrollIntoView({ block: "start" });
   for (const draw of drawn.splice(0)) draw();
@@ -28,7 +29,7 @@ function files(found, settings, name, acts) {
   if (found.files.book) part.append(give("The workbook is ready: take it", found.files.book, ".restated.xlsx"));
   else part.append(button("Make a workbook (XLSX)", acts.workbook));
   part.append(give("Settings", new Blob([JSON.stringify(settings, null, 1)], { type: "application/json" }), ".settings.json"),
-    give("Record", new Blob([JSON.stringify({ ...found, files: undefined, columnsDrawn: undefined, means_listed: undefined }, null, 1)], { type: "application/json" }), ".record.json"));
+    give("Record", new Blob([JSON.stringify({ ...found, files: undefined, columnsDrawn: undefined, means_listed: undefined, statistics: undefined, summary: undefined }, null, 1)], { type: "application/json" }), ".record.json"));
   return part;
 }
 

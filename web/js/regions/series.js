@@ -282,7 +282,7 @@ function chosen(name, options, value, change) {
 }
 
 function tick(name, on, change) {
-  const label = element("label", "", "choice series-tick"), input = element("input");
+  const label = element("label", "", "tick series-tick"), input = element("input");
   Object.assign(input, { type: "checkbox", checked: on });
   input.addEventListener("change", () => change(input.checked));
   label.append(input, element("span", name));

@@ -65,7 +65,7 @@ export function openSeries(root) {
     chosen.addEventListener("change", () => chosen.files[0] && open(chosen.files[0]));
     const label = element("label", "A file of readings (CSV, TSV) ", "note");
     label.append(chosen);
-    const pasted = element("textarea", "", "said");
+    const pasted = element("textarea", "", "series-paste");
     pasted.rows = 2;
     pasted.spellcheck = false;
     const pasteLabel = element("label", "or paste its rows, the header with them", "note");
@@ -151,7 +151,7 @@ export function openSeries(root) {
       const part = element("fieldset");
       part.append(element("legend", entry.name),
         field("You hold", entry.hold, (text) => { entry.hold = text; }, "NOx {NOx} ppm dry as NO2"),
-        field("You owe", entry.owe, (text) => { entry.owe = text; }, "mg/m3 at 273.15 K, 101.3 kPa, dry, 3 % O2"),
+        field("You owe", entry.owe, (text) => { entry.owe = text; }, "mg/m3 at 0 °C, 101.3 kPa, dry, 3 % O2"),
         field("Limit", entry.limit ?? "", (text) => { entry.limit = text; }, "200 mg/m3"),
         ...(settings.species.length > 1 ? [button("Leave it out", () => { settings.species.splice(place, 1); drawSettings(); }, "bare")] : []));
       return part;
@@ -165,7 +165,7 @@ export function openSeries(root) {
       ...(settled.length ? [row(element("span", `Settled: ${settled.map(([doubt, reading]) => `${doubt} is ${reading}`).join(", ")}`), button("Un-settle", () => { delete settings.settled; drawSettings(); }, "bare"))] : []),
       tick("Take the usual reading of a doubt where there is one", settings.usual === true, (on) => { settings.usual = on; }),
       ...(settings.status ? [field(`Words of ${settings.status.column} that mean a valid reading`, settings.status.valid.join(", "), (text) => { settings.status.valid = text.split(",").map((word) => word.trim()); })] : []),
-      ...(settings.flow ? [field(`Basis of ${settings.flow.column}`, settings.flow.basis, (text) => { settings.flow.basis = text; }, "273.15 K, 101.3 kPa, dry"), tick("Weight the means by it", settings.flow.weighs === true, (on) => { settings.flow.weighs = on; }),
+      ...(settings.flow ? [field(`Basis of ${settings.flow.column}`, settings.flow.basis, (text) => { settings.flow.basis = text; }, "0 °C, 101.3 kPa, dry"), tick("Weight the means by it", settings.flow.weighs === true, (on) => { settings.flow.weighs = on; }),
         button(`Leave ${settings.flow.column} out`, () => { delete settings.flow; drawSettings(); }, "bare")] : []),
       element("h3", "Means"), windowsField(means),
       row(chosen("Which is owed", choices.order, means.order, set(means, "order")), chosen("A stamp is", choices.stamp, time.stamp, set(time, "stamp"))),

@@ -172,6 +172,12 @@ def test_the_terminal(tmp_path):
     assert wrong.returncode == 2 and "cannot be opened" in wrong.stderr
 
 
+def test_whole_columns_from_the_terminal(tmp_path):
+    pytest.importorskip("polars")
+    done = terminal(DEMO, "--settings", SETTINGS, "--out", tmp_path / "o.csv", "--columns")
+    assert done.returncode == 0 and json.loads(done.stdout)["rows"] == 1398 and json.loads(done.stdout)["without NOx"] == 64
+
+
 def test_memory_stays_constant(tmp_path):
     """Four times the rows, the same peak within a few megabytes."""
     peaks = []

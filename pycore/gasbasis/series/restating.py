@@ -34,6 +34,7 @@ class Restating:
     template: Template
     functions: list[Callable[..., float]] = field(default_factory=list)
     paths: list[Path] = field(default_factory=list)
+    laid: list[tuple[Path, Row]] = field(default_factory=list)    # what the functions were compiled from
     row_by_row: bool = False           # a column stands where a number decides by itself
 
     def __post_init__(self) -> None:
@@ -72,6 +73,7 @@ class Restating:
                 self.row_by_row = True
             else:
                 self.functions.append(function)
+                self.laid.append((path, row))
         return figure
 
 
@@ -81,7 +83,7 @@ def _same(first: float, second: float) -> bool:
 
 def compiled(path: Path, template: Template, row: Row) -> Callable[..., float] | None:
     """The path as a checked function of the columns. None where a column feeds a leaf in a way of its own."""
-    fed = _fed_leaves(path, template, row)
+    fed = fed_leaves(path, template, row)
     if fed is None:
         return None
     names = {name: f"v{index}" for index, name in enumerate([*path.leaves, *(step.result for step in path.steps)])}
@@ -110,7 +112,7 @@ def _affine(argument: str, factor: float, offset: float) -> str:
     return scaled if offset == 0.0 else f"{scaled} + {offset!r}"
 
 
-def _fed_leaves(path: Path, template: Template, row: Row) -> dict[str, tuple[int, float, float]] | None:
+def fed_leaves(path: Path, template: Template, row: Row) -> dict[str, tuple[int, float, float]] | None:
     """Leaf -> the column that feeds it, with factor and offset to SI. None when a leaf follows a column in another way."""
     fed: dict[str, tuple[int, float, float]] = {}
     for index, quantity in enumerate(row.quantities):

@@ -35,6 +35,8 @@ def run(options: argparse.Namespace) -> int:
         if options.columns:
             from gasbasis.series.columns import restate_columns
             found = restate_columns(options.file, given, options.out)
+            print(json.dumps(found, ensure_ascii=False, indent=1))
+            return RESTATED
         else:
             found = restate_file(options.file, given, options.out, options.means, _nothing if options.quiet or not sys.stderr.isatty() else _Progress())
     except CoreError as error:

@@ -13,9 +13,11 @@ export function extremes(x, y, from, until, pieces, gap = Infinity) {
   const xs = [], ys = [];
   let last = x[from];
   const step = Math.max(1, Math.ceil((until - from) / pieces));
-  for (let start = from; start < until; start += step) {
+  for (let start = from, end; start < until; start = end) {
+    end = Math.min(until, start + step);
     let low = -1, high = -1;
-    for (let place = start, end = Math.min(until, start + step); place < end; place += 1) {
+    for (let place = start; place < end; place += 1) {
+      if (place > start && x[place] - x[place - 1] > gap) { end = place; break; }
       const value = y[place];
       if (value !== value) continue;
       if (low < 0 || value < y[low]) low = place;
@@ -23,7 +25,7 @@ export function extremes(x, y, from, until, pieces, gap = Infinity) {
     }
     if (low < 0) { xs.push(x[start]); ys.push(null); continue; }
     if (x[start] - last > gap) { xs.push((x[start] + last) / 2); ys.push(null); }
-    last = x[Math.min(until, start + step) - 1];
+    last = x[end - 1];
     for (const place of low === high ? [low] : low < high ? [low, high] : [high, low]) { xs.push(x[place]); ys.push(y[place]); }
   }
   return [xs, ys];

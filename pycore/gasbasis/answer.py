@@ -15,6 +15,7 @@ from gasbasis.records.restated import restated
 from gasbasis.records import bounded_json
 from gasbasis.records import simulated as simulated_record
 from gasbasis.records.sheet import read_sheet, write_sheet
+from gasbasis.records.varied import varied
 
 LONGEST_REQUEST = 200_000              # characters; a sheet is far below, a pasted file far above
 SIDES = ("hold", "gas", "owe", "limit", "sample", "prepared", "emission")
@@ -101,6 +102,50 @@ def _monte_carlo(request: Mapping) -> dict:
     return simulated_record.simulated(read_sheet(request.get("sheet")), request.get("seed", 1), request.get("trials"), request.get("usual") is True)
 
 
+def _vary(request: Mapping) -> dict:
+    return varied(read_sheet(request.get("sheet")), request.get("field"), request.get("low"), request.get("high"), request.get("usual") is True)
+
+
+def _record(request: Mapping) -> dict:
+    from gasbasis.records.plain_record import plain_record        # records, files and comparing are read when first asked for: the
+    from gasbasis.records.record import About, make_record         # first figure does not wait for them
+    about = _texts_of(request.get("about"), About.__dataclass_fields__)
+    record = make_record(read_sheet(request.get("sheet")), About(**{"made_at": "", **about}), request.get("usual") is True)
+    return {"record": record, "plain_text": plain_record(record)}
+
+
+def _texts_of(given: object, names) -> dict:
+    if not isinstance(given, Mapping) or not set(given) <= set(names) or not all(isinstance(text, str) for text in given.values()):
+        raise NotUnderstood(f"'about' holds texts: {', '.join(names)}.", hint="Leave out what there is not.", field="record")
+    return dict(given)
+
+
+def _receive(request: Mapping) -> dict:
+    from gasbasis.records.received import received
+    text = request.get("text")
+    if not isinstance(text, str):
+        raise NotUnderstood("There is nothing to open.", hint="Give 'text'.", field="receive")
+    return received(text)
+
+
+def _open_record(request: Mapping) -> dict:
+    from gasbasis.records.record import open_record
+    record = request.get("record")
+    if not isinstance(record, dict):
+        raise NotUnderstood("There is no record to open.", hint="Give 'record' as it was saved.", field="receive")
+    return open_record(record)
+
+
+def _check_sheets(request: Mapping) -> dict:
+    from gasbasis.records.received import checked
+    return checked(request.get("sheets"))
+
+
+def _compare(request: Mapping) -> dict:
+    from gasbasis.records.compare import compared
+    return compared(read_sheet(request.get("mine")), read_sheet(request.get("theirs")))
+
+
 TASKS: Mapping[str, Callable[[Mapping], dict]] = {
     "restate": _restate,
     "edit": _edit,
@@ -108,6 +153,12 @@ TASKS: Mapping[str, Callable[[Mapping], dict]] = {
     "link": _link,
     "open": _open,
     "monte_carlo": _monte_carlo,
+    "vary": _vary,
+    "record": _record,
+    "open_record": _open_record,
+    "receive": _receive,
+    "check_sheets": _check_sheets,
+    "compare": _compare,
     "catalogue": lambda request: catalogue(),
     "version": lambda request: {"version": __version__},
 }

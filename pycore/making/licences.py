@@ -6,6 +6,7 @@ import zipfile
 from email.parser import Parser
 from pathlib import Path
 
+from making.libraries import licences_of_libraries
 from making.places import ROOT, Places
 from making.runtime import Runtime
 from making.steps import BuildFailed
@@ -21,7 +22,7 @@ def licences_text(runtime: Runtime, places: Places) -> str:
     for wheel in runtime.published:
         if not wheel.name.startswith("gasbasis-"):
             sections.append(_of_wheel(wheel))
-    sections += _of_engine(places)
+    sections += _of_engine(places) + licences_of_libraries(places)
     return "\n".join(f"{RULE}\n{title}\nLicence: {licence}\n{RULE}\n\n{text.strip()}\n" for title, licence, text in sections)
 
 

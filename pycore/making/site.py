@@ -7,8 +7,10 @@ import re
 import shutil
 from pathlib import Path
 
+from making.libraries import write_libraries
 from making.licences import licences_text
 from making.media import media_type
+from making.one_page import NAME as ONE_FILE, write_one_file
 from making.places import DEMO, WEB, Places
 from making.policy import POLICY
 from making.runtime import Runtime
@@ -26,11 +28,13 @@ def build_site(runtime: Runtime, places: Places) -> Path:
     fresh = places.work / "site"
     shutil.rmtree(fresh, ignore_errors=True)
     shutil.copytree(WEB, fresh, ignore=shutil.ignore_patterns(*NOT_COPIED, ".*", "*.md"))
+    write_libraries(fresh / "libraries", places)
     _write_page(fresh)
     _write_examples(fresh / "demo")
     _write_runtime(fresh / "runtime", runtime, places)
     (fresh / "licences.txt").write_text(licences_text(runtime, places), encoding="utf-8")
     write_service_worker(fresh)
+    write_one_file(fresh, places)
     shutil.rmtree(places.dist, ignore_errors=True)
     shutil.move(fresh, places.dist)
     return places.dist
@@ -86,7 +90,7 @@ def assets(site: Path) -> list[dict]:
     """Each file of the page with its size, SHA-256 and media type, sorted by path."""
     rows = []
     for path in sorted(site.rglob("*")):
-        if path.is_file() and path.name != "sw.js":
+        if path.is_file() and path.name not in ("sw.js", ONE_FILE):
             content = path.read_bytes()
             rows.append({"path": path.relative_to(site).as_posix(), "size": len(content),
                          "sha256": hashlib.sha256(content).hexdigest(), "type": media_type(path.name)})

@@ -4,10 +4,11 @@ from __future__ import annotations
 import gzip
 from pathlib import Path
 
+from making.one_page import NAME as ONE_FILE
 from making.steps import BuildFailed, say
 
 BUDGET_MB = 6.4                         # gzip, everything fetched up to the first figure
-NOT_FOR_THE_FIGURE = ("licences.txt", "sw.js")
+NOT_FOR_THE_FIGURE = ("licences.txt", "sw.js", ONE_FILE)
 LISTED = 6
 
 

@@ -7,6 +7,8 @@
  *            resolve: (answer: object) => void, reject: (problem: CoreError) => void}} Question
  */
 
+import { makeWorker } from "./worker-source.js";
+
 const SILENCE_AT_START_MS = 30_000;    // no word from a starting worker for so long: it is given up
 const LONGEST_ANSWER_MS = 60_000;      // no single answer may take longer
 const TRIES = 2;                       // a question that kills Python twice is not asked a third time
@@ -169,7 +171,7 @@ export function createCore({ onState = () => {} } = {}) {
       return;
     }
     change({ phase: "loading", stage: "waiting", done: 0, of: 0, message: "" });
-    worker = newWorker();
+    worker = makeWorker();
     worker.onmessage = onMessage;
     worker.onerror = (event) => (state.phase === "ready" ? replace : giveUp)(event.message || "The worker could not be loaded.");
     worker.onmessageerror = () => replace("A message from Python could not be read.");
@@ -185,16 +187,4 @@ export function createCore({ onState = () => {} } = {}) {
 
   start();
   return { ask, restart, get state() { return state; } };
-}
-
-/**
- * A worker made from a blob that only imports the real module: a blob worker inherits the page's
- * content security policy, so that a policy given as <meta> governs it too.
- */
-function newWorker() {
-  const module = new URL("core-worker.js", import.meta.url).href;
-  const address = URL.createObjectURL(new Blob([`import ${JSON.stringify(module)};`], { type: "text/javascript" }));
-  const worker = new Worker(address, { type: "module", name: "gasbasis core" });
-  setTimeout(() => URL.revokeObjectURL(address), SILENCE_AT_START_MS);
-  return worker;
 }

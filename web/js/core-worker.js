@@ -7,6 +7,7 @@
  *      {id, answer: string}   the JSON text that Python answered
  */
 import { loadPyodide } from "../runtime/pyodide.mjs";
+import { ENGINE } from "./engine.js";
 import { PARTS } from "../runtime/parts.js";
 
 const RUNTIME = new URL("../runtime/", import.meta.url).href;
@@ -53,6 +54,7 @@ async function start(counted) {
 
 function startPython() {
   return loadPyodide({
+    ...ENGINE,
     indexURL: RUNTIME,
     stdLibURL: RUNTIME + PARTS.stdlib,
     lockFileContents: { info: PARTS.lockInfo, packages: {} },

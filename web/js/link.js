@@ -18,21 +18,5 @@ export function figureAsSent(code) {
   }
 }
 
-/** Hand a link on: the share sheet where there is one, else the clipboard. @param {string} code */
-export async function handOn(code) {
-  const link = `${location.origin}${location.pathname}#${code}`;
-  if (navigator.share && matchMedia("(pointer: coarse)").matches) {
-    try {
-      await navigator.share({ url: link });
-      return "";
-    } catch (error) {
-      if (error.name === "AbortError") return "";
-    }
-  }
-  try {
-    await navigator.clipboard.writeText(link);
-    return `The link is copied: ${link}`;
-  } catch {
-    return `Copy this link: ${link}`;
-  }
-}
+/** The whole link; a page opened from a file has no address others could open, so there the code goes alone. @param {string} code */
+export const linkOf = (code) => (location.protocol === "file:" ? code : `${location.origin}${location.pathname}#${code}`);

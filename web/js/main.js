@@ -1,18 +1,29 @@
 /** Wiring: state, core, regions. Intentions come in at `dispatch`; what they mean is decided here and nowhere else. */
 import { createCore } from "./core-client.js";
-import { keepSheet, keptSheet } from "./keeping.js";
-import { codeIn, figureAsSent, handOn } from "./link.js";
+import { keptActs } from "./acts/kept.js";
+import { passingActs } from "./acts/passing.js";
+import { recordActs } from "./acts/record.js";
+import { holdOnTo, rowInHand, sheetInHand } from "./keeping.js";
+import { codeIn } from "./link.js";
 import { startOffline } from "./offline.js";
 import { keepingFocus, part } from "./page.js";
+import { mountAside } from "./regions/aside.js";
 import { mountBudget } from "./regions/budget.js";
+import { mountCompare } from "./regions/compare.js";
 import { mountDoubts } from "./regions/doubts.js";
 import { mountFigure } from "./regions/figure.js";
+import { mountKept } from "./regions/kept.js";
 import { mountKeys } from "./regions/keys.js";
+import { mountPanels } from "./regions/panels.js";
+import { mountPassOn } from "./regions/pass-on.js";
+import { mountReceive } from "./regions/receive.js";
+import { mountRecord } from "./regions/record.js";
 import { mountRuleBooks } from "./regions/rule-books.js";
 import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
 import { mountExamples, mountTools } from "./regions/tools.js";
+import { mountVary } from "./regions/vary.js";
 import { mountVerdict } from "./regions/verdict.js";
 import { mountWorking } from "./regions/working.js";
 import { createState, emptySheet } from "./state.js";
@@ -21,7 +32,8 @@ import { measureViewport } from "./viewport.js";
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
-const first = { sheet: { ...emptySheet(), ...typedAlready(keptSheet()) }, answer: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, notice: "",
+const first = { sheet: { ...emptySheet(), ...typedAlready(sheetInHand()) }, row: rowInHand(), pristine: null, answer: null, answeredFor: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, varied: null,
+  notice: "", aside: null, panel: "", rows: null, rowsProblem: "", passed: null, received: null, record: null, amends: null, compared: null,
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
 const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
@@ -37,7 +49,7 @@ function onReady() {
   if (ready) return;
   ready = true;
   core.ask({ task: "catalogue" }).then((catalogue) => state.change({ catalogue }), (error) => state.change({ notice: error.message }));
-  offline = startOffline({ onState: (now) => state.change({ offline: now }), beforeReload: () => keepSheet(state.get().sheet) });
+  offline = startOffline({ onState: (now) => state.change({ offline: now }), beforeReload: () => holdOnTo(state.get().sheet, state.get().row) });
 }
 
 function restate() {
@@ -47,7 +59,7 @@ function restate() {
   clearTimeout(resting);
   core.ask({ ...request, quick: true }, { channel: "restate" }).then(
     (answer) => {
-      state.change({ answer, busy: false, sent: agreeing(answer) });
+      state.change({ answer, answeredFor: sheet, busy: false, sent: agreeing(answer) });
       if (focusNext && state.get().sheet === sheet) focusPiece(focusNext.side, focusNext.field);
       focusNext = null;
       if (answer.spread && !answer.spread.complete) resting = setTimeout(() => restateWhole(request, sheet), RESTING_MS);
@@ -74,17 +86,34 @@ function agreeing(answer) {
   return { ...sent, agrees: headline(answer) === sent.figure };
 }
 
+/** The figure in a few words. @param {any} answer */
 function headline(answer) {
   if (answer.figure) return `${answer.figure.number_text} ${answer.figure.unit_text}`;
   const spread = answer.spread;
   return spread?.low ? `${spread.low.text} to ${spread.high.text} ${spread.unit_text}` : "";
 }
 
+/** The figure of the sheet that is on the page now; empty while it is not known. */
+function figureNow() {
+  const { answer, answeredFor, sheet } = state.get();
+  return answer && answeredFor === sheet ? headline(answer) : "";
+}
+
+/** The figure with its species: what a sheet without a name is called. */
+function figureNamed() {
+  const { answer, answeredFor, sheet } = state.get(), species = answeredFor === sheet ? answer?.figure?.species_text ?? "" : "";
+  return `${species} ${figureNow()}`.trim();
+}
+
+/** @param {object} sheet @param {object} [more] what changes with it */
+function show(sheet, more = {}) {
+  state.change({ sheet, ...more });
+  holdOnTo(sheet, state.get().row);
+  restate();
+}
+
 function changeSheet(patch) {
-  const sheet = { ...state.get().sheet, ...patch };
-  state.change({ sheet });
-  keepSheet(sheet);
-  restate();                           // the client keeps only the newest question, so a burst of keys is no burst of work
+  show({ ...state.get().sheet, ...patch });            // the client keeps only the newest question, so a burst of keys is no burst of work
 }
 
 async function edit({ side, field, to }) {
@@ -118,13 +147,6 @@ function takeUsual() {
   changeSheet({ settled: { ...state.get().sheet.settled, ...Object.fromEntries(open.map((doubt) => [doubt.id, doubt.usual])) } });
 }
 
-/** Another sheet takes the place of this one, which is offered back. */
-function replaceSheet(sheet) {
-  const here = state.get().sheet;
-  state.change({ editing: null, sent: null, before: Object.values(here).some((part) => typeof part === "string" && part.trim()) ? here : state.get().before });
-  changeSheet({ ...emptySheet(), ...sheet });
-}
-
 async function findSpecies(text) {
   try {
     const { found } = await core.ask({ task: "search", what: "species", text }, { channel: "search" });
@@ -146,34 +168,37 @@ async function draw({ trials }) {
   }
 }
 
-async function send() {
-  const { sheet, answer } = state.get();
+async function vary({ field, low, high }) {
+  const { sheet } = state.get(), key = JSON.stringify([field, low, high, sheet]);
   try {
-    const { code } = await core.ask({ task: "link", sheet: { schema: 1, ...sheet }, figure: answer ? headline(answer) : "" });
-    state.change({ notice: await handOn(code) });
+    state.change({ varied: { sheet, key, record: await core.ask({ task: "vary", sheet: { schema: 1, ...sheet }, field, low, high }, { channel: "vary" }) } });
   } catch (error) {
-    state.change({ notice: `${error.message} ${error.problem?.hint ?? ""}` });
+    state.change({ varied: { sheet, key, error: `${error.message} ${error.problem?.hint ?? ""}` } });
   }
 }
 
-/** A link replaces nothing in silence: what was on the page is offered back. */
-async function open(code) {
-  state.change({ sent: { figure: figureAsSent(code) } });
-  try {
-    const { sheet: opened, as_sent } = await core.ask({ task: "open", code });
-    const sheet = { ...emptySheet(), ...opened };
-    const here = state.get().sheet;
-    state.change({ sent: { figure: as_sent, sheet }, sheet, before: here.hold || here.owe ? here : null });
-    restate();
-  } catch (error) {
-    state.change({ sent: null, notice: `${error.message} ${error.problem?.hint ?? ""}` });
-    restate();
-  }
+const kept = keptActs({ state, core, headline: figureNamed, show });
+const passing = passingActs({ state, core, headline: figureNow, restate, replace: kept.replace, dispatch: (intention) => dispatch(intention) });
+
+/** A link in the address is opened once, and taken out of it. */
+function openLink() {
+  const code = codeIn(location.href);
+  if (!code) return false;
   history.replaceState(null, "", location.pathname + location.search);
+  passing.open(code);
+  return true;
+}
+
+/** A word that offers nothing to undo goes with the next thing done. */
+const lasting = (aside) => (aside?.actions.length ? aside : null);
+
+function panel({ name }) {
+  state.change({ panel: name, aside: lasting(state.get().aside), received: null, amends: null, ...(name === "record" ? {} : { record: null }), ...(name === "compare" ? {} : { compared: null }), ...(name === "pass-on" ? { passed: null } : {}) });
+  if (name === "kept") kept.acts.kept();
 }
 
 const INTENTIONS = {
-  text: ({ side, text }) => { state.change({ sent: null }); changeSheet({ [side]: text }); },
+  text: ({ side, text }) => { state.change({ sent: null, aside: lasting(state.get().aside) }); changeSheet({ [side]: text }); },
   open: ({ side, field }) => {
     const now = state.get().editing;
     state.change({ editing: now?.side === side && now.field === field ? null : { side, field, problem: null, found: [] } });
@@ -184,13 +209,12 @@ const INTENTIONS = {
   "rule-book": ({ book }) => changeSheet({ owe: book.owe, rule_book: book.id }),
   "leave-rule-book": () => changeSheet({ rule_book: "" }),
   "find-species": ({ text }) => findSpecies(text),
-  clear: () => { replaceSheet({}); $("hold-text").focus(); },
-  example: ({ sheet }) => replaceSheet(sheet),
-  back: () => { const { before } = state.get(); replaceSheet(before); },
-  send,
+  clear: () => { kept.replace(emptySheet(), { panel: "" }); $("hold-text").focus(); },
+  example: ({ sheet }) => { const whole = { ...emptySheet(), ...sheet }; kept.replace(whole, { pristine: whole }); },
+  panel, ...kept.acts, ...passing.acts, ...recordActs({ state, core }),
   notice: ({ text }) => state.change({ notice: text }),
   restart: () => { core.restart(); restate(); },
-  draw,
+  draw, vary,
   "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
   later: () => state.change({ offline: { ...state.get().offline, update: false } }),
@@ -198,14 +222,16 @@ const INTENTIONS = {
 const dispatch = (intention) => INTENTIONS[intention.type](intention);
 
 const regions = [
+  mountPanels(["pass-on", "kept", "receive", "record", "compare"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
   ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
   mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
-  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch),
+  mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch), mountVary($("vary"), dispatch),
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
+  mountPassOn($("pass-on"), dispatch), mountKept($("kept"), dispatch, { proposed: figureNamed, file: kept.fileOf }), mountReceive($("receive"), dispatch),
+  mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountAside($("aside"), dispatch),
 ];
 mountKeys($("keys"));
 measureViewport($("figure"));
 state.subscribe((now) => keepingFocus(() => { for (const region of regions) region(now); }));
-const code = codeIn(location.href);
-if (code) open(code);
-else restate();
+if (!openLink()) restate();
+addEventListener("hashchange", openLink);

@@ -80,6 +80,15 @@ def _chosen(doubt: Doubt, choices: Mapping[str, str], take_usual: bool) -> Readi
     return None
 
 
+def settle_calm(settled: Settled) -> Case:
+    """The case with every remaining doubt at its usual, else first, reading: none of them shows in the figure."""
+    case = settled.case
+    for doubt in (*settled.open, *settled.about_spread):
+        reading = next((reading for reading in doubt.readings if reading.usual_because), doubt.readings[0])
+        case = case.taking(doubt.id, reading)
+    return case
+
+
 def spread(case: Case, bound: int = BOUND) -> Spread:
     """The figure under every combination of readings of the open doubts, `bound` at most."""
     if _combinations(raised(case)) <= bound:

@@ -47,7 +47,7 @@ def _step_record(path: Path, step: Step, known: dict, shown: dict[str, Shown], n
     source = facts.source(relation.source)
     formula, substitution = formula_tree(relation), substituted_tree(relation, substitutes)
     result = ["symbol", relation.result.letter, relation.result.mark]
-    return {"kind": "solved" if step.solved else "relation", "relation": relation.id, "title": relation.title,
+    return {"kind": "solved" if step.solved else "relation", "relation": relation.id, "source": relation.source, "title": relation.title,
             "formula": formula, "substitution": substitution,
             "formula_text": f"{plain_text(result)} = {plain_text(formula)}",
             "substitution_text": f"{plain_text(result)} = {plain_text(substitution)}", "inputs": inputs,

@@ -1,6 +1,7 @@
 """Reads the compiled tables once, each only when it is first asked for, and hands out frozen records."""
 from __future__ import annotations
 
+import hashlib
 import json
 from functools import lru_cache
 from importlib import resources
@@ -13,14 +14,23 @@ from gasbasis.facts.records import Datum, ReferenceConditions, RuleBook, Source,
 COMPILED = "facts.json"
 
 
-@lru_cache(maxsize=None)
-def _compiled() -> dict:
+def _text() -> str:
     try:
-        text = resources.files("gasbasis.facts").joinpath(COMPILED).read_text("utf-8")
+        return resources.files("gasbasis.facts").joinpath(COMPILED).read_text("utf-8")
     except FileNotFoundError as error:
         raise FactsError(f"The compiled tables ({COMPILED}) are missing.",
                          hint="Make them: python pycore/making/compile_facts.py") from error
-    return json.loads(text)
+
+
+@lru_cache(maxsize=None)
+def _compiled() -> dict:
+    return json.loads(_text())
+
+
+@lru_cache(maxsize=None)
+def digest() -> str:
+    """What tells one state of the tables from another: the SHA-256 of all of them."""
+    return hashlib.sha256(_text().encode()).hexdigest()
 
 
 def _rows(collection: str) -> list[dict[str, Any]]:

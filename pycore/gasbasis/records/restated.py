@@ -8,7 +8,7 @@ from typing import Mapping
 from gasbasis.calculation.basis_words import unit_words
 from gasbasis.calculation.case import Case, make_case
 from gasbasis.calculation.leaves import SIDE_TITLES
-from gasbasis.calculation.outcomes import BOUND, Settled, Spread, effect, reading_problem, reading_range, settle, spread
+from gasbasis.calculation.outcomes import BOUND, Settled, Spread, effect, reading_problem, reading_range, settle, settle_calm, spread
 from gasbasis.calculation.path import figure_value
 from gasbasis.calculation.repeated import repeated_inputs
 from gasbasis.calculation.restate import lay
@@ -26,6 +26,7 @@ from gasbasis.records.about_gas import about_gas
 from gasbasis.records.about_ways import about_sample, below_detection
 from gasbasis.records.sheet import Sheet
 from gasbasis.records.sides import side_record
+from gasbasis.records.varied import variables
 from gasbasis.records.ways import held, is_held_by_way, read_ways
 from gasbasis.records.worth import budget_record, verdict_record, worth_problem
 
@@ -80,7 +81,7 @@ def _restated(sheet: Sheet, hold: Statement, hold_problems: tuple[CoreError, ...
     except CoreError as error:
         problems.append(error)
     problems.extend(_incomplete(sheet, hold, owe))
-    result: dict = {"verdict": None, "uncertainty": None, "figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "warnings": []}
+    result: dict = {"verdict": None, "uncertainty": None, "figure": None, "spread": None, "sentence": "", "doubts": [], "working": [], "steps": [], "varies": [], "warnings": []}
     settled = Settled(Case(hold, gas, owe), (), ())
     if not problems:
         try:
@@ -152,15 +153,6 @@ def _outcome(settled: Settled, sheet: Sheet, below: bool, bound: int) -> dict:
                      "problems": _shared_problem(found)}
 
 
-def settle_calm(settled: Settled) -> Case:
-    """The case with every remaining doubt at its usual, else first, reading: none of them shows in the figure."""
-    case = settled.case
-    for doubt in (*settled.open, *settled.about_spread):
-        reading = next((reading for reading in doubt.readings if reading.usual_because), doubt.readings[0])
-        case = case.taking(doubt.id, reading)
-    return case
-
-
 def _figure(case: Case, below: bool) -> dict:
     try:
         path = lay(case)
@@ -176,7 +168,7 @@ def _figure(case: Case, below: bool) -> dict:
     return {"uncertainty": worth, "figure": {"value": value, "number_text": number, "unit": case.owe.unit.id, "unit_text": path.shown.unit_text,
                        "species_text": path.species_text, "basis": basis,
                        "text": f"{path.species_text} {number} {path.shown.unit_text} {basis}".strip()},
-            "about_sample": about_sample(case, path), "working": working(path), "steps": bars(path), "warnings": [*path.warnings, *above_saturation(case), *below_detection(case), *_other_order(case, path.shown.unit_text)]}
+            "about_sample": about_sample(case, path), "working": working(path), "steps": bars(path), "varies": variables(case, path), "warnings": [*path.warnings, *above_saturation(case), *below_detection(case), *_other_order(case, path.shown.unit_text)]}
 
 
 def _other_order(case: Case, unit_text: str) -> list[str]:

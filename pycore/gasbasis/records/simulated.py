@@ -6,7 +6,7 @@ from statistics import NormalDist
 
 from gasbasis.calculation.case import make_case
 from gasbasis.calculation.monte_carlo import FEWEST, MOST, agrees, simulate
-from gasbasis.calculation.outcomes import settle
+from gasbasis.calculation.outcomes import Settled, settle, settle_calm
 from gasbasis.calculation.restate import lay
 from gasbasis.calculation.rules import find_rule
 from gasbasis.calculation.uncertainty import budget
@@ -14,7 +14,6 @@ from gasbasis.errors import Missing, NotUnderstood
 from gasbasis.language.gas import read_gas
 from gasbasis.language.numbers import significant, with_uncertainty
 from gasbasis.language.statement import read_statement
-from gasbasis.records.restated import settle_calm
 from gasbasis.records.sheet import Sheet
 from gasbasis.records.ways import held, read_ways
 
@@ -31,7 +30,7 @@ def simulated(sheet: Sheet, seed: object, trials: object, take_usual: bool) -> d
     """
     if not isinstance(seed, int) or not (trials is None or isinstance(trials, int)):
         raise NotUnderstood("Seed and trials are whole numbers.", hint="Leave them out for the usual ones.", field="monte_carlo")
-    path = lay(_settled_case(sheet, take_usual))
+    path = lay(settle_calm(settled_sheet(sheet, take_usual)))
     known = budget(path)
     if known is None:
         raise Missing("No input carries an uncertainty, so there is nothing to draw.",
@@ -55,7 +54,8 @@ def _gaussian(edges: tuple[float, float], mean: float, u: float) -> list[float]:
     return [math.exp(-0.5 * ((low + (high - low) * index / _POINTS - mean) / u) ** 2) for index in range(_POINTS + 1)]
 
 
-def _settled_case(sheet: Sheet, take_usual: bool):
+def settled_sheet(sheet: Sheet, take_usual: bool) -> Settled:
+    """The case of a readable sheet with its readings taken. Raises CoreError."""
     (hold, hold_problems), (gas, gas_problems), (owe, owe_problems) = (
         read_statement(sheet.hold, "hold"), read_gas(sheet.gas), read_statement(sheet.owe, "owe"))
     ways = read_ways(sheet)
@@ -64,5 +64,4 @@ def _settled_case(sheet: Sheet, take_usual: bool):
     hold = held(hold, ways)
     if hold.value is None or owe.unit is None:
         raise Missing("A figure is needed before it can be drawn.", hint="Type what you hold and what you owe.", field="hold")
-    settled = settle(make_case(hold, gas, owe, find_rule(sheet.rule_book), **ways.records), sheet.settled, take_usual)
-    return settle_calm(settled)
+    return settle(make_case(hold, gas, owe, find_rule(sheet.rule_book), **ways.records), sheet.settled, take_usual)

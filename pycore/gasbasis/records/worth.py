@@ -43,8 +43,13 @@ _INPUTS = {"hold.value": "held value", "gas.water_content": "water content", "ga
            "hold.pressure": "held pressure", "gas.temperature": "gas temperature", "gas.pressure": "gas pressure", "gas.model": "equation of state"}
 
 
+def input_title(field: str) -> str:
+    """What an input is called, from its field."""
+    return _INPUTS.get(field, field.partition(".")[2].replace("_", " "))
+
+
 def _input(leaf) -> str:
-    return _INPUTS.get(leaf.field, leaf.field.partition(".")[2].replace("_", " ") or leaf.name)
+    return input_title(leaf.field) or leaf.name
 
 
 def verdict_record(settled: Settled, limit: Statement, sheet: Sheet, take_usual: bool, bound: int) -> dict:

@@ -36,7 +36,7 @@ function offlineWords(offline) {
 function detail(offline) {
   if (!offline) return "";
   const when = offline.checkedAt ? `, checked ${new Date(offline.checkedAt).toLocaleString()}` : "";
-  if (offline.phase === "ready") return `Ready offline: ${offline.done} of ${offline.of} files kept and verified${when}.`;
+  if (offline.phase === "ready" && !offline.message) return `Ready offline: ${offline.done} of ${offline.of} files kept and verified${when}.`;
   return offline.message;
 }
 

@@ -49,14 +49,14 @@ function showDoubt(node, doubt, dispatch) {
 
 /** A named choice of the comparison: rounding, a result below detection, a negative value. */
 function choiceBox(choice, dispatch) {
-  const box = element("label", "", "choice"), select = element("select");
+  const box = element("label", "", "note"), select = element("select");
   for (const option of choice.options) {
     const entry = element("option", option.title);
     entry.value = option.id;
     select.append(entry);
   }
   select.addEventListener("change", () => dispatch({ type: "settle", doubt: choice.id, reading: select.value }));
-  box.append(element("span", `For the comparison, ${choice.title}: `), select, element("small", "", "quiet"));
+  box.append(element("span", `For the comparison, ${choice.title}:`), select, element("small", "", "quiet"));
   return box;
 }
 

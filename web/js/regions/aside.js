@@ -1,0 +1,15 @@
+/** A word about what was just done, with what can undo it; it stays until closed or until the next. */
+import { button, part, say } from "../page.js";
+
+/** @param {HTMLElement} root @param {(intention: any) => void} dispatch */
+export function mountAside(root, dispatch) {
+  let shown = null;
+  return ({ aside }) => {
+    if (aside === shown) return;
+    shown = aside;
+    root.hidden = !aside;
+    say(part(root, "message"), aside?.text ?? "");
+    part(root, "actions").replaceChildren(...[...(aside?.actions ?? []), ["Close", { type: "aside" }]].map(([label, intention]) =>
+      button(label, () => { dispatch({ type: "aside" }); dispatch(intention); }, "bare")));
+  };
+}

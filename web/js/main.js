@@ -26,14 +26,15 @@ import { mountSteps } from "./regions/steps.js";
 import { mountExamples, mountTools } from "./regions/tools.js";
 import { mountVary } from "./regions/vary.js";
 import { mountVerdict } from "./regions/verdict.js";
+import { mountWays } from "./regions/ways.js";
 import { mountWorking } from "./regions/working.js";
-import { createState, emptySheet } from "./state.js";
+import { createState, emptySheet, SIDES, WAYS, wanted } from "./state.js";
 import { measureViewport } from "./viewport.js";
 
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
-const first = { sheet: { ...emptySheet(), ...typedAlready(sheetInHand()) }, row: rowInHand(), pristine: null, answer: null, answeredFor: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, varied: null,
+const first = { ways: [], sheet: { ...emptySheet(), ...typedAlready(sheetInHand()) }, row: rowInHand(), pristine: null, answer: null, answeredFor: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, varied: null,
   notice: "", aside: null, panel: "", rows: null, rowsProblem: "", passed: null, received: null, record: null, amends: null, compared: null,
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
@@ -42,7 +43,7 @@ let offline = null, resting = 0, ready = false, focusNext = null;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
-  const typed = Object.fromEntries(["hold", "gas", "owe", "limit"].map((side) => [side, $(`${side}-text`).value]));
+  const typed = Object.fromEntries(SIDES.map((side) => [side, $(`${side}-text`).value]));
   return Object.values(typed).some(Boolean) ? { ...kept, ...typed } : kept ?? {};
 }
 
@@ -56,7 +57,7 @@ function onReady() {
 function restate() {
   state.change({ busy: true });
   const { sheet } = state.get();
-  const request = { task: "restate", sheet: { schema: 1, ...sheet } };
+  const request = { task: "restate", sheet: { schema: 1, ...sheet }, sides: WAYS.filter((side) => wanted(state.get(), side)) };
   clearTimeout(resting);
   core.ask({ ...request, quick: true }, { channel: "restate" }).then(
     (answer) => {
@@ -206,11 +207,13 @@ const INTENTIONS = {
   },
   close: () => state.change({ editing: null }),
   edit, settle, usual: takeUsual,
+  way: ({ side }) => { state.change({ ways: [...state.get().ways, side] }); restate(); $(`${side}-text`).focus(); },
+  "leave-way": ({ side }) => { state.change({ editing: null, ways: state.get().ways.filter((other) => other !== side) }); changeSheet({ [side]: "" }); },
   note: ({ doubt, text }) => changeSheet({ notes: { ...state.get().sheet.notes, [doubt]: text } }),
   "rule-book": ({ book }) => changeSheet({ owe: book.owe, rule_book: book.id }),
   "leave-rule-book": () => changeSheet({ rule_book: "" }),
   "find-species": ({ text }) => findSpecies(text),
-  clear: () => { kept.replace(emptySheet(), { panel: "" }); $("hold-text").focus(); },
+  clear: () => { state.change({ ways: [] }); kept.replace(emptySheet(), { panel: "" }); $("hold-text").focus(); },
   example: ({ sheet }) => { const whole = { ...emptySheet(), ...sheet }; kept.replace(whole, { pristine: whole }); },
   panel, ...kept.acts, ...passing.acts, ...recordActs({ state, core }),
   notice: ({ text }) => state.change({ notice: text }),
@@ -224,7 +227,7 @@ const dispatch = (intention) => INTENTIONS[intention.type](intention);
 
 const regions = [
   mountPanels(["pass-on", "kept", "receive", "record", "compare"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
-  ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
+  ...SIDES.map((side) => mountSide($(side), side, dispatch)), mountWays($("hold"), $, dispatch),
   mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
   mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch), mountVary($("vary"), dispatch),
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),

@@ -9,6 +9,7 @@ import math
 from dataclasses import dataclass, replace
 from typing import Callable
 
+from gasbasis.calculation.case import WAYS
 from gasbasis.calculation.leaves import SIDE_TITLES
 from gasbasis.calculation.outcomes import QUICK_BOUND
 from gasbasis.calculation.rules import find_rule
@@ -58,6 +59,7 @@ def differences(mine: Sheet, theirs: Sheet) -> tuple[Difference, ...]:
     found: list[Difference] = []
     for side in _SIDES:
         found.extend(_side_differences(side, mine, theirs))
+    found.extend(_whole_line(side, mine, theirs) for side in WAYS if getattr(mine, side).strip() != getattr(theirs, side).strip())
     if mine.rule_book != theirs.rule_book:
         found.append(Difference("rule_book", "rule-book", _book(mine), _book(theirs), lambda sheet: replace(sheet, rule_book=theirs.rule_book)))
     for doubt in sorted({*mine.settled, *theirs.settled}):
@@ -80,7 +82,12 @@ def _side_differences(side: str, mine: Sheet, theirs: Sheet) -> list[Difference]
         found = [_piece_difference(side, field, before[0], after[0]) for field in fields]
         if one.strip() and other.strip() and _leads_there(found, mine, side, after[0]):
             return found
-    return [Difference(side, SIDE_TITLES[side], one or _NOTHING, other or _NOTHING, lambda sheet: replace(sheet, **{side: other}))]
+    return [_whole_line(side, mine, theirs)]
+
+
+def _whole_line(side: str, mine: Sheet, theirs: Sheet) -> Difference:
+    one, other = getattr(mine, side), getattr(theirs, side)
+    return Difference(side, SIDE_TITLES[side], one or _NOTHING, other or _NOTHING, lambda sheet: replace(sheet, **{side: other}))
 
 
 def _piece_difference(side: str, field: str, before: Statement | Gas, after: Statement | Gas) -> Difference:

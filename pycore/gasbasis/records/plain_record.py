@@ -4,7 +4,8 @@ from __future__ import annotations
 import textwrap
 
 _WIDTH = 78
-_SIDE_TITLES = {"hold": "You hold", "gas": "It was in", "owe": "You owe", "limit": "Limit"}
+_SIDE_TITLES = {"hold": "You hold", "gas": "It was in", "owe": "You owe", "limit": "Limit", "sample": "The sample", "prepared": "The prepared gas",
+                "emission": "The emission"}
 _READ = {"memory": "from memory, not from the document", "secondary": "read in a copy", "abstract": "abstract only", "convention": "", "primary": ""}
 
 

@@ -12,6 +12,7 @@ from datetime import datetime
 
 from gasbasis import __version__, facts
 from gasbasis.errors import CoreError, Missing, NotUnderstood
+from gasbasis.calculation.case import WAYS
 from gasbasis.calculation.rules import find_rule
 from gasbasis.calculation.verdict import RULES
 from gasbasis.records.catalogue import CAUTIONS
@@ -51,7 +52,7 @@ def make_record(sheet: Sheet, about: About, take_usual: bool = False) -> dict:
         "made_at": about.made_at, "made_by": about.made_by.strip(), "notes": about.notes.strip(),
         "amends": {"checksum": about.amends, "why": about.why.strip()} if about.amends else None,
         "sheet": write_sheet(whole), "link_code": _link_code(whole, found),
-        **_results(found), "understood": {side: _pieces(found[side]) for side in _SIDES},
+        **_results(found), "understood": {side: _pieces(found[side]) for side in (*_SIDES, *WAYS) if side in found},
         "rule_book": _rule_book(whole), "settled": _doubts(found, "settled"), "left_open": _doubts(found, "open"),
         "no_visible_effect": _doubts(found, "calm"), "working": [_step(step) for step in found["working"]],
         "sources": _sources(found), "cautions": list(CAUTIONS)})

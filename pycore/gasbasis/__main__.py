@@ -106,7 +106,7 @@ def _add_sheet(restate: argparse.ArgumentParser) -> None:
     restate.add_argument("--rule", default="", help="the decision rule agreed, e.g. simple, guarded, three_way")
     restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
     restate.add_argument("--uncertain", action="append", default=[], metavar='"NAME ± ..."',
-                         help='the uncertainty of an input: "T 2 K", "O2 0.2 % (k=2)", "value 5 %%"; repeatable')
+                         help='the uncertainty of an input: "T 2 K", "O2 0.2 %% (k=2)", "value 5 %%"; repeatable')
     restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
     restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
     restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")

@@ -10,7 +10,7 @@ import pytest
 from gasbasis.errors import CoreError, Missing
 from gasbasis.series.layout import look
 from gasbasis.series.means import Means
-from gasbasis.series.rows import Rows, text_lines
+from gasbasis.series.rows import Lines, Rows
 from gasbasis.series.settings import read_settings
 from gasbasis.series.sums import ExactSum
 from gasbasis.series.times import Clock
@@ -25,7 +25,7 @@ def taken(lines, settings):
     given = read_settings({"usual": True, "time": {"stamp": "start", **settings.pop("time", {})}, "species": [settings.pop("species", SAME)], **settings})
     rows, found = Rows(look(content, given.file), given), []
     means = Means(rows, given, found.append)
-    for block in rows.blocks(text_lines([content], rows.layout.encoding)):
+    for block in rows.blocks(Lines([content], rows.layout.encoding)):
         means.take(block)
     means.finish()
     return rows, means, found

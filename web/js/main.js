@@ -20,6 +20,7 @@ import { mountPassOn } from "./regions/pass-on.js";
 import { mountReceive } from "./regions/receive.js";
 import { mountRecord } from "./regions/record.js";
 import { mountRuleBooks } from "./regions/rule-books.js";
+import { mountSeries } from "./regions/series-door.js";
 import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
@@ -226,13 +227,13 @@ const INTENTIONS = {
 const dispatch = (intention) => INTENTIONS[intention.type](intention);
 
 const regions = [
-  mountPanels(["pass-on", "kept", "receive", "record", "compare"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
+  mountPanels(["pass-on", "kept", "receive", "record", "compare", "series"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
   ...SIDES.map((side) => mountSide($(side), side, dispatch)), mountWays($("hold"), $, dispatch),
   mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
   mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch), mountVary($("vary"), dispatch),
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
   mountPassOn($("pass-on"), dispatch), mountKept($("kept"), dispatch, { proposed: figureNamed, file: kept.fileOf }), mountReceive($("receive"), dispatch),
-  mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountAside($("aside"), dispatch),
+  mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountSeries($("series")), mountAside($("aside"), dispatch),
   mountHelp(["hold", "gas", "owe", "limit", "doubts", "steps", "verdict", "working", "budget", "pass-on", "kept", "receive", "record", "compare"].map($)),
 ];
 mountKeys($("keys"));

@@ -39,8 +39,8 @@ const first = { ways: [], sheet: { ...emptySheet(), ...typedAlready(sheetInHand(
   notice: "", aside: null, panel: "", rows: null, rowsProblem: "", passed: null, received: null, record: null, amends: null, compared: null,
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
-const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
-let offline = null, resting = 0, ready = false, focusNext = null;
+const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); if (now.phase === "failed") mendCopy(); } });
+let mending = false, offline = null, resting = 0, ready = false, focusNext = null;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
@@ -52,7 +52,26 @@ function onReady() {
   if (ready) return;
   ready = true;
   core.ask({ task: "catalogue" }).then((catalogue) => state.change({ catalogue }), (error) => state.change({ notice: error.message }));
-  offline = startOffline({ onState: (now) => state.change({ offline: now }), beforeReload: () => holdOnTo(state.get().sheet, state.get().row) });
+  keepOffline();
+  offline.booted();
+}
+
+function keepOffline() {
+  offline ??= startOffline({ onState: onOffline, beforeReload: () => holdOnTo(state.get().sheet, state.get().row) });
+}
+
+/** A core that cannot start may have been given a damaged file of the kept copy: that is checked, mended, and the start tried once more. */
+function mendCopy() {
+  if (ready || mending) return;
+  mending = true;
+  keepOffline();
+}
+
+function onOffline(now) {
+  state.change({ offline: now });
+  if (now.phase !== "ready" || !mending || state.get().core.phase !== "failed") return;
+  core.restart();
+  restate();
 }
 
 function restate() {

@@ -106,7 +106,7 @@ def _add_sheet(restate: argparse.ArgumentParser) -> None:
     restate.add_argument("--rule", default="", help="the decision rule agreed, e.g. simple, guarded, three_way")
     restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
     restate.add_argument("--uncertain", action="append", default=[], metavar='"NAME ± ..."',
-                         help='the uncertainty of an input: "T 2 K", "O2 0.2 % (k=2)", "value 5 %%"; repeatable')
+                         help='the uncertainty of an input: "T 2 K", "O2 0.2 %% (k=2)", "value 5 %%"; repeatable')
     restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
     restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
     restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")
@@ -129,7 +129,7 @@ def _sheet(options: argparse.Namespace) -> dict:
         settled[doubt.strip()] = reading.strip()
     if options.rule:
         settled["limit.decision_rule"] = options.rule
-    return {**sheet, **{name: given for name in _TEXTS if (given := getattr(options, name))}, "settled": settled}
+    return {**sheet, **{name: getattr(options, name) or sheet.get(name, "") for name in _TEXTS}, "settled": settled}
 
 
 _INPUTS = {"value": (("hold", "value"),), "O2": (("gas", "oxygen"), ("hold", "oxygen")), "CO2": (("gas", "carbon_dioxide"),), "H2O": (("gas", "water_content"), ("gas", "water_route")),

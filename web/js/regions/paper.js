@@ -4,7 +4,6 @@ import { linkOf } from "../link.js";
 import { element } from "../page.js";
 import { qrCode } from "./qr.js";
 
-const SIDES = [["hold", "You hold"], ["gas", "It was in"], ["owe", "You owe"], ["limit", "Limit"]];
 const COLUMNS = ["input", "value", "u", "sensitivity", "contribution", "share"];
 const READ = { memory: "from memory, not from the document", secondary: "read in a copy", abstract: "abstract only" };
 
@@ -50,13 +49,12 @@ function figure({ figure: found, spread, warnings, verdict, challenge }) {
   return node;
 }
 
-function typed({ sheet, understood, rule_book }) {
+function typed({ texts, rule_book }) {
   const list = element("dl");
-  for (const [side, title] of SIDES) {
-    if (!sheet[side]?.trim()) continue;
+  for (const line of texts) {
     const words = element("dd");
-    words.append(element("span", sheet[side], "typed"), element("small", understood[side].map((piece) => `${piece.title} = ${piece.text}`).join("; ")));
-    list.append(element("dt", title), words);
+    words.append(element("span", line.typed, "typed"), element("small", line.understood.map((piece) => `${piece.title} = ${piece.text}`).join("; ")));
+    list.append(element("dt", line.title), words);
   }
   if (rule_book) list.append(element("dt", "Rule-book"), element("dd", joined(rule_book.title, rule_book.clause, READ[rule_book.read], rule_book.note)));
   return block("As typed, and as understood", list);
@@ -66,7 +64,7 @@ function doubts({ settled, left_open, no_visible_effect }) {
   const entries = [
     ...settled.map((one) => [`${one.side}, ${one.title}`, `${one.reading} (${one.usual_because ? `usual: ${one.usual_because}` : one.source})${one.note ? ` - ${one.note}` : ""}`]),
     ...left_open.map((one) => [`${one.side}, ${one.title}`, `left open${one.effect ? `, ${one.effect}` : ""}: ${one.readings.join("; ")}`]),
-    ...no_visible_effect.map((one) => [`${one.side}, ${one.title}`, one.effect]),
+    ...no_visible_effect.map((one) => [`${one.side}, ${one.title}`, [one.effect, one.computed_as && `computed as ${one.computed_as}`].filter(Boolean).join("; ")]),
   ];
   return entries.length ? [block("Doubts", rows(entries))] : [];
 }

@@ -148,9 +148,9 @@ def test_a_file_damaged_with_no_network_is_named(open_page, mortal):
     mortal.left = 0
     sheet.page.reload()
     sheet.ready()
-    sheet.page.get_by_role("button", name="More").click()
+    sheet.page.get_by_role("button", name="More", exact=True).click()
     expect(sheet.page.locator('[data-part="offline-detail"]')).to_contain_text("licences.txt")
-    sheet.page.get_by_role("button", name="More").click()
+    sheet.page.get_by_role("button", name="More", exact=True).click()
     sheet.write(**HELD)
     expect(sheet.value).to_have_text(FIGURE)
 
@@ -162,7 +162,7 @@ def test_a_full_storage_is_said_and_the_page_works_on(open_page, mortal):
     session.send("Storage.overrideQuotaForOrigin", {"origin": mortal.address.rstrip("/"), "quotaSize": 200_000})
     sheet = Sheet(page, mortal.address).open().ready().write(**HELD)
     expect(sheet.value).to_have_text(FIGURE)
-    page.get_by_role("button", name="More").click()
+    page.get_by_role("button", name="More", exact=True).click()
     expect(page.locator('[data-part="offline-detail"]')).to_contain_text(re.compile("quota|could not be kept|storage", re.IGNORECASE))
     expect(page.locator("#status")).not_to_contain_text("ready offline")
 

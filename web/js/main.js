@@ -241,7 +241,7 @@ const INTENTIONS = {
   draw, vary,
   "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
-  later: () => state.change({ offline: { ...state.get().offline, update: false } }),
+  later: () => offline?.later(),
 };
 const dispatch = (intention) => INTENTIONS[intention.type](intention);
 

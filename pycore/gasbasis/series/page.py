@@ -12,9 +12,9 @@ from gasbasis.calculation.verdict import RULES
 from gasbasis.errors import CoreError
 from gasbasis.language.numbers import significant
 from gasbasis.series.layout import Column, Layout
+from gasbasis.series.report import statistics_table, text_of
 from gasbasis.series.run import layout_of, restate_file
 from gasbasis.series.settings import BELOW_RULES, NEGATIVE_RULES, ORDERS, STAMPS
-from gasbasis.series.terminal import statistics_table, text_of
 from gasbasis.series.writing import MEAN_NAMES, mean_cells
 
 ROWS, MEANS, BOOK = "/tmp/rows.csv", "/tmp/means.csv", "/tmp/series.xlsx"

@@ -27,8 +27,8 @@ LEAVE_OUT = ["pint/testsuite/", "pint/default_en.txt", "pint/constants_en.txt", 
 KEEP = ["base64", "datetime", "decimal", "encodings.ascii", "encodings.latin_1", "hashlib", "json", "linecache", "locale",
         "textwrap", "traceback", "unicodedata", "zlib",
         # a series: the file, the workbook (XlsxWriter), the time zones (tzdata, read out of its wheel)
-        "csv", "zoneinfo", "importlib.resources", "importlib.readers", "zipfile", "tempfile", "shutil", "xml.parsers", "urllib.parse", "html", "fractions", "struct",
-        "encodings.cp1252", "encodings.utf_16", "encodings.utf_16_le", "encodings.utf_8_sig", "warnings", "copy", "uuid", "stat", "statistics"]
+        "csv", "zoneinfo", "importlib.resources", "importlib.readers", "zipfile", "tempfile", "shutil", "xml.parsers", "urllib.parse", "fractions", "struct",
+        "encodings.cp1252", "encodings.utf_16", "encodings.utf_16_le", "encodings.utf_8_sig", "warnings", "copy", "uuid", "statistics"]
 
 
 @dataclass(frozen=True)

@@ -1,7 +1,6 @@
 """`python3 -m gasbasis series FILE --settings S.json --out OUT`: a file of any length, streamed."""
 from __future__ import annotations
 
-import argparse
 import json
 import sys
 
@@ -25,7 +24,7 @@ def add_command(commands) -> None:
     series.set_defaults(run=run)
 
 
-def run(options: argparse.Namespace) -> int:
+def run(options) -> int:
     """Exit status 0: restated; 2: not understood."""
     try:
         if options.settings is None:

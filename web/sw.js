@@ -90,7 +90,9 @@ async function fromOlder(asset) {
 }
 
 async function fetchVerified(asset) {
-  const response = await fetch(keyOf(asset), { cache: "no-cache" });
+  const response = await fetch(keyOf(asset), { cache: "no-cache" }).catch(() => {
+    throw new Error(`${asset.path} is missing from the copy and could not be fetched: no network, or no answer from the host`);
+  });
   if (!response.ok) throw new Error(`${asset.path} could not be fetched (${response.status})`);
   const bytes = await verified(response, asset);
   if (!bytes) throw new Error(`${asset.path} is not the file that belongs to version ${VERSION}`);

@@ -129,7 +129,7 @@ def _sheet(options: argparse.Namespace) -> dict:
         settled[doubt.strip()] = reading.strip()
     if options.rule:
         settled["limit.decision_rule"] = options.rule
-    return {**sheet, **{name: given for name in _TEXTS if (given := getattr(options, name))}, "settled": settled}
+    return {**sheet, **{name: getattr(options, name) or sheet.get(name, "") for name in _TEXTS}, "settled": settled}
 
 
 _INPUTS = {"value": (("hold", "value"),), "O2": (("gas", "oxygen"), ("hold", "oxygen")), "CO2": (("gas", "carbon_dioxide"),), "H2O": (("gas", "water_content"), ("gas", "water_route")),

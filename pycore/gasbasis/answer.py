@@ -6,6 +6,7 @@ import traceback
 from typing import Callable, Mapping
 
 from gasbasis import __version__
+from gasbasis.calculation.case import WAYS
 from gasbasis.calculation.outcomes import BOUND, QUICK_BOUND
 from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.edit import edit
@@ -62,7 +63,13 @@ def _parsed(request: str) -> Mapping:
 
 def _restate(request: Mapping) -> dict:
     return restated(read_sheet(request.get("sheet")), take_usual=request.get("usual") is True,
-                    bound=QUICK_BOUND if request.get("quick") is True else BOUND)
+                    bound=QUICK_BOUND if request.get("quick") is True else BOUND, sides=_sides(request))
+
+
+def _sides(request: Mapping) -> tuple[str, ...]:
+    """The lines on how the number came about that are wanted though they are still empty."""
+    sides = request.get("sides", [])
+    return tuple(side for side in WAYS if side in sides) if isinstance(sides, list) else ()
 
 
 def _edit(request: Mapping) -> dict:

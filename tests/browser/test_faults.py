@@ -89,11 +89,12 @@ def test_the_whole_job_with_the_server_gone_after_the_first_visit(open_page, mor
 
 def test_killed_in_the_middle_of_the_first_fetch_there_is_no_version_and_never_half_of_one(open_page, mortal):
     page = open_page(quiet=False, **ALLOWED)
+    page.add_init_script("""const register = navigator.serviceWorker.register.bind(navigator.serviceWorker);
+        navigator.serviceWorker.register = (...given) => globalThis.mayKeep ? register(...given) : new Promise((done) => { globalThis.keepNow = () => { done(register(...given)); }; });""")
     page.goto(mortal.address)
     sheet = Sheet(page, mortal.address).ready()
-    page.evaluate("async () => { for (const found of await navigator.serviceWorker.getRegistrations()) await found.unregister(); for (const name of await caches.keys()) await caches.delete(name); }")
     mortal.left = 12                                       # fewer than the page has
-    page.evaluate("() => navigator.serviceWorker.register('sw.js').catch(() => {})")
+    page.evaluate("() => { globalThis.keepNow(); }")
     for _ in range(100):
         if mortal.left < 0 and page.evaluate("navigator.serviceWorker.getRegistration().then((found) => !found?.installing)"):
             break
@@ -102,7 +103,9 @@ def test_killed_in_the_middle_of_the_first_fetch_there_is_no_version_and_never_h
     sheet.write(**HELD)
     expect(sheet.value).to_have_text(FIGURE)               # the page in hand works on
     mortal.left = None
-    ready_offline(opened(lambda **_: page, mortal.address))
+    page.add_init_script("globalThis.mayKeep = true;")
+    page.reload()
+    ready_offline(sheet)
 
 
 def test_killed_in_the_middle_of_an_update_the_old_version_stays_whole(open_page, mortal):
@@ -148,9 +151,9 @@ def test_a_file_damaged_with_no_network_is_named(open_page, mortal):
     mortal.left = 0
     sheet.page.reload()
     sheet.ready()
-    sheet.page.get_by_role("button", name="More").click()
+    sheet.page.get_by_role("button", name="More", exact=True).click()
     expect(sheet.page.locator('[data-part="offline-detail"]')).to_contain_text("licences.txt")
-    sheet.page.get_by_role("button", name="More").click()
+    sheet.page.get_by_role("button", name="More", exact=True).click()
     sheet.write(**HELD)
     expect(sheet.value).to_have_text(FIGURE)
 
@@ -162,7 +165,7 @@ def test_a_full_storage_is_said_and_the_page_works_on(open_page, mortal):
     session.send("Storage.overrideQuotaForOrigin", {"origin": mortal.address.rstrip("/"), "quotaSize": 200_000})
     sheet = Sheet(page, mortal.address).open().ready().write(**HELD)
     expect(sheet.value).to_have_text(FIGURE)
-    page.get_by_role("button", name="More").click()
+    page.get_by_role("button", name="More", exact=True).click()
     expect(page.locator('[data-part="offline-detail"]')).to_contain_text(re.compile("quota|could not be kept|storage", re.IGNORECASE))
     expect(page.locator("#status")).not_to_contain_text("ready offline")
 

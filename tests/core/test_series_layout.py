@@ -91,6 +91,7 @@ def test_no_stamp(stamp):
         Clock(DAY_FIRST).read(stamp)
 
 
+@pytest.mark.native                     # the tables of time zones come on demand in the page
 def test_the_clock_is_put_forward():
     """Vienna, 29 March 2026: 01:59 CET (+1) is followed by 03:00 CEST (+2) (EU summer time, directive 2000/84/EC)."""
     clock = Clock(YEAR_FIRST, "Europe/Vienna")
@@ -100,6 +101,7 @@ def test_the_clock_is_put_forward():
         clock.read("2026-03-29 02:30:00")
 
 
+@pytest.mark.native                     # the tables of time zones come on demand in the page
 def test_the_clock_is_put_back():
     """Vienna, 25 October 2026: 02:30 comes twice, an hour apart."""
     clock = Clock(YEAR_FIRST, "Europe/Vienna")

@@ -10,7 +10,7 @@ import pytest
 from gasbasis.errors import CoreError, Missing
 from gasbasis.series.layout import look
 from gasbasis.series.means import Means
-from gasbasis.series.rows import Rows, text_lines
+from gasbasis.series.rows import Lines, Rows
 from gasbasis.series.settings import read_settings
 from gasbasis.series.sums import ExactSum
 from gasbasis.series.times import Clock
@@ -25,7 +25,7 @@ def taken(lines, settings):
     given = read_settings({"usual": True, "time": {"stamp": "start", **settings.pop("time", {})}, "species": [settings.pop("species", SAME)], **settings})
     rows, found = Rows(look(content, given.file), given), []
     means = Means(rows, given, found.append)
-    for block in rows.blocks(text_lines([content], rows.layout.encoding)):
+    for block in rows.blocks(Lines([content], rows.layout.encoding)):
         means.take(block)
     means.finish()
     return rows, means, found
@@ -103,12 +103,14 @@ def test_eight_hour_mean_of_a_shift(rest, expected):
     assert found[0].value == pytest.approx(expected, rel=1e-12)
 
 
+@pytest.mark.native                     # the tables of time zones come on demand in the page
 def test_a_day_with_a_clock_change_has_23_hours():
     lines = ["t,x", *(f"2026-03-29 {hour:02d}:00,1" for hour in range(24) if hour != 2)]
     _, _, found = taken(lines, {**windows("day"), "time": {"zone": "Europe/Vienna"}})
     assert found[0].count == 23 and found[0].expected == 23.0
 
 
+@pytest.mark.native                     # the tables of time zones come on demand in the page
 def test_the_hour_that_comes_twice_gives_two_means():
     hours = [0, 1, 2, 2, 3]
     lines = ["t,x", *(f"2026-10-25 {hour:02d}:{minute:02d},{place}" for place, hour in enumerate(hours) for minute in range(0, 60, 10))]

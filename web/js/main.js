@@ -20,29 +20,31 @@ import { mountPassOn } from "./regions/pass-on.js";
 import { mountReceive } from "./regions/receive.js";
 import { mountRecord } from "./regions/record.js";
 import { mountRuleBooks } from "./regions/rule-books.js";
+import { mountSeries } from "./regions/series-door.js";
 import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
 import { mountExamples, mountTools } from "./regions/tools.js";
 import { mountVary } from "./regions/vary.js";
 import { mountVerdict } from "./regions/verdict.js";
+import { mountWays } from "./regions/ways.js";
 import { mountWorking } from "./regions/working.js";
-import { createState, emptySheet } from "./state.js";
+import { createState, emptySheet, SIDES, WAYS, wanted } from "./state.js";
 import { measureViewport } from "./viewport.js";
 
 const RESTING_MS = 500;
 const $ = (id) => document.getElementById(id);
 
-const first = { sheet: { ...emptySheet(), ...typedAlready(sheetInHand()) }, row: rowInHand(), pristine: null, answer: null, answeredFor: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, varied: null,
+const first = { ways: [], sheet: { ...emptySheet(), ...typedAlready(sheetInHand()) }, row: rowInHand(), pristine: null, answer: null, answeredFor: null, busy: false, editing: null, catalogue: null, sent: null, before: null, drawn: null, varied: null,
   notice: "", aside: null, panel: "", rows: null, rowsProblem: "", passed: null, received: null, record: null, amends: null, compared: null,
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
-const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
-let offline = null, resting = 0, ready = false, focusNext = null;
+const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); if (now.phase === "failed") mendCopy(); } });
+let mending = false, offline = null, resting = 0, ready = false, focusNext = null;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
-  const typed = Object.fromEntries(["hold", "gas", "owe", "limit"].map((side) => [side, $(`${side}-text`).value]));
+  const typed = Object.fromEntries(SIDES.map((side) => [side, $(`${side}-text`).value]));
   return Object.values(typed).some(Boolean) ? { ...kept, ...typed } : kept ?? {};
 }
 
@@ -50,13 +52,32 @@ function onReady() {
   if (ready) return;
   ready = true;
   core.ask({ task: "catalogue" }).then((catalogue) => state.change({ catalogue }), (error) => state.change({ notice: error.message }));
-  offline = startOffline({ onState: (now) => state.change({ offline: now }), beforeReload: () => holdOnTo(state.get().sheet, state.get().row) });
+  keepOffline();
+  offline.booted();
+}
+
+function keepOffline() {
+  offline ??= startOffline({ onState: onOffline, beforeReload: () => holdOnTo(state.get().sheet, state.get().row) });
+}
+
+/** A core that cannot start may have been given a damaged file of the kept copy: that is checked, mended, and the start tried once more. */
+function mendCopy() {
+  if (ready || mending) return;
+  mending = true;
+  keepOffline();
+}
+
+function onOffline(now) {
+  state.change({ offline: now });
+  if (now.phase !== "ready" || !mending || state.get().core.phase !== "failed") return;
+  core.restart();
+  restate();
 }
 
 function restate() {
   state.change({ busy: true });
   const { sheet } = state.get();
-  const request = { task: "restate", sheet: { schema: 1, ...sheet } };
+  const request = { task: "restate", sheet: { schema: 1, ...sheet }, sides: WAYS.filter((side) => wanted(state.get(), side)) };
   clearTimeout(resting);
   core.ask({ ...request, quick: true }, { channel: "restate" }).then(
     (answer) => {
@@ -206,11 +227,13 @@ const INTENTIONS = {
   },
   close: () => state.change({ editing: null }),
   edit, settle, usual: takeUsual,
+  way: ({ side }) => { state.change({ ways: [...state.get().ways, side] }); restate(); $(`${side}-text`).focus(); },
+  "leave-way": ({ side }) => { state.change({ editing: null, ways: state.get().ways.filter((other) => other !== side) }); changeSheet({ [side]: "" }); },
   note: ({ doubt, text }) => changeSheet({ notes: { ...state.get().sheet.notes, [doubt]: text } }),
   "rule-book": ({ book }) => changeSheet({ owe: book.owe, rule_book: book.id }),
   "leave-rule-book": () => changeSheet({ rule_book: "" }),
   "find-species": ({ text }) => findSpecies(text),
-  clear: () => { kept.replace(emptySheet(), { panel: "" }); $("hold-text").focus(); },
+  clear: () => { state.change({ ways: [] }); kept.replace(emptySheet(), { panel: "" }); $("hold-text").focus(); },
   example: ({ sheet }) => { const whole = { ...emptySheet(), ...sheet }; kept.replace(whole, { pristine: whole }); },
   panel, ...kept.acts, ...passing.acts, ...recordActs({ state, core }),
   notice: ({ text }) => state.change({ notice: text }),
@@ -218,18 +241,18 @@ const INTENTIONS = {
   draw, vary,
   "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
-  later: () => state.change({ offline: { ...state.get().offline, update: false } }),
+  later: () => offline?.later(),
 };
 const dispatch = (intention) => INTENTIONS[intention.type](intention);
 
 const regions = [
-  mountPanels(["pass-on", "kept", "receive", "record", "compare"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
-  ...["hold", "gas", "owe", "limit"].map((side) => mountSide($(side), side, dispatch)),
+  mountPanels(["pass-on", "kept", "receive", "record", "compare", "series"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
+  ...SIDES.map((side) => mountSide($(side), side, dispatch)), mountWays($("hold"), $, dispatch),
   mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
   mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch), mountVary($("vary"), dispatch),
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
   mountPassOn($("pass-on"), dispatch), mountKept($("kept"), dispatch, { proposed: figureNamed, file: kept.fileOf }), mountReceive($("receive"), dispatch),
-  mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountAside($("aside"), dispatch),
+  mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountSeries($("series")), mountAside($("aside"), dispatch),
   mountHelp(["hold", "gas", "owe", "limit", "doubts", "steps", "verdict", "working", "budget", "pass-on", "kept", "receive", "record", "compare"].map($)),
 ];
 mountKeys($("keys"));

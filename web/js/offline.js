@@ -9,17 +9,18 @@
  */
 
 /**
- * Call it when the core is ready, so that fetching for later does not slow the first figure.
+ * Call it when the core is ready, so that fetching for later does not slow the first figure, or when it cannot start, to mend
+ * a damaged copy. `booted` tells that this version has started Python: only then may the version before it go.
  *
  * @param {{onState?: (state: OfflineState) => void, beforeReload?: () => void | Promise<void>}} options
- * @returns {{state: OfflineState, takeUpdate: () => void, check: () => void}}
+ * @returns {{state: OfflineState, takeUpdate: () => void, later: () => void, check: () => void, booted: () => void}}
  */
 export function startOffline({ onState = () => {}, beforeReload = () => {} } = {}) {
   /** @type {OfflineState} */
   let state = { phase: "fetching", version: "", done: 0, of: 0, checkedAt: "", message: "", update: false, changes: [], persistent: null };
   /** @type {ServiceWorkerRegistration | null} */
   let registration = null;
-  let reloading = false;
+  let reloading = false, started = false, postponed = false;
 
   function change(patch) {
     state = { ...state, ...patch };
@@ -37,7 +38,7 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
   /** A worker that waits is asked about, also when it was left waiting by an earlier visit. */
   function watchForUpdate() {
     const look = () => {
-      const update = Boolean(registration.waiting && registration.active);
+      const update = Boolean(registration.waiting && registration.active) && !postponed;
       if (update) registration.waiting.postMessage({ type: "changes" });
       change({ update });
     };
@@ -55,6 +56,17 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
 
   function check() {
     registration?.active?.postMessage({ type: "check" });
+  }
+
+  /** Not now: asked again at the next start. */
+  function later() {
+    postponed = true;
+    change({ update: false });
+  }
+
+  function booted() {
+    started = true;
+    registration?.active?.postMessage({ type: "started" });
   }
 
   async function onNewController() {
@@ -79,10 +91,10 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
     if (!registration) return;         // service workers are blocked: nothing is kept, nothing is promised
     watchForUpdate();
     change({ persistent: await navigator.storage?.persist?.().catch(() => null) ?? null });
-    registration.active?.postMessage({ type: "started" });
+    if (started) booted();
     check();
   }
 
   start();
-  return { takeUpdate, check, get state() { return state; } };
+  return { takeUpdate, later, check, booted, get state() { return state; } };
 }

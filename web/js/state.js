@@ -1,18 +1,23 @@
 /**
  * The one state of the page: replaced, never mutated. Who wants to know subscribes.
  *
- * @typedef {{hold: string, gas: string, owe: string, limit: string, settled: Record<string, string>, notes: Record<string, string>, rule_book: string, title: string}} Sheet
+ * @typedef {{hold: string, gas: string, owe: string, limit: string, sample: string, prepared: string, emission: string, settled: Record<string, string>, notes: Record<string, string>, rule_book: string, title: string}} Sheet
  */
 
 /** @returns {Sheet} */
 export function emptySheet() {
-  return { hold: "", gas: "", owe: "", limit: "", rule_book: "", title: "", settled: {}, notes: {} };
+  return { hold: "", gas: "", owe: "", limit: "", sample: "", prepared: "", emission: "", rule_book: "", title: "", settled: {}, notes: {} };
 }
 
-const NO_CONTENT = ["rule_book", "title"];
+/** The lines of a sheet; those on how the number came about are there only where they are wanted. */
+export const WAYS = ["sample", "prepared", "emission"];
+export const SIDES = ["hold", "gas", "owe", "limit", ...WAYS];
 
-/** Whether no line of it says anything. @param {Sheet} sheet */
-export const isEmpty = (sheet) => !Object.entries(sheet).some(([name, text]) => typeof text === "string" && text.trim() && !NO_CONTENT.includes(name));
+/** @param {Sheet} sheet */
+export const isEmpty = (sheet) => !SIDES.some((side) => sheet[side].trim());
+
+/** Whether a part on how the number came about is on the page: it has a text, or was just asked for. @param {any} state @param {string} side */
+export const wanted = (state, side) => Boolean(state.sheet[side].trim()) || state.ways.includes(side);
 
 /** @param {object} first */
 export function createState(first) {

@@ -130,7 +130,10 @@ def _exact(value: float) -> float:
 def _kind(quantity, above: str) -> str:
     registry = _registry()
     if quantity.dimensionless:
-        return _FRACTION_KIND[next(kind for kind in ("mass", "amount", "volume") if registry.parse_expression(above).check(_dimension(kind)))]
+        counted = next((kind for kind in _FRACTION_KIND if registry.parse_expression(above).check(_dimension(kind))), None)
+        if counted is None:            # hours per year and the like are no share of a gas
+            raise _unknown(above)
+        return _FRACTION_KIND[counted]
     for kind, si in _SI.items():
         if quantity.is_compatible_with(si):
             return kind

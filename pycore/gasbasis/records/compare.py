@@ -78,7 +78,12 @@ def _side_differences(side: str, mine: Sheet, theirs: Sheet) -> list[Difference]
         found = [_piece_difference(side, field, before[0], after[0]) for field in fields]
         if one.strip() and other.strip() and _leads_there(found, mine, side, after[0]):
             return found
-    return [Difference(side, SIDE_TITLES[side], one or _NOTHING, other or _NOTHING, lambda sheet: replace(sheet, **{side: other}))]
+    return [_whole_line(side, mine, theirs)]
+
+
+def _whole_line(side: str, mine: Sheet, theirs: Sheet) -> Difference:
+    one, other = getattr(mine, side), getattr(theirs, side)
+    return Difference(side, SIDE_TITLES[side], one or _NOTHING, other or _NOTHING, lambda sheet: replace(sheet, **{side: other}))
 
 
 def _piece_difference(side: str, field: str, before: Statement | Gas, after: Statement | Gas) -> Difference:

@@ -25,7 +25,7 @@ from gasbasis.language.statement import read_statement
 from gasbasis.records.about_gas import about_gas
 from gasbasis.records.about_ways import about_sample, below_detection
 from gasbasis.records.sheet import Sheet
-from gasbasis.records.sides import side_record
+from gasbasis.records.sides import empty_side, side_record
 from gasbasis.records.varied import variables
 from gasbasis.records.ways import held, is_held_by_way, read_ways
 from gasbasis.records.worth import budget_record, verdict_record, worth_problem
@@ -36,11 +36,16 @@ _NEEDED = {"hold": ("What you hold is needed.", "Type or paste it as it was writ
            "owe": ("What you owe is needed.", "Type the unit and basis, e.g. 'mg/m3 at 273.15 K, 101.3 kPa, dry'.")}
 
 
-def restated(sheet: Sheet, take_usual: bool = False, bound: int = BOUND) -> dict:
+def restated(sheet: Sheet, take_usual: bool = False, bound: int = BOUND, sides: tuple[str, ...] = ()) -> dict:
     """All that follows from a sheet. Problems are listed, never raised, so that what is understood stays in view.
 
     Up to `bound` combinations of readings are tried; above it the record's spread says that it is not complete.
+    `sides` are lines on how the number came about that are wanted though they are empty: what may be added to them is told.
     """
+    return _whole(sheet, take_usual, bound) | {side: empty_side(side) for side in sides if not getattr(sheet, side).strip()}
+
+
+def _whole(sheet: Sheet, take_usual: bool, bound: int) -> dict:
     if sheet.limit.strip() and not sheet.hold.strip() and not is_held_by_way(sheet):
         return challenged(sheet, take_usual, bound)
     return _restated(sheet, *read_statement(sheet.hold, "hold"), take_usual, bound) | {"challenge": False}

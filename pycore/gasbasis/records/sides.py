@@ -94,3 +94,8 @@ def _described(side: str, field: str) -> dict:
             "example": GAS_EXAMPLES.get(field, described.example) if in_gas else described.example,
             "choices": list(GAS_CHOICES.get(field, described.choices) if in_gas else described.choices),
             "numeric": described.numeric}
+
+
+def empty_side(side: str) -> dict:
+    """A side nothing is typed in yet: what may be added to it."""
+    return {"text": "", "pieces": [], "adds": [{"field": field, **_described(side, field)} for field in ADDABLE[side]]}

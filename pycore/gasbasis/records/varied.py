@@ -5,7 +5,7 @@ from dataclasses import replace
 from decimal import Decimal
 from typing import Callable
 
-from gasbasis.calculation.case import Case
+from gasbasis.calculation.case import WAYS, Case
 from gasbasis.calculation.conformity import limits_of, on_limit_basis
 from gasbasis.calculation.outcomes import settle_calm
 from gasbasis.calculation.path import Path, figure_value
@@ -60,7 +60,7 @@ def varied(sheet: Sheet, field: object, low: object, high: object, take_usual: b
 
 def _quantity(case: Case, field: str) -> Quantity | None:
     side, _, name = field.partition(".")
-    record = getattr(case, side, None) if side in ("hold", "gas") else None
+    record = getattr(case, side, None) if side in ("hold", "gas", *WAYS) else None
     quantity = getattr(record, name, None)
     return quantity if isinstance(quantity, Quantity) else None
 

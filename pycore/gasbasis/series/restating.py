@@ -7,6 +7,7 @@ figure is that of a single sheet, and a row without one has the sheet's own reas
 from __future__ import annotations
 
 import math
+import re
 from dataclasses import dataclass, field
 from decimal import Decimal
 from typing import Callable, Mapping, Sequence
@@ -22,6 +23,7 @@ NAN = math.nan
 # Where a number only ever becomes a leaf, or is looked at by a recorded decision. Elsewhere each row is laid by itself.
 _LEAF_ONLY = ("hold.value", "gas.water_content", "gas.water_route", "gas.cooler", "gas.oxygen", "gas.carbon_dioxide", "gas.temperature",
               "gas.pressure", "gas.pressure_route", "gas.barometer", "gas.barometer_route", "gas.ambient_oxygen")
+_VARIABLE = re.compile(r"\b[cv]\d+\b")  # a check of constants alone held when the path was laid
 _MOST_PATHS = 64                       # a file that needs more is laid row by row
 
 
@@ -32,6 +34,7 @@ class Restating:
     template: Template
     functions: list[Callable[..., float]] = field(default_factory=list)
     paths: list[Path] = field(default_factory=list)
+    laid: list[tuple[Path, Row]] = field(default_factory=list)    # what the functions were compiled from
     row_by_row: bool = False           # a column stands where a number decides by itself
 
     def __post_init__(self) -> None:
@@ -70,6 +73,7 @@ class Restating:
                 self.row_by_row = True
             else:
                 self.functions.append(function)
+                self.laid.append((path, row))
         return figure
 
 
@@ -79,21 +83,26 @@ def _same(first: float, second: float) -> bool:
 
 def compiled(path: Path, template: Template, row: Row) -> Callable[..., float] | None:
     """The path as a checked function of the columns. None where a column feeds a leaf in a way of its own."""
-    fed = _fed_leaves(path, template, row)
+    fed = fed_leaves(path, template, row)
     if fed is None:
         return None
     names = {name: f"v{index}" for index, name in enumerate([*path.leaves, *(step.result for step in path.steps)])}
     arguments = [f"c{index}" for index in range(len(template.slots))]
-    lines = [f"if not ({' and '.join(f'-1e99 < {name} < 1e99' for name in arguments)}): return nan"] if arguments else []
-    lines += [f"{names[leaf]} = {_affine(arguments[index], factor, offset)}" for leaf, (index, factor, offset) in fed.items()]
+    constant = {name: leaf.value for name, leaf in path.leaves.items() if name not in fed}
+    names |= {name: repr(value) for name, value in constant.items()}
+    lines = [f"{names[leaf]} = {_affine(arguments[index], factor, offset)}" for leaf, (index, factor, offset) in fed.items()]
     for number, step in enumerate(path.steps):
         lines += [_decision(decision, names, row) for decision in path.decisions if decision.before == number]
-        lines += [line.strip() for line in step_lines(step, names, checked=True)]
+        if all(name in constant for name in step.arguments.values()):      # the same in every row: computed once
+            constant[step.result] = step.relation.value(**{argument: constant[name] for argument, name in step.arguments.items()})
+            names[step.result] = repr(constant[step.result])
+        else:
+            lines += [line.strip() for line in step_lines(step, names, checked=True) if _VARIABLE.search(line)]
     lines += [_decision(decision, names, row) for decision in path.decisions if decision.before == len(path.steps)]
     lines += [f"figure = {names[path.figure]} / {path.shown.factor!r}", "return figure if -1e300 < figure < 1e300 else nan"]
     text = [f"def figure({', '.join(arguments)}):", "    try:", *(f"        {line}" for line in lines),
             "    except (ZeroDivisionError, OverflowError, ValueError, TypeError): return nan"]
-    space = surroundings() | {names[name]: leaf.value for name, leaf in path.leaves.items() if name not in fed}
+    space = surroundings()
     exec(compile("\n".join(text), "<row>", "exec"), space)     # noqa: S102 - the text is made above from our own relations
     return space["figure"]
 
@@ -103,7 +112,7 @@ def _affine(argument: str, factor: float, offset: float) -> str:
     return scaled if offset == 0.0 else f"{scaled} + {offset!r}"
 
 
-def _fed_leaves(path: Path, template: Template, row: Row) -> dict[str, tuple[int, float, float]] | None:
+def fed_leaves(path: Path, template: Template, row: Row) -> dict[str, tuple[int, float, float]] | None:
     """Leaf -> the column that feeds it, with factor and offset to SI. None when a leaf follows a column in another way."""
     fed: dict[str, tuple[int, float, float]] = {}
     for index, quantity in enumerate(row.quantities):

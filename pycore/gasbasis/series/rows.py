@@ -6,13 +6,14 @@ from __future__ import annotations
 
 import codecs
 import csv
+import io
 import math
 import re
 from collections import Counter
 from dataclasses import dataclass, field, replace
-from itertools import islice
-from operator import itemgetter, lt
-from typing import Callable, Iterable, Iterator, Sequence
+from itertools import chain, islice
+from operator import lt
+from typing import Iterable, Iterator, Sequence
 
 from gasbasis.errors import CoreError, Missing, NotUnderstood
 from gasbasis.series.layout import Layout
@@ -21,7 +22,8 @@ from gasbasis.series.settings import Settings, SpeciesSettings
 from gasbasis.series.template import make_template
 from gasbasis.series.times import YEAR_FIRST, Clock
 
-BLOCK = 2_000                          # rows; one unusual row slows one block
+BLOCK = 256                            # rows; small enough to stay near the processor, and one unusual row slows one block
+LARGEST = 1e99                         # beyond it is no measured number, and products leave the floats
 LISTED = 200                           # bad rows named one by one; all are counted
 _NUMBER = {".": re.compile(r"[+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d{1,2})?"), ",": re.compile(r"[+-]?(?:\d+,?\d*|,\d+)(?:[eE][+-]?\d{1,2})?")}
 _BELOW = re.compile(r"(?:<=?|≤)\s*")
@@ -108,9 +110,9 @@ class Rows:
         if self.status is not None and not self.valid:
             raise Missing("Which words of the status column mean a valid reading?", hint='Give status.valid, e.g. ["OK", ""].', field="status.valid")
 
-    def blocks(self, lines: Iterable[str]) -> Iterator[Block]:
-        """The file's rows in blocks of BLOCK. `lines` starts at the file's first line."""
-        lines = iter(lines)
+    def blocks(self, source: Lines) -> Iterator[Block]:
+        """The file's rows in blocks of BLOCK. `source` starts at the file's first line."""
+        self._source, lines = source, iter(source)
         for _ in range(self.layout.first_line - 1):
             next(lines, None)
         reader, line = csv.reader(lines, delimiter=self.layout.delimiter), self.layout.first_line
@@ -131,21 +133,21 @@ class Rows:
     # --- whole columns, when nothing is unusual ---
 
     def _by_columns(self, rows: list[list[str]], line: int) -> Block | None:
-        if set(map(len, rows)) != {len(self.layout.columns)} or self.status is not None and not self.valid.issuperset(map(str.strip, map(itemgetter(self.status), rows))):
-            return None
         try:
-            columns = [self._floats(list(map(itemgetter(place), rows))) for place in self.places]
-            stamps = self._stamps(rows)
-            read = list(map(self.clock.read, stamps)) if self.clock else []
+            cells = list(zip(*rows, strict=True))
+            if len(cells) != len(self.layout.columns) or self.status is not None and not self.valid.issuperset(map(str.strip, cells[self.status])):
+                return None
+            columns = [self._floats(cells[place]) for place in self.places]
+            stamps = cells[self.time_places[0]] if len(self.time_places) == 1 else self._stamps(rows)
+            seconds = self.clock.read_all(stamps) if self.clock else [NAN] * len(rows)
         except (ValueError, CoreError):
             return None
-        seconds = [entry[0] for entry in read] if read else [NAN] * len(rows)
-        if read and not (seconds[0] > self.clock.last and all(map(lt, seconds, seconds[1:]))) or any(code in column for code in self._missing_numbers for column in columns):
+        if self.clock and not (seconds[0] > self.clock.last and all(map(lt, seconds, seconds[1:]))) or any(code in column for code in self._missing_numbers for column in columns):
             return None
         figures = [restating.column([columns[index] for index in wanted]) for restating, wanted in zip(self.restatings, self.wanted)]
         if any(math.isnan(sum(figure)) for figure in figures) or self.span and not self.span[0] <= seconds[0] <= seconds[-1] < self.span[1]:
             return None
-        if read:
+        if self.clock:
             self.clock.last = seconds[-1]
         self.tally.rows += len(rows)
         self.tally.good += len(rows)
@@ -154,21 +156,19 @@ class Rows:
         return Block(range(line, line + len(rows)), stamps, seconds, figures, inputs, [nothing] * len(self.restatings),
                      None if self.flow is None else columns[self.flow], {})
 
-    def _floats(self, cells: list[str]) -> list[float]:
+    def _floats(self, cells: Sequence[str]) -> list[float]:
         """The numbers of a column. Raises ValueError when one cell is anything else than a plain number in the file's decimals."""
-        joined = "\n".join(cells)
-        if "_" in joined or joined.count("\n") != len(cells) - 1 or (self.layout.decimal == "," and "." in joined):
-            raise ValueError("not plain")
-        numbers = list(map(float, joined.replace(",", ".").split("\n") if self.layout.decimal == "," else cells))
-        if not math.isfinite(sum(numbers)):
-            raise ValueError("not finite")
+        if self.layout.decimal == "," or not self._source.plain:
+            joined = "\n".join(cells)
+            if "_" in joined or joined.count("\n") != len(cells) - 1 or (self.layout.decimal == "," and "." in joined):
+                raise ValueError("not plain")
+            cells = joined.replace(",", ".").split("\n") if self.layout.decimal == "," else cells
+        numbers = list(map(float, cells))
+        if not -LARGEST < sum(numbers) < LARGEST:        # also when one of them is none (nan) or endless
+            raise ValueError("no measured number")
         return numbers
 
     def _stamps(self, rows: list[list[str]]) -> list[str]:
-        if not self.time_places:
-            return [""] * len(rows)
-        if len(self.time_places) == 1:
-            return list(map(itemgetter(self.time_places[0]), rows))
         return [" ".join(row[place].strip() for place in self.time_places) for row in rows]
 
     # --- row by row ---
@@ -291,8 +291,8 @@ class Rows:
             raise BadCell(column, "missing", f"'{text}' stands for a missing reading" if text else "the cell is empty")
         found = _BELOW.match(text)
         number = text[found.end():] if found else text
-        if _NUMBER[self.layout.decimal].fullmatch(number):
-            plain = number.replace(",", ".")
+        plain = number.replace(",", ".")
+        if _NUMBER[self.layout.decimal].fullmatch(number) and abs(float(plain)) < LARGEST:
             if float(plain) in self._missing_numbers:
                 raise BadCell(column, "missing", f"'{text}' stands for a missing reading")
             return plain, found is not None
@@ -310,17 +310,23 @@ def _on_flow_basis(restating: Restating, species: SpeciesSettings, settings: Set
     return Restating(make_template(replace(species.texts, owe=owe, limit=""), species.settled, settings.usual, typical))
 
 
-def text_lines(chunks: Iterable[bytes], encoding: str) -> Iterator[str]:
-    """The lines of a file that comes in pieces, line ends kept."""
-    decoder, rest = codecs.getincrementaldecoder(encoding)("replace"), ""
-    for chunk in chunks:
-        pieces = (rest + decoder.decode(chunk)).split("\n")
-        rest = pieces.pop()
-        for piece in pieces:
-            yield f"{piece}\n"
-    rest += decoder.decode(b"", True)
-    if rest:
-        yield rest
+class Lines:
+    """The lines of a file that comes in pieces, line ends kept. `plain` as long as no underscore was met: Python reads 1_000 as a number, loggers do not."""
 
+    def __init__(self, chunks: Iterable[bytes], encoding: str):
+        self._chunks, self._decoder, self.plain = chunks, codecs.getincrementaldecoder(encoding)("replace"), True
 
-Sink = Callable[[Block], None]
+    def __iter__(self) -> Iterator[str]:
+        return chain.from_iterable(self._pieces())
+
+    def _pieces(self) -> Iterator[io.StringIO]:
+        rest = ""
+        for chunk in self._chunks:
+            text = rest + self._decoder.decode(chunk)
+            end = text.rfind("\n") + 1
+            rest, text = text[end:], text[:end]
+            self.plain = self.plain and "_" not in text
+            yield io.StringIO(text, newline="\n")      # splits at line feeds only, at the speed of C
+        rest += self._decoder.decode(b"", True)
+        self.plain = self.plain and "_" not in rest
+        yield io.StringIO(rest, newline="\n")

@@ -12,7 +12,7 @@ from gasbasis.errors import Missing, NotUnderstood
 from gasbasis.language.numbers import significant
 from gasbasis.series.layout import SAMPLE, Layout, look
 from gasbasis.series.means import Mean, Means
-from gasbasis.series.rows import Block, Rows, text_lines
+from gasbasis.series.rows import Block, Lines, Rows
 from gasbasis.series.settings import Settings, read_settings
 from gasbasis.series.times import clock_text
 from gasbasis.series.workbook import Workbook
@@ -31,20 +31,21 @@ def layout_of(path: str | os.PathLike, said: Mapping[str, object] | None = None)
 
 
 def restate_file(path: str | os.PathLike, given: Mapping, out: str | None = None, means_out: str | None = None,
-                 progress: Progress = lambda done, of: None, watch: Callable[[Rows, Means | None, Block], None] | None = None) -> dict:
+                 progress: Progress = lambda done, of: None, watch: Callable[[Rows, Means | None, Block], None] | None = None,
+                 listener: Callable[[Means, Mean], None] | None = None) -> dict:
     """Restate a file row by row; write rows and means where asked; return the record. Raises CoreError.
 
-    `progress(bytes done, bytes of)` is called after each block, and `watch` sees each block (the page draws from it).
+    `progress(bytes done, bytes of)` is called after each block, `watch` sees each block and `listener` each mean (the page draws from them).
     """
     settings = read_settings(given)
     layout = layout_of(path, settings.file)
     rows = Rows(layout, settings)
     with ExitStack() as stack:
         sinks, close = _sinks(out, rows, given, stack)
-        means = _means(rows, settings, means_out, sinks, given, stack)
+        means = _means(rows, settings, means_out, sinks, given, stack, listener)
         size = os.path.getsize(path)
         source = stack.enter_context(_opened(path))
-        for block in rows.blocks(text_lines(_chunks(source), layout.encoding)):
+        for block in rows.blocks(Lines(_chunks(source), layout.encoding)):
             for sink in sinks:
                 sink.take(block)
             if means is not None:
@@ -86,10 +87,10 @@ def _sinks(out: str | None, rows: Rows, given: Mapping, stack: ExitStack):
     return [RowsFile(target, rows, given)], []
 
 
-def _means(rows: Rows, settings: Settings, means_out: str | None, sinks, given: Mapping, stack: ExitStack) -> Means | None:
+def _means(rows: Rows, settings: Settings, means_out: str | None, sinks, given: Mapping, stack: ExitStack, further) -> Means | None:
     if not settings.windows and settings.flow is None:
         return None
-    takers = [sink.take_mean for sink in sinks if isinstance(sink, Workbook)]
+    takers = [sink.take_mean for sink in sinks if isinstance(sink, Workbook)] + ([further] if further else [])
     if means_out is not None:
         takers.append(MeansFile(stack.enter_context(open(means_out, "w", encoding="utf-8", newline="")), rows, given).take)
 
@@ -140,7 +141,7 @@ def _statistics_record(rows: Rows, means: Means, index: int, species: int, momen
             "highest": None if highest is None else {"value": highest.value, "text": significant(highest.value, DIGITS), "from": moment(highest.start), "to": moment(highest.end),
                                                      "percent_of_limit": 100.0 * highest.value / upper if upper else None},
             "percentiles": [{"percent": percent, "value": _or_none(found.percentile(percent))} for percent in rows.settings.percentiles],
-            "exceedances": found.exceedances if limits is not None else None,
+            "upper_limit": upper, "exceedances": found.exceedances if limits is not None else None,
             "listed": [{"from": moment(mean.start), "to": moment(mean.end), "text": significant(mean.value, DIGITS), "verdict": mean.words} for mean in found.listed]}
 
 

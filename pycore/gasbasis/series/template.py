@@ -90,7 +90,9 @@ def make_template(texts: Texts, settled: Mapping[str, str], take_usual: bool, ty
     if done.open:
         doubt = done.open[0]
         readings = " or ".join(f"{doubt.id}={reading.id} ({reading.label})" for reading in doubt.readings)
-        raise Missing(f"A doubt is open: {doubt.question}", hint=f"Settle it for the whole series: {readings}.", field=doubt.id)
+        missing = Missing(f"A doubt is open: {doubt.question}", hint=f"Settle it for the whole series: {readings}.", field=doubt.id)
+        missing.readings = [{"id": reading.id, "label": reading.label} for reading in doubt.readings]
+        raise missing
     _refuse_doubt_of_some_rows(case, slots, done)
     case = done.case
     for doubt in done.about_spread:    # these move no figure

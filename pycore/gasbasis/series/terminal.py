@@ -1,11 +1,11 @@
 """`python3 -m gasbasis series FILE --settings S.json --out OUT`: a file of any length, streamed."""
 from __future__ import annotations
 
-import argparse
 import json
 import sys
 
 from gasbasis.errors import CoreError
+from gasbasis.series.report import text_of
 from gasbasis.series.run import layout_of, read_settings_file, restate_file
 
 RESTATED, NOT_UNDERSTOOD = 0, 2
@@ -24,7 +24,7 @@ def add_command(commands) -> None:
     series.set_defaults(run=run)
 
 
-def run(options: argparse.Namespace) -> int:
+def run(options) -> int:
     """Exit status 0: restated; 2: not understood."""
     try:
         if options.settings is None:
@@ -35,13 +35,15 @@ def run(options: argparse.Namespace) -> int:
         if options.columns:
             from gasbasis.series.columns import restate_columns
             found = restate_columns(options.file, given, options.out)
+            print(json.dumps(found, ensure_ascii=False, indent=1))
+            return RESTATED
         else:
             found = restate_file(options.file, given, options.out, options.means, _nothing if options.quiet or not sys.stderr.isatty() else _Progress())
     except CoreError as error:
         where = f"{error.field}: " if error.field else ""
         print(f"{where}{error.message} {error.hint}".strip(), file=sys.stderr)
         return NOT_UNDERSTOOD
-    print(json.dumps(found, ensure_ascii=False, indent=1) if options.json else text_of(found))
+    print(json.dumps(found, ensure_ascii=False, indent=1) if options.json else "\n".join([*found["understood"], "", *text_of(found)]))
     return RESTATED
 
 
@@ -62,30 +64,3 @@ class _Progress:
 def _column(column) -> str:
     words = f"; other cells: {', '.join(column.texts)}" if column.texts else ""
     return f"  {{{column.name}}}  {column.kind}{', in ' + column.unit_text if column.unit_text else ''}, e.g. {column.example!r}{words}"
-
-
-def text_of(found: dict) -> str:
-    """The record in lines."""
-    lines = [*found["understood"], ""]
-    lines += [f"{species['text']} in {species['unit_text']} {species['basis']}" for species in found["species"]]
-    lines.append(f"{found['rows']} rows: {found['good']} restated, {found['bad']} without all their figures, of which {found['put_aside']} put aside by their status"
-                 + (f"; {found['outside']} outside the span" if found["outside"] else ""))
-    lines += [f"  {entry['rows']} × {entry['reason']}" for entry in found["reasons"]]
-    lines += [f"  line {entry['line']}: {entry['column']} {entry['reason']}".replace("  ", " ") for entry in found["bad_rows"][:10]]
-    if found["means"]:
-        lines += _means_lines(found["means"])
-    return "\n".join(lines)
-
-
-def _means_lines(means: dict) -> list[str]:
-    lines = [f"interval {means['interval_s']:g} s, {means['gaps']} gaps, {means['gap_hours']:.3g} h missing"]
-    for window in means["windows"]:
-        for species in window["species"]:
-            highest = species["highest"]
-            of_limit = f", {highest['percent_of_limit']:.3g} % of the limit" if highest and highest["percent_of_limit"] is not None else ""
-            top = f"; highest {highest['text']} from {highest['from']}{of_limit}" if highest else ""
-            over = f"; {species['exceedances']} not within the limit" if species["exceedances"] is not None else ""
-            centiles = "".join(f"; {entry['percent']:g}th percentile {entry['value']:.4g}" for entry in species["percentiles"] if entry["value"] is not None)
-            lines.append(f"{window['window']}, {species['name']}: {species['means']} means, {species['lacking']} with too little data{top}{centiles}{over}")
-    lines += [f"mass of {entry['species']}: {entry['text']} in {entry['hours']:.4g} h measured" for entry in means["mass"] or ()]
-    return lines

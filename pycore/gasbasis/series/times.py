@@ -8,6 +8,7 @@ from __future__ import annotations
 import re
 from dataclasses import dataclass
 from datetime import date, datetime, timedelta, timezone
+from typing import Sequence
 
 from gasbasis.errors import NotUnderstood, OutOfRange
 
@@ -31,6 +32,8 @@ class Clock:
         self.last = float("-inf")
         self._heads: dict[str, tuple[float, float | None]] = {}   # date and hour -> seconds of the wall clock, offset if constant
         self._tails: dict[str, tuple[float, int, float | None]] = {}   # the rest -> seconds, hours by am/pm, offset stated
+        self._plain_heads: dict[str, float] = {}     # of these the ones that only have to be added up
+        self._plain_tails: dict[str, float] = {}
         self.carries_offset = False
 
     def read(self, text: str) -> tuple[float, float]:
@@ -54,6 +57,14 @@ class Clock:
             return wall, 0.0
         return (wall - offset, offset) if offset is not None else self._changing(wall, text)
 
+    def read_all(self, texts: Sequence[str]) -> list[float]:
+        """Seconds of many stamps; several times as fast as one by one where their parts were met before."""
+        hours, rest = self._plain_heads, self._plain_tails
+        try:
+            return [hours[head] + rest[tail] for head, _, tail in [text.partition(":") for text in texts]]
+        except KeyError:
+            return [self.read(text)[0] for text in texts]
+
     def _head(self, head: str, text: str) -> tuple[float, float | None]:
         found = _HEAD.fullmatch(head.strip())
         if found is None:
@@ -69,7 +80,11 @@ class Clock:
         wall = days * 86400.0 + hour * 3600.0
         if len(self._heads) > _MOST_KEPT:
             self._heads.clear()
-        self._heads[head] = wall, self._constant_offset(wall)
+            self._plain_heads.clear()
+        offset = self._constant_offset(wall)
+        self._heads[head] = wall, offset
+        if offset is not None:
+            self._plain_heads[head] = wall - offset
         return self._heads[head]
 
     def _tail(self, tail: str, text: str) -> tuple[float, int, float | None]:
@@ -80,7 +95,10 @@ class Clock:
         half = -1 if found[4] is None else int(found[4].lower() == "pm")
         if len(self._tails) > _MOST_KEPT:
             self._tails.clear()
+            self._plain_tails.clear()
         self._tails[tail] = seconds, half, _offset(found[5])
+        if half < 0 and found[5] is None:
+            self._plain_tails[tail] = seconds
         self.carries_offset = self.carries_offset or found[5] is not None
         return self._tails[tail]
 

@@ -67,11 +67,16 @@ class RowsFile(_Table):
     def __init__(self, target: TextIO, rows: Rows, given: Mapping):
         super().__init__(target, rows)
         self.given, self.started, self.count = given, False, len(rows.settings.species)
+        cell = f"{{:#.{rows.settings.digits}g}}{rows.layout.delimiter}"
+        self.line = ("{}" + rows.layout.delimiter + cell * self.count + "\n").format if rows.layout.decimal == "." else None    # a row with nothing unusual
 
     def take(self, block: Block) -> None:
         if not self.started:
             self.started = True
             self._head(self.given, row_names(self.rows))
+        if not block.problems and self.line is not None and self.rows.layout.delimiter not in "".join(block.stamps) and not any(block.below):
+            self.target.write("".join(map(self.line, block.stamps, *block.figures[:self.count])))
+            return
         number = self.number
         columns = [list(map(number, figures)) for figures in block.figures[:self.count]]
         for below, column in zip(block.below, columns):

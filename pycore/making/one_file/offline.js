@@ -2,5 +2,5 @@
 export function startOffline({ onState = () => {} } = {}) {
   const state = { phase: "ready", version: "", done: 1, of: 1, checkedAt: "", message: "One file: everything is in it, and it needs no network.", update: false, changes: [], persistent: null };
   onState(state);
-  return { takeUpdate() {}, check() {}, state };
+  return { takeUpdate() {}, later() {}, check() {}, booted() {}, state };
 }

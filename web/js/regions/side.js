@@ -2,8 +2,8 @@
 import { cloned, clonedElement, element, keyed, part, say } from "../page.js";
 import { mountEditor } from "./editor.js";
 
-const NEXT = { hold: "gas-text", gas: "owe-text", owe: "limit-text", limit: "figure" };
-const ABOUT = { hold: "what you hold", gas: "the gas", owe: "what you owe", limit: "the limit" };
+const NEXT = { hold: "gas-text", gas: "owe-text", owe: "limit-text", limit: "figure", sample: "gas-text", prepared: "gas-text", emission: "owe-text" };
+const ABOUT = { hold: "what you hold", gas: "the gas", owe: "what you owe", limit: "the limit", sample: "the sample", prepared: "the prepared gas", emission: "the emission" };
 
 /**
  * @param {HTMLElement} root @param {string} side @param {(intention: object) => void} dispatch

@@ -77,7 +77,8 @@ def held(draft: Drafting, case: Case) -> Held:
     name = _pair(draft, case, first, shown) if case.sample.paired else first
     if case.sample.water == SATURATED:
         name = _dried(draft, case, name, shown)
-    return Held(name, "mass_found", case.sample.mass.unit.factor, shown)
+    leaf = "" if case.sample.paired else "mass_found"        # of two masses neither alone stands for what is held
+    return Held(name, leaf, case.sample.mass.unit.factor, shown)
 
 
 def _train(draft: Drafting, case: Case, second: bool, shown: Shown) -> str:

@@ -119,7 +119,7 @@ def _mass_rate(draft: Drafting, case: Case, gamma: str, owed: Shown) -> tuple[st
     hours = case.emission.hours
     whole = draft.leaf(Leaf("t_year", _HOURS, "8760", "h/a", TABLE, "365 days of 24 h"))
     running = leaves.from_quantity(draft, case, "t_running", hours, "emission.hours")
-    name = draft.step(Step(relations.get("rate_over_operation"), {"m": name, "t": running, "t_a": whole}, "m_year", owed, "hours of operation", "m"))
+    name = draft.step(Step(relations.get("rate_over_operation"), {"m": name, "t": running, "t_a": whole}, "m_year", owed))
     return name, (*words, f"{hours.number.text} h of operation a year")
 
 
@@ -127,11 +127,11 @@ def _rate(draft: Drafting, case: Case, gamma: str, shown: Shown) -> tuple[str, t
     """Mass per time, by the flow or by the heat of the fuel."""
     if _by_flow(case.emission):
         q, words = _volume_flow(draft, case)
-        return draft.step(Step(relations.get("mass_rate"), {"gamma": gamma, "q": q}, "m_rate", shown, "times flow", "gamma")), words
+        return draft.step(Step(relations.get("mass_rate"), {"gamma": gamma, "q": q}, "m_rate", shown)), words
     if case.emission.heat is None:
         raise Missing("A mass rate by the fuel needs its heat input.", hint="Add it, e.g. '20 MW gross', or a flow.", field="emission.heat")
     E, words = per_heat(draft, case, gamma, Shown(1e-12, "ng/J"))
-    return draft.step(Step(relations.get("mass_rate_from_heat_rate"), {"E": E, "P": _heat(draft, case)}, "m_rate", shown, "times heat input", "E")), words
+    return draft.step(Step(relations.get("mass_rate_from_heat_rate"), {"E": E, "P": _heat(draft, case)}, "m_rate", shown)), words
 
 
 def _heat(draft: Drafting, case: Case) -> str:
@@ -150,7 +150,7 @@ def _per_heat(draft: Drafting, case: Case, gamma: str, owed: Shown) -> tuple[str
     name, words = _rate(draft, case, gamma, Shown(1.0 / 3600.0, "kg/h"))
     P = leaves.from_quantity(draft, case, "P_heat", emission.heat, "emission.heat")
     said = {GROSS: "gross heat", NET: "net heat", None: "heat, gross or net not stated"}[emission.heat_said]
-    return draft.step(Step(relations.get("mass_per_heat_from_mass_rate"), {"m": name, "P": P}, "E_heat", owed, "per heat", "m")), (*words, f"per {said}")
+    return draft.step(Step(relations.get("mass_per_heat_from_mass_rate"), {"m": name, "P": P}, "E_heat", owed)), (*words, f"per {said}")
 
 
 def _per_output(draft: Drafting, case: Case, gamma: str, owed: Shown) -> tuple[str, tuple[str, ...]]:
@@ -161,13 +161,13 @@ def _per_output(draft: Drafting, case: Case, gamma: str, owed: Shown) -> tuple[s
     name, words = _rate(draft, case, gamma, Shown(1.0 / 3600.0, "kg/h"))
     P = leaves.from_quantity(draft, case, "P_output", emission.output, "emission.output")
     said = emission.output_said or "gross or net not stated"
-    return draft.step(Step(relations.get("mass_per_output"), {"m": name, "P": P}, "E_output", owed, "per output", "m")), (*words, f"per output ({said})")
+    return draft.step(Step(relations.get("mass_per_output"), {"m": name, "P": P}, "E_output", owed)), (*words, f"per output ({said})")
 
 
 def _per_product(draft: Drafting, case: Case, gamma: str, owed: Shown) -> tuple[str, tuple[str, ...]]:
     name, words = _rate(draft, case, gamma, Shown(1.0 / 3600.0, "kg/h"))
     r = leaves.from_quantity(draft, case, "r_product", case.emission.product, "emission.product")
-    return draft.step(Step(relations.get("mass_per_product"), {"m": name, "r": r}, "e_product", owed, "per product", "m")), (*words, "per mass of product")
+    return draft.step(Step(relations.get("mass_per_product"), {"m": name, "r": r}, "e_product", owed)), (*words, "per mass of product")
 
 
 _RATES = {"rate": _mass_rate, "heat": _per_heat, "output": _per_output, "product": _per_product}

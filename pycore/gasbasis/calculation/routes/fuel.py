@@ -33,7 +33,7 @@ def per_heat(draft: Drafting, case: Case, gamma: str, shown: Shown) -> tuple[str
     else:
         arguments = {"gamma": gamma, "F_d": F, "A": _ambient(draft, case), "O": matrix.oxygen_dry(draft, case)}
         relation, words = "mass_per_heat_from_dry_oxygen", "by oxygen"
-    name = draft.step(Step(relations.get(relation), arguments, "E_heat", shown, "per heat of fuel", "gamma"))
+    name = draft.step(Step(relations.get(relation), arguments, "E_heat", shown))
     return name, (f"F factor of {_fuel_words(emission)}, {words}", "gross heat")
 
 

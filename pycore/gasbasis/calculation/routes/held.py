@@ -12,7 +12,7 @@ class Held:
     """A held value that is the result of steps."""
 
     name: str                          # of the result
-    leaf: str                          # the leaf that counts as held: what is turned round, and what "<" belongs to
+    leaf: str                          # the leaf that counts as held and is turned round; empty where no single one does
     leaf_factor: float                 # SI value of one of its units
     shown: Shown                       # how the result is printed
 

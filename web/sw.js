@@ -5,8 +5,8 @@
  * SHA-256 that the build wrote down; it takes over only when the page says so; the version before it is
  * deleted only after the new one has started Python once.
  *
- * In:  {type: "check"} · {type: "take-over"} · {type: "started"}
- * Out: {type: "offline", phase: "fetching"|"ready"|"failed", version, done, of, message}
+ * In:  {type: "check"} · {type: "take-over"} · {type: "started"} · {type: "changes"}
+ * Out: {type: "changes", changes} · {type: "offline", phase: "fetching"|"ready"|"failed", version, done, of, message}
  */
 const VERSION = "@VERSION@";
 const POLICY = "@POLICY@";
@@ -24,6 +24,7 @@ self.addEventListener("activate", (event) => event.waitUntil(self.clients.claim(
 self.addEventListener("message", (event) => {
   if (event.data.type === "take-over") self.skipWaiting();
   if (event.data.type === "started") event.waitUntil(deleteOlder());
+  if (event.data.type === "changes") event.waitUntil(tellChanges(event.source));
   if (event.data.type === "check") event.waitUntil(keepAll().catch(() => {}));
 });
 
@@ -89,7 +90,9 @@ async function fromOlder(asset) {
 }
 
 async function fetchVerified(asset) {
-  const response = await fetch(keyOf(asset), { cache: "no-cache" });
+  const response = await fetch(keyOf(asset), { cache: "no-cache" }).catch(() => {
+    throw new Error(`${asset.path} is missing from the copy and could not be fetched: no network, or no answer from the host`);
+  });
   if (!response.ok) throw new Error(`${asset.path} could not be fetched (${response.status})`);
   const bytes = await verified(response, asset);
   if (!bytes) throw new Error(`${asset.path} is not the file that belongs to version ${VERSION}`);
@@ -121,6 +124,12 @@ async function deleteOlder() {
   for (const name of await ownCaches()) {
     if (name !== CURRENT) await caches.delete(name);
   }
+}
+
+/** What this version changes, out of its own copy: a page of an older version asks before it is replaced. */
+async function tellChanges(page) {
+  const kept = await (await caches.open(CURRENT)).match(keyOf({ path: "changes.json" }));
+  page.postMessage({ type: "changes", changes: kept ? await kept.json() : [] });
 }
 
 async function tell(news) {

@@ -11,6 +11,7 @@ from gasbasis.errors import CoreError, NotUnderstood
 from gasbasis.language.edit import edit
 from gasbasis.language.gas import read_gas
 from gasbasis.language.statement import read_statement
+from gasbasis.series import terminal
 
 FIGURE, NOT_UNDERSTOOD, DOUBTS_OPEN = 0, 2, 3
 
@@ -21,6 +22,8 @@ def main(arguments: list[str] | None = None) -> int:
     options = parser.parse_args(arguments)
     if options.command == "check":
         return _check(options.file)
+    if options.command == "series":
+        return options.run(options)
     for choice in options.settle:
         if "=" not in choice:
             parser.error(f"--settle {choice}: give DOUBT=READING, e.g. hold.parts_by=volume")
@@ -87,6 +90,7 @@ def _parser() -> argparse.ArgumentParser:
     record.add_argument("--amends", default="", metavar="CHECKSUM", help="the checksum of the record that this one amends")
     record.add_argument("--why", default="", help="why it is amended")
     commands.add_parser("check", help="read a record back: is it unchanged, does it come to the same?").add_argument("file")
+    terminal.add_command(commands)
     return parser
 
 
@@ -102,7 +106,7 @@ def _add_sheet(restate: argparse.ArgumentParser) -> None:
     restate.add_argument("--rule", default="", help="the decision rule agreed, e.g. simple, guarded, three_way")
     restate.add_argument("--rule-book", default="", metavar="ID", help="a rule-book, for its usual readings and own constants")
     restate.add_argument("--uncertain", action="append", default=[], metavar='"NAME ± ..."',
-                         help='the uncertainty of an input: "T 2 K", "O2 0.2 % (k=2)", "value 5 %%"; repeatable')
+                         help='the uncertainty of an input: "T 2 K", "O2 0.2 %% (k=2)", "value 5 %%"; repeatable')
     restate.add_argument("--settle", action="append", default=[], metavar="DOUBT=READING", help="settle a doubt; repeatable")
     restate.add_argument("--usual", action="store_true", help="take the usual readings and list them")
     restate.add_argument("--json", action="store_true", help="print the whole answer as JSON")
@@ -139,7 +143,7 @@ def _with_uncertainties(sheet: dict, stated: list[str]) -> dict:
         if name not in _INPUTS or not amount.strip():
             raise NotUnderstood(f"--uncertain '{text}' names no input and its uncertainty.", hint=f"For example 'T 2 K'; inputs: {', '.join(_INPUTS)}.")
         for side, field in _INPUTS[name]:
-            record, _ = read_gas(sheet[side]) if side == "gas" else read_statement(sheet[side], side)
+            record, _ = read_gas(sheet.get(side, "")) if side == "gas" else read_statement(sheet.get(side, ""), side)
             piece = next((piece for piece in record.pieces if piece.field == field), None)
             if piece is not None:
                 sheet[side] = edit(sheet[side], side, field, f"{piece.text} ± {amount.strip().lstrip('±').strip()}")

@@ -1,4 +1,4 @@
-"""The two small npm libraries of the page, as their projects publish them: one module each, under libraries/."""
+"""The small npm libraries of the page, as their projects publish them: one module each, under libraries/."""
 from __future__ import annotations
 
 import json
@@ -9,17 +9,18 @@ from making.places import Places
 from making.steps import BuildFailed
 
 # package: its module for browsers; the page imports ../libraries/<package>.js
-LIBRARIES = {"idb": "build/index.js", "uqr": "dist/index.mjs"}
+LIBRARIES = {"idb": "build/index.js", "uqr": "dist/index.mjs", "uplot": "dist/uPlot.esm.js"}
+STYLES = {"uplot": "dist/uPlot.min.css"}
 
 
 def write_libraries(folder: Path, places: Places) -> None:
     """Copy each module. Raises BuildFailed when one is not where its package says."""
     folder.mkdir()
-    for name, module in LIBRARIES.items():
+    for name, module in (*LIBRARIES.items(), *STYLES.items()):
         path = _home(name, places) / module
         if not path.is_file():
-            raise BuildFailed(f"{name} does not hold {module}. See LIBRARIES in libraries.py.")
-        shutil.copyfile(path, folder / f"{name}.js")
+            raise BuildFailed(f"{name} does not hold {module}. See LIBRARIES and STYLES in libraries.py.")
+        shutil.copyfile(path, folder / f"{name}{path.suffix.replace('.mjs', '.js')}")
 
 
 def licences_of_libraries(places: Places) -> list[tuple[str, str, str]]:

@@ -22,6 +22,7 @@ def licences_text(runtime: Runtime, places: Places) -> str:
     for wheel in runtime.published:
         if not wheel.name.startswith("gasbasis-"):
             sections.append(_of_wheel(wheel))
+    sections += [_of_wheel(wheel) for wheel in sorted((places.downloads / "later").glob("*.whl"))]
     sections += _of_engine(places) + licences_of_libraries(places)
     return "\n".join(f"{RULE}\n{title}\nLicence: {licence}\n{RULE}\n\n{text.strip()}\n" for title, licence, text in sections)
 

@@ -9,6 +9,7 @@ TYPES = {
     ".webmanifest": "application/manifest+json",
     ".svg": "image/svg+xml",
     ".png": "image/png",
+    ".csv": "text/csv; charset=utf-8",
     ".txt": "text/plain; charset=utf-8",
     ".wasm": "application/wasm",
     ".zip": "application/zip",

@@ -31,8 +31,8 @@ def write_one_file(site: Path, places: Places) -> Path:
     shutil.copytree(site, work, ignore=shutil.ignore_patterns("sw.js", NAME))
     for name in _REPLACED:
         shutil.copyfile(_OWN / name, work / "js" / name)
-    page = (_OWN / "page-head.js").read_text(encoding="utf-8") + _bundled(work / "js" / "main.js", places, "unpackAll().then(() => {", "});")
-    worker = (_OWN / "worker-head.js").read_text(encoding="utf-8") + _bundled(work / "js" / "core-worker.js", places)
+    page = (_OWN / "page-head.js").read_text(encoding="utf-8") + _bundled("js/main.js", work, places, "unpackAll().then(() => {", "});")
+    worker = (_OWN / "worker-head.js").read_text(encoding="utf-8") + _bundled("js/core-worker.js", work, places)
     text = _page(work, page, {"worker": (worker.encode(), "text/javascript"), **_files(work)})
     target = site / NAME
     target.write_text(text, encoding="utf-8")
@@ -42,10 +42,10 @@ def write_one_file(site: Path, places: Places) -> Path:
     return target
 
 
-def _bundled(entry: Path, places: Places, before: str = "", behind: str = "") -> str:
-    """One script from a module and all it imports."""
+def _bundled(entry: str, work: Path, places: Places, before: str = "", behind: str = "") -> str:
+    """One script from a module and all it imports. Run from its folder: the bundler writes paths into the text."""
     text = run([_esbuild(places), entry, "--bundle", "--format=iife", "--platform=browser", "--target=es2022", "--minify-whitespace", "--charset=utf8",
-                f'--define:import.meta.url="{_BASE}"', "--external:node:*", "--external:ws", "--log-level=error"], why="bundling the one-file edition")
+                f'--define:import.meta.url="{_BASE}"', "--external:node:*", "--external:ws", "--log-level=error"], why="bundling the one-file edition", cwd=work)
     return f"{before}{text}{behind}\n"
 
 

@@ -25,7 +25,10 @@ LEAVE_OUT = ["pint/testsuite/", "pint/default_en.txt", "pint/constants_en.txt", 
 # Modules of the standard library that must stay although no traced run imports them: they are
 # imported inside functions, when something rare happens.
 KEEP = ["base64", "datetime", "decimal", "encodings.ascii", "encodings.latin_1", "hashlib", "json", "linecache", "locale",
-        "textwrap", "traceback", "unicodedata", "zlib"]
+        "textwrap", "traceback", "unicodedata", "zlib",
+        # a series: the file, the workbook (XlsxWriter), the time zones (tzdata, read out of its wheel)
+        "csv", "zoneinfo", "importlib.resources", "importlib.readers", "zipfile", "tempfile", "shutil", "xml.parsers", "urllib.parse", "fractions", "struct",
+        "encodings.cp1252", "encodings.utf_16", "encodings.utf_16_le", "encodings.utf_8_sig", "warnings", "copy", "uuid", "statistics"]
 
 
 @dataclass(frozen=True)

@@ -15,6 +15,7 @@ from making.places import DEMO, WEB, Places
 from making.policy import POLICY
 from making.runtime import Runtime
 from making.steps import BuildFailed
+from making.toolchain import download_locked
 
 ENGINE = ("pyodide.mjs", "pyodide.asm.mjs", "pyodide.asm.wasm")
 HEAD = '<meta charset="utf-8">'
@@ -71,16 +72,20 @@ def _write_examples(folder: Path) -> None:
     folder.mkdir()
     sheets = [json.loads(path.read_text(encoding="utf-8")) for path in sorted(DEMO.glob("*.json"))]
     (folder / "sheets.json").write_text(json.dumps(sheets, ensure_ascii=False, sort_keys=True), encoding="utf-8")
+    shutil.copyfile(DEMO / "logger_day.csv", folder / "logger_day.csv")
+    shutil.copyfile(DEMO / "series" / "logger_day.json", folder / "logger_day.json")
 
 
 def _write_runtime(folder: Path, runtime: Runtime, places: Places) -> None:
     folder.mkdir()
     for name in ENGINE:
         shutil.copyfile(places.pyodide / name, folder / name)
-    for path in (runtime.stdlib, *runtime.wheels):
+    later = download_locked("later", places)
+    for path in (runtime.stdlib, *runtime.wheels, *later):
         shutil.copyfile(path, folder / path.name)
     parts = {"lockInfo": runtime.lock_info, "stdlib": runtime.stdlib.name,
              "wheels": [{"file": wheel.name, "size": wheel.stat().st_size} for wheel in runtime.wheels],
+             "later": {wheel.name.partition("-")[0].lower(): {"file": wheel.name, "size": wheel.stat().st_size} for wheel in later},
              "engine": {"file": "pyodide.asm.wasm", "size": (folder / "pyodide.asm.wasm").stat().st_size}}
     (folder / "parts.js").write_text("/** Written by the build: what the worker loads. */\n"
                                      f"export const PARTS = {json.dumps(parts, indent=1, sort_keys=True)};\n", encoding="utf-8")

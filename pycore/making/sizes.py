@@ -9,13 +9,16 @@ from making.steps import BuildFailed, say
 
 BUDGET_MB = 6.4                         # gzip, everything fetched up to the first figure
 NOT_FOR_THE_FIGURE = ("licences.txt", "sw.js", ONE_FILE)
+# Fetched when a series is first opened, a workbook or a time zone asked for (beginnings of paths).
+LATER = ("runtime/tzdata-", "runtime/xlsxwriter-", "libraries/uplot.js", "js/regions/series.js", "js/regions/series-results.js", "js/regions/series-plot.js", "demo/logger_day")
 LISTED = 6
 
 
 def wire_sizes(site: Path) -> dict[str, int]:
     """The gzip size in bytes of each file that a first visit fetches before its figure."""
     return {path.relative_to(site).as_posix(): len(gzip.compress(path.read_bytes(), 6, mtime=0))
-            for path in sorted(site.rglob("*")) if path.is_file() and path.name not in NOT_FOR_THE_FIGURE}
+            for path in sorted(site.rglob("*")) if path.is_file() and path.name not in NOT_FOR_THE_FIGURE
+            and not path.relative_to(site).as_posix().startswith(LATER)}
 
 
 def report(site: Path) -> float:

@@ -12,12 +12,14 @@ import pytest
 pytestmark = pytest.mark.native
 NAMESPACES = ("http://www.w3.org/1998/Math/MathML", "http://www.w3.org/2000/svg", "http://www.w3.org/1999/xlink")
 ADDRESS = re.compile(r"""https?:(?://|\\/\\/)[^\s"'`)<>\\]+""")
+ONE_FILE = "gasbasis-one-file.html"      # holds the licences' texts, with their addresses; tests/browser/test_one_file.py opens it
 OWN_ENDINGS = (".html", ".js", ".css", ".svg", ".webmanifest", ".json")
 OUTSIDE_ADDRESSES = ("//", "http:", "https:", "/")
 
 
 def own_files(dist):
-    return [path for path in sorted(dist.rglob("*")) if path.suffix in OWN_ENDINGS and "runtime" not in path.relative_to(dist).parts]
+    return [path for path in sorted(dist.rglob("*")) if path.suffix in OWN_ENDINGS and not {"runtime", "libraries"} & set(path.relative_to(dist).parts)
+            and path.name != ONE_FILE]
 
 
 class Addresses(HTMLParser):
@@ -61,6 +63,16 @@ def test_addresses_in_the_page_are_relative_and_there(dist, html):
     assert [address for address in files if not (dist / address).is_file()] == []
 
 
+def test_the_bundled_libraries_ask_nobody(dist):
+    """They are as their projects publish them, comments and all; what counts is that they reach for nothing."""
+    texts = {path.name: path.read_text(encoding="utf-8") for path in (dist / "libraries").iterdir()}
+    assert set(texts) == {"idb.js", "uqr.js", "uplot.js", "uplot.css"}
+    reaching = re.compile(r"\b(?:fetch|XMLHttpRequest|WebSocket|EventSource|sendBeacon|importScripts|eval)\s*\(|\bimport\s*\(|new\s+Function\b|^\s*(?:import|export)\b[^;\n]*\bfrom\s*[\"']", re.MULTILINE)
+    assert {name: reaching.findall(text) for name, text in texts.items() if reaching.search(text)} == {}
+    licences = (dist / "licences.txt").read_text(encoding="utf-8")
+    assert all(f"{name} " in licences for name in ("idb", "uqr", "uplot"))
+
+
 def test_modules_and_styles_import_by_relative_address(dist):
     pattern = re.compile(r"""(?:^|\n)\s*(?:import|export)\s[^;'"]*?from\s*["']([^"']+)["']|@import\s*(?:url\()?["']?([^"')]+)""")
     imports = [(path, match.group(1) or match.group(2)) for path in own_files(dist) if path.suffix in (".js", ".css")
@@ -71,9 +83,11 @@ def test_modules_and_styles_import_by_relative_address(dist):
 
 
 def test_every_module_of_the_page_is_fetched_at_once(dist, html):
-    """Named in the head, not found level by level; a module that nothing imports would be missing here."""
-    modules = {path.relative_to(dist).as_posix() for path in dist.glob("js/**/*.js")} - {"js/main.js", "js/core-worker.js"}
-    assert set(html.preloaded) == modules and len(modules) > 10
+    """Named in the head, not found level by level; a module that nothing imports would be missing here. The worker's own, and the series, come when asked."""
+    modules = {path.relative_to(dist).as_posix() for folder in ("js", "libraries") for path in dist.glob(f"{folder}/**/*.js")} 
+    later = {"js/main.js", "js/core-worker.js", "js/engine.js", "js/series-tasks.js", "js/regions/series.js", "js/regions/series-plot.js", "js/regions/series-results.js",
+             "libraries/uplot.js"}
+    assert set(html.preloaded) == modules - later and later <= modules and len(modules) > 10
 
 
 def test_policy_in_the_page_is_that_of_the_server(html):
@@ -84,7 +98,7 @@ def test_policy_in_the_page_is_that_of_the_server(html):
 def test_service_worker_lists_every_file(dist):
     source = (dist / "sw.js").read_text(encoding="utf-8")
     listed = json.loads(re.search(r"const ASSETS = (\[.*?\n\]);", source, re.DOTALL).group(1))
-    there = sorted(path.relative_to(dist).as_posix() for path in dist.rglob("*") if path.is_file() and path.name != "sw.js")
+    there = sorted(path.relative_to(dist).as_posix() for path in dist.rglob("*") if path.is_file() and path.name not in ("sw.js", ONE_FILE))
     assert [asset["path"] for asset in listed] == there
     for asset in listed:
         content = (dist / asset["path"]).read_bytes()
@@ -93,11 +107,14 @@ def test_service_worker_lists_every_file(dist):
 
 
 def archives(dist):
-    return sorted([*dist.glob("runtime/*.whl"), *dist.glob("runtime/*.zip")])
+    """Those that the build writes; what a series asks for lies there as it was published."""
+    return sorted([*dist.glob("runtime/*-cp314-*.whl"), *dist.glob("runtime/*.zip")])
 
 
 def test_wheels_are_compiled_for_the_page(dist):
-    wheels = {path.name.split("-")[0]: path for path in dist.glob("runtime/*.whl")}
+    published = {path.name.split("-")[0] for path in dist.glob("runtime/*.whl") if "-cp314-" not in path.name}
+    assert published == {"tzdata", "xlsxwriter"}           # a series asks for them, as they were published
+    wheels = {path.name.split("-")[0]: path for path in dist.glob("runtime/*-cp314-*.whl")}
     assert set(wheels) == {"gasbasis", "pint", "uncertainties", "flexcache", "flexparser", "platformdirs", "typing_extensions"}
     for path in wheels.values():
         assert path.name.endswith("-cp314-none-any.whl")
@@ -148,3 +165,9 @@ def test_transfer_to_the_first_figure_is_within_the_budget(dist):
     """The issue's number: 6.4 MB gzip."""
     from making.sizes import wire_sizes
     assert sum(wire_sizes(dist).values()) / 1e6 <= 6.4
+
+
+def test_the_change_log_begins_with_this_version_and_says_whether_numbers_change(dist):
+    from gasbasis import __version__
+    changes = json.loads((dist / "changes.json").read_text(encoding="utf-8"))
+    assert changes[0]["version"] == __version__ and all(entry["numbers"].strip() and entry["date"] for entry in changes)

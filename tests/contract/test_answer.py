@@ -33,7 +33,8 @@ def test_every_task_answers() -> None:
     code = json.loads(answer(json.dumps({"task": "link", "sheet": sheet, "figure": "8.339 µg/m³"})))["answer"]["code"]
     requests = {"restate": {"sheet": sheet}, "edit": {"text": "CO 1 ppm", "side": "hold", "field": "water", "to": "dry"},
                 "search": {"what": "species", "text": "merc"}, "link": {"sheet": sheet, "figure": ""}, "open": {"code": code},
-                "vary": {"sheet": sheet, "field": "hold.value", "low": "1", "high": "3"}, "monte_carlo": {"sheet": {**sheet, "hold": "Hg 1 ± 0.1 ppb v/v"}}, "record": {"sheet": sheet, "about": {"made_at": "2026-03-31T14:05:00+02:00"}},
+                "vary": {"sheet": sheet, "field": "hold.value", "low": "1", "high": "3"},
+                "monte_carlo": {"sheet": {**sheet, "hold": "Hg 1 ± 0.1 ppb v/v"}}, "record": {"sheet": sheet, "about": {"made_at": "2026-03-31T14:05:00+02:00"}},
                 "receive": {"text": code}, "check_sheets": {"sheets": [sheet]}, "compare": {"mine": sheet, "theirs": {**sheet, "hold": "Hg 2 ppb v/v"}}}
     requests["open_record"] = {"record": json.loads(answer(json.dumps({"task": "record", **requests["record"]})))["answer"]["record"]}
     for task in TASKS:

@@ -48,6 +48,16 @@ def test_differences_that_act_on_each_other_are_said_to() -> None:
     assert "acting on each other" in found["interplay_text"]
 
 
+@pytest.mark.parametrize(("mine", "change", "factor"), [
+    (Sheet(hold="NOx 100 mg/m3 at 273.15 K, 101.325 kPa, dry", owe="kg/h", emission="flow 10000 m3/h at 273.15 K, 101.325 kPa, dry"),
+     {"emission": "flow 12000 m3/h at 273.15 K, 101.325 kPa, dry"}, 1.2),
+    (Sheet(sample="Hg 12.5 ng, volume 10 L at 20 °C, 101.3 kPa", owe="µg/m3 at 0 °C, 101.325 kPa"), {"sample": "Hg 25 ng, volume 10 L at 20 °C, 101.3 kPa"}, 2.0),
+], ids=["emission", "sample"])
+def test_how_the_number_came_about_is_compared_too(mine: Sheet, change: dict, factor: float) -> None:
+    found = compared(mine, replace(mine, **change))
+    assert len(found["differences"]) == 1 and found["differences"][0]["factor"] == pytest.approx(factor, rel=1e-12)
+
+
 @pytest.mark.parametrize("change", [{"gas": "9.2 % O2 dry;  ambient O2 21 %"}, {"hold": "NOx 142 ppm by volume, as NO2, dry"}, {"title": "theirs"}, {"notes": {"hold.parts_by": "x"}}])
 def test_another_way_of_writing_is_no_difference(change: dict) -> None:
     assert differences(MINE, replace(MINE, **change)) == ()

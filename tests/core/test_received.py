@@ -2,6 +2,7 @@
 from __future__ import annotations
 
 import json
+import time
 
 import pytest
 
@@ -34,7 +35,7 @@ def test_a_sheet_is_opened(data: dict) -> None:
 
 
 @pytest.mark.parametrize(("text", "said"), [
-    ("", "nothing to open"), ("   \n", "nothing to open"), ("hello there", "no link, code or record"), ("NOx 142 ppm dry", "no link, code or record"), ("https://example.org/", "no link, code or record"),
+    ("", "nothing to open"), ("   \n", "nothing to open"), ("hello there", "no link, code or record"), ("NOx 142 ppm dry", "no link, code or record"), ("2 t of CO2 an hour", "no link, code or record"), ("sample #3 taken at noon", "no link, code or record"), ("https://example.org/", "no link, code or record"),
     (CODE[:-5], "cut off or altered"), (f"https://example.org/#{CODE[:30]}", "cut off or altered"), ("9z" + CODE[2:], "version '9'"), (RECORD[:200], "no JSON"), ("{}", "none that gasbasis wrote"),
     ("[1, 2]", "no link, code or record"), ('{"sheet": {"hold": 3}}', "none that gasbasis wrote"), ('{"hold": "x", "colour": "red"}', "parts this version does not know"), ("{" * 5000, "no JSON"),
     ('{"a":' * 300 + "1" + "}" * 300, "no JSON"), ('{"kind": "gasbasis record", "schema": 7}', "schema 7")])
@@ -56,3 +57,11 @@ def test_sheets_of_a_file_are_checked_one_by_one() -> None:
     assert [row["sheet"] for row in rows[1:]] == [None, None, None] and all(row["problem"]["message"] for row in rows[1:])
     with pytest.raises(NotUnderstood):
         checked("x")
+
+
+@pytest.mark.parametrize("text", ["1t" + "a" * 190_000 + " !", " " * 190_000 + "x", "%25" * 60_000, "#1z" * 60_000, "1" * 190_000 + "ppm", "[" * 190_000, '{"a":' + '"' * 190_000, "\ud800" * 1_000])
+def test_a_huge_or_odd_paste_is_refused_at_once(text: str) -> None:
+    begun = time.process_time()
+    with pytest.raises(NotUnderstood):
+        received(text)
+    assert time.process_time() - begun < 0.2

@@ -31,7 +31,8 @@ def test_a_record_holds_what_a_checker_needs() -> None:
     assert record["made_at"] == AT and record["made_by"] == "A. Tester" and record["notes"] == "Probe moved once."
     assert record["app"]["version"] and len(record["app"]["data"]) == 64
     assert record["sheet"]["hold"] == LIMITED.hold and record["sheet"]["title"] == "Second run"
-    assert {"title": "reported as", "text": "as NO2", "state": "stated"} in record["understood"]["hold"]
+    held = next(line for line in record["texts"] if line["side"] == "hold")
+    assert held["typed"] == LIMITED.hold and {"title": "reported as", "text": "as NO2", "state": "stated"} in held["understood"]
     settled = next(doubt for doubt in record["settled"] if doubt["title"] == "parts by")
     assert settled["note"] == "the analyser's manual, page 4" and settled["reading"].startswith("by volume")
     assert record["verdict"]["rule"] == "guarded acceptance, w = U" and record["verdict"]["words"] == "not shown within"
@@ -39,6 +40,18 @@ def test_a_record_holds_what_a_checker_needs() -> None:
     assert all(step["title"] and (step["source_text"] or step["kind"] == "unit") for step in record["working"])
     assert any(source["text"].startswith("ISO 14912") for source in record["sources"])
     assert record["cautions"] == list(CAUTIONS) and record["link_code"]
+
+
+EMITTED = Sheet(hold="NOx 100 mg/m3 at 273.15 K, 101.325 kPa, dry", owe="kg/h", emission="flow 10000 m3/h at 273.15 K, 101.325 kPa, dry")
+SAMPLED = Sheet(sample="Hg 12.5 ng, volume 10 L at 20 °C, 101.3 kPa", owe="µg/m3 at 0 °C, 101.325 kPa")
+
+
+@pytest.mark.parametrize(("sheet", "side", "title"), [(EMITTED, "emission", "The emission"), (SAMPLED, "sample", "The sample")], ids=["emission", "sample"])
+def test_every_line_of_the_sheet_is_in_its_record(sheet: Sheet, side: str, title: str) -> None:
+    record = made(sheet)
+    line = next(line for line in record["texts"] if line["side"] == side)
+    assert line["typed"] == getattr(sheet, side) and line["title"] == title and line["understood"]
+    assert getattr(sheet, side) in " ".join(plain_record(record).split()) and open_record(json.loads(json.dumps(record)))["same"]
 
 
 def test_only_texts_and_whole_numbers_are_sealed() -> None:
@@ -92,6 +105,13 @@ def test_open_doubts_are_recorded_as_open() -> None:
     assert record["figure"] is None and record["spread"]["depends"] == "depends on: parts by"
     assert [doubt["title"] for doubt in record["left_open"]] == ["parts by"]
     assert open_record(record)["same"] and "left open" in plain_record(record)
+
+
+def test_what_was_not_asked_says_what_it_was_computed_as() -> None:
+    """A bare ± is taken as U with k = 2 (JCGM 100:2008, 6.2 leaves k to be stated): that is no silent choice."""
+    record = made(Sheet(hold="NOx 142 ± 5 ppmv as NO2, dry", owe="mg/m3 at 273.15 K, 101.3 kPa, dry"))
+    unseen = next(doubt for doubt in record["no_visible_effect"] if doubt["title"].startswith("±"))
+    assert unseen["computed_as"] == "expanded, k = 2" and "computed as expanded, k = 2" in " ".join(plain_record(record).split())
 
 
 def test_an_amended_record_names_the_one_before_and_why() -> None:

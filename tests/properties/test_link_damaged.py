@@ -2,7 +2,6 @@
 from __future__ import annotations
 
 import json
-import os
 import random
 import time
 import zlib
@@ -12,9 +11,10 @@ import pytest
 from gasbasis.errors import NotUnderstood
 from gasbasis.records import link
 from gasbasis.records.link import read_code, write_code
-from gasbasis.records.sheet import Sheet
+from gasbasis.records.received import received
+from gasbasis.records.sheet import Sheet, write_sheet
 
-COUNT = 20_000 if os.environ.get("GASBASIS_LONG") else 2_000
+COUNT = 20_000
 LONGEST_S = 0.2
 ALPHABET = "ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789-_"
 SHEETS = (
@@ -91,6 +91,20 @@ def test_damaged_codes_open_to_the_same_sheet_or_not_at_all() -> None:
         assert opened is None or opened in genuine.values(), code
         refused += opened is None
     assert refused > COUNT * 0.9
+
+
+def test_the_paste_box_is_no_easier_to_deceive() -> None:
+    """The same attacks pasted, some inside a sentence: the very sheet, or a message."""
+    dice = random.Random(20_250_102)
+    genuine = [write_sheet(read_code(code).sheet) for code in CODES]
+    for _ in range(COUNT // 4):
+        text = dice.choice(("", "https://example.org/x/#", "See https://example.org/%23")) + dice.choice(ATTACKS)(dice) + dice.choice(("", ".", ")\n", " - regards"))
+        begun = time.process_time()
+        try:
+            assert received(text)["sheet"] in genuine, text
+        except NotUnderstood as error:
+            assert error.message and error.hint
+        assert time.process_time() - begun < LONGEST_S, text[:80]
 
 
 def test_every_single_altered_character_is_noticed() -> None:

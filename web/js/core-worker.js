@@ -5,19 +5,23 @@
  * In:  {type: "start", counted: boolean}, then {id, request: string}
  * Out: {type: "progress", stage, done, of} · {type: "ready", version} · {type: "failed", message}
  *      {id, answer: string}   the JSON text that Python answered
+ * A series has a worker of its own with the messages of series-tasks.js.
  */
 import { loadPyodide } from "../runtime/pyodide.mjs";
 import { ENGINE } from "./engine.js";
 import { PARTS } from "../runtime/parts.js";
+import { seriesTask } from "./series-tasks.js";
 
 const RUNTIME = new URL("../runtime/", import.meta.url).href;
 const WHEELS = "/wheels";
 
 /** @type {((request: string) => string) | null} */
 let answer = null;
+let python = null;
 
 self.addEventListener("message", (event) => {
   if (event.data.type === "start") start(event.data.counted);
+  else if (event.data.type === "series") seriesTask(python, event.data, fetchWheel, addWheels);
   else respond(event.data.id, event.data.request);
 });
 
@@ -41,8 +45,9 @@ async function start(counted) {
   try {
     if (counted) countEngineBytes();
     report("loading", 0, PARTS.engine.size);
-    const [python, wheels] = await Promise.all([startPython(), Promise.all(PARTS.wheels.map(fetchWheel))]);
+    const [started, wheels] = await Promise.all([startPython(), Promise.all(PARTS.wheels.map(fetchWheel))]);
     report("importing", 0, 1);
+    python = started;
     addWheels(python, wheels);
     answer = python.pyimport("gasbasis.answer").answer;
     python.pyimport("gasbasis.answer").report_progress_to((done, of) => report("drawing", done, of));

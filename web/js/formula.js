@@ -44,3 +44,20 @@ export function equation(result, tree, spoken, value) {
   math.setAttribute("aria-label", spoken);
   return math;
 }
+
+/** Where one is wider than its place, it can be scrolled by keys as well. @type {ResizeObserver | null} */
+const widths = "ResizeObserver" in globalThis ? new ResizeObserver((entries) => {
+  for (const { target } of entries) {
+    const box = /** @type {HTMLElement} */ (target);
+    if (box.scrollWidth > box.clientWidth) box.tabIndex = 0;
+    else box.removeAttribute("tabindex");
+  }
+}) : null;
+
+/** Put an equation into its box. @param {HTMLElement} box @param {Element} drawn */
+export function placeEquation(box, drawn) {
+  box.setAttribute("role", "group");
+  box.setAttribute("aria-label", "Formula");
+  box.append(drawn);
+  widths?.observe(box);
+}

@@ -108,5 +108,5 @@ const now = () => new Date().toISOString();
 const sorted = (record) => Object.entries(record ?? {}).filter(([, text]) => text).sort(([one], [other]) => (one < other ? -1 : 1));
 /** @param {import("./state.js").Sheet} one @param {import("./state.js").Sheet} other */
 export const sameSheet = (one, other) => contentOf({ sheet: one }) === contentOf({ sheet: other });
-/** What makes two sheets the same, whatever the order of their parts. */
-const contentOf = ({ sheet }) => JSON.stringify([sheet.hold, sheet.gas, sheet.owe, sheet.limit, sheet.rule_book, sheet.title, sorted(sheet.settled), sorted(sheet.notes)].map((part) => part ?? ""));
+/** What makes two sheets the same, whatever the order of their parts; a part that is empty is not there. */
+const contentOf = ({ sheet }) => JSON.stringify(sorted(sheet).filter(([name]) => name !== "schema").map(([name, part]) => [name, typeof part === "object" ? sorted(part) : part]).filter(([, part]) => part.length));

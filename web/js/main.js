@@ -12,6 +12,7 @@ import { mountBudget } from "./regions/budget.js";
 import { mountCompare } from "./regions/compare.js";
 import { mountDoubts } from "./regions/doubts.js";
 import { mountFigure } from "./regions/figure.js";
+import { mountHelp } from "./regions/help.js";
 import { mountKept } from "./regions/kept.js";
 import { mountKeys } from "./regions/keys.js";
 import { mountPanels } from "./regions/panels.js";
@@ -19,6 +20,7 @@ import { mountPassOn } from "./regions/pass-on.js";
 import { mountReceive } from "./regions/receive.js";
 import { mountRecord } from "./regions/record.js";
 import { mountRuleBooks } from "./regions/rule-books.js";
+import { mountSeries } from "./regions/series-door.js";
 import { mountSide } from "./regions/side.js";
 import { mountStatus } from "./regions/status.js";
 import { mountSteps } from "./regions/steps.js";
@@ -37,8 +39,8 @@ const first = { ways: [], sheet: { ...emptySheet(), ...typedAlready(sheetInHand(
   notice: "", aside: null, panel: "", rows: null, rowsProblem: "", passed: null, received: null, record: null, amends: null, compared: null,
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
-const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); } });
-let offline = null, resting = 0, ready = false, focusNext = null;
+const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); if (now.phase === "failed") mendCopy(); } });
+let mending = false, offline = null, resting = 0, ready = false, focusNext = null;
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {
@@ -50,7 +52,26 @@ function onReady() {
   if (ready) return;
   ready = true;
   core.ask({ task: "catalogue" }).then((catalogue) => state.change({ catalogue }), (error) => state.change({ notice: error.message }));
-  offline = startOffline({ onState: (now) => state.change({ offline: now }), beforeReload: () => holdOnTo(state.get().sheet, state.get().row) });
+  keepOffline();
+  offline.booted();
+}
+
+function keepOffline() {
+  offline ??= startOffline({ onState: onOffline, beforeReload: () => holdOnTo(state.get().sheet, state.get().row) });
+}
+
+/** A core that cannot start may have been given a damaged file of the kept copy: that is checked, mended, and the start tried once more. */
+function mendCopy() {
+  if (ready || mending) return;
+  mending = true;
+  keepOffline();
+}
+
+function onOffline(now) {
+  state.change({ offline: now });
+  if (now.phase !== "ready" || !mending || state.get().core.phase !== "failed") return;
+  core.restart();
+  restate();
 }
 
 function restate() {
@@ -220,18 +241,19 @@ const INTENTIONS = {
   draw, vary,
   "stop-drawing": () => { state.change({ drawn: null }); core.restart(); restate(); },
   update: () => offline?.takeUpdate(),
-  later: () => state.change({ offline: { ...state.get().offline, update: false } }),
+  later: () => offline?.later(),
 };
 const dispatch = (intention) => INTENTIONS[intention.type](intention);
 
 const regions = [
-  mountPanels(["pass-on", "kept", "receive", "record", "compare"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
+  mountPanels(["pass-on", "kept", "receive", "record", "compare", "series"].map($), document.querySelector('.top [data-action="more"]'), dispatch),
   ...SIDES.map((side) => mountSide($(side), side, dispatch)), mountWays($("hold"), $, dispatch),
   mountRuleBooks($("owe"), dispatch), mountExamples($("examples"), dispatch), mountFigure($("figure"), $("spoken"), dispatch), mountDoubts($("doubts"), dispatch),
   mountVerdict($("verdict"), dispatch), mountSteps($("steps")), mountWorking($("working")), mountBudget($("budget"), dispatch), mountVary($("vary"), dispatch),
   mountStatus($("status"), part(document, "boot"), $("notice"), $("more"), dispatch), mountTools(document.querySelector(".top"), $("more"), dispatch),
   mountPassOn($("pass-on"), dispatch), mountKept($("kept"), dispatch, { proposed: figureNamed, file: kept.fileOf }), mountReceive($("receive"), dispatch),
-  mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountAside($("aside"), dispatch),
+  mountRecord($("record"), dispatch), mountCompare($("compare"), dispatch), mountSeries($("series")), mountAside($("aside"), dispatch),
+  mountHelp(["hold", "gas", "owe", "limit", "doubts", "steps", "verdict", "working", "budget", "pass-on", "kept", "receive", "record", "compare"].map($)),
 ];
 mountKeys($("keys"));
 measureViewport($("figure"));

@@ -2,22 +2,25 @@
  * Registers the service worker, tells the page when it is ready offline, and asks before an update.
  *
  * @typedef {{phase: "unsupported"|"fetching"|"ready"|"failed", version: string, done: number, of: number,
- *            checkedAt: string, message: string, update: boolean}} OfflineState
+ *            checkedAt: string, message: string, update: boolean, changes: object[], persistent: boolean | null}} OfflineState
+ *   `persistent`: whether the browser promised not to clear the copy when space is short; null when it does not say.
+ *   `changes`: what the waiting version changes, newest first.
  *   `update`: a newer version is kept and verified, and waits for the person's yes.
  */
 
 /**
- * Call it when the core is ready, so that fetching for later does not slow the first figure.
+ * Call it when the core is ready, so that fetching for later does not slow the first figure, or when it cannot start, to mend
+ * a damaged copy. `booted` tells that this version has started Python: only then may the version before it go.
  *
  * @param {{onState?: (state: OfflineState) => void, beforeReload?: () => void | Promise<void>}} options
- * @returns {{state: OfflineState, takeUpdate: () => void, check: () => void}}
+ * @returns {{state: OfflineState, takeUpdate: () => void, later: () => void, check: () => void, booted: () => void}}
  */
 export function startOffline({ onState = () => {}, beforeReload = () => {} } = {}) {
   /** @type {OfflineState} */
-  let state = { phase: "fetching", version: "", done: 0, of: 0, checkedAt: "", message: "", update: false };
+  let state = { phase: "fetching", version: "", done: 0, of: 0, checkedAt: "", message: "", update: false, changes: [], persistent: null };
   /** @type {ServiceWorkerRegistration | null} */
   let registration = null;
-  let reloading = false;
+  let reloading = false, started = false, postponed = false;
 
   function change(patch) {
     state = { ...state, ...patch };
@@ -25,6 +28,7 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
   }
 
   function onNews({ data, source }) {
+    if (data?.type === "changes") change({ changes: data.changes });
     if (data?.type !== "offline") return;
     if (registration && source !== registration.active && registration.active) return;   // a newer version being fetched
     const checkedAt = data.phase === "ready" ? new Date().toISOString() : state.checkedAt;
@@ -33,7 +37,11 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
 
   /** A worker that waits is asked about, also when it was left waiting by an earlier visit. */
   function watchForUpdate() {
-    const look = () => change({ update: Boolean(registration.waiting && registration.active) });
+    const look = () => {
+      const update = Boolean(registration.waiting && registration.active) && !postponed;
+      if (update) registration.waiting.postMessage({ type: "changes" });
+      change({ update });
+    };
     look();
     registration.addEventListener("updatefound", () => {
       registration.installing?.addEventListener("statechange", look);
@@ -48,6 +56,17 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
 
   function check() {
     registration?.active?.postMessage({ type: "check" });
+  }
+
+  /** Not now: asked again at the next start. */
+  function later() {
+    postponed = true;
+    change({ update: false });
+  }
+
+  function booted() {
+    started = true;
+    registration?.active?.postMessage({ type: "started" });
   }
 
   async function onNewController() {
@@ -71,10 +90,11 @@ export function startOffline({ onState = () => {}, beforeReload = () => {} } = {
     }
     if (!registration) return;         // service workers are blocked: nothing is kept, nothing is promised
     watchForUpdate();
-    registration.active?.postMessage({ type: "started" });
+    change({ persistent: await navigator.storage?.persist?.().catch(() => null) ?? null });
+    if (started) booted();
     check();
   }
 
   start();
-  return { takeUpdate, check, get state() { return state; } };
+  return { takeUpdate, later, check, booted, get state() { return state; } };
 }

@@ -52,7 +52,9 @@ class Case:
         record = self.record(side)
         left = tuple(doubt for doubt in record.ambiguities if doubt.id != doubt_id)
         changed = replace(record, **dict(reading.patch), ambiguities=left)
-        chosen = {**self.chosen, **{f"{side}.{name}": reading.label for name, _ in reading.patch}}
+        # How far a number may be off is no other number: it stays the one that was typed.
+        taken = {} if field.endswith("_spread") else {f"{side}.{name}": reading.label for name, _ in reading.patch}
+        chosen = {**self.chosen, **taken}
         return replace(self, **{side: changed}, chosen=chosen)
 
 

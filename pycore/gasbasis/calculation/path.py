@@ -11,6 +11,7 @@ from types import MappingProxyType
 from typing import Mapping
 
 from gasbasis.errors import OutOfRange
+from gasbasis.language.basis import Quantity
 from gasbasis.relations.relation import OutsideValidity, Relation
 
 TYPED, TABLE, READING, CONVENTION = "typed", "table", "reading", "convention"
@@ -68,6 +69,18 @@ class Choice:
 
 
 @dataclass(frozen=True)
+class Decision:
+    """What the path was laid by: whether the first lies above the second. A row of a series on which it
+    falls otherwise needs a path of its own."""
+
+    left: str | float | Quantity       # a leaf or result by name, a number in SI, or a quantity that is no leaf
+    right: str | float | Quantity
+    or_equal: bool
+    above: bool
+    before: int                        # all that is named is known before the step with this index
+
+
+@dataclass(frozen=True)
 class Path:
     leaves: Mapping[str, Leaf]
     steps: tuple[Step, ...]
@@ -79,6 +92,7 @@ class Path:
     basis: tuple[str, ...]             # the owed basis in words, part by part
     species_text: str = ""
     warnings: tuple[str, ...] = ()
+    decisions: tuple[Decision, ...] = ()
     correlations: Mapping[tuple[str, str], float] = field(default_factory=dict)   # pairs of leaf names
 
 
@@ -117,6 +131,7 @@ class Drafting:
         self.steps: list[Step] = []
         self.choices: list[Choice] = []
         self.warnings: list[str] = []
+        self.decisions: list[Decision] = []
 
     def leaf(self, leaf: Leaf) -> str:
         self.leaves.setdefault(leaf.name, leaf)
@@ -133,6 +148,18 @@ class Drafting:
             return self.leaves[name].value
         step = next(step for step in self.steps if step.result == name)
         return step.relation.value(**{argument: self.value(source) for argument, source in step.arguments.items()})
+
+    def is_above(self, left: str | float | Quantity, right: str | float | Quantity, or_equal: bool = False) -> bool:
+        """Whether one value lies above another. Every choice that looks at a value asks here, so that the path keeps it."""
+        first, second = self._worth(left), self._worth(right)
+        above = first > second or or_equal and first == second
+        self.decisions.append(Decision(left, right, or_equal, above, len(self.steps)))
+        return above
+
+    def _worth(self, what: str | float | Quantity) -> float:
+        if isinstance(what, Quantity):
+            return what.si
+        return self.value(what) if isinstance(what, str) else what
 
     def choose(self, title: str, reason: str, source: str = "") -> None:
         self.choices.append(Choice(title, reason, source, len(self.steps)))

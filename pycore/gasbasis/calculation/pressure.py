@@ -20,7 +20,7 @@ def gas_pressure(draft: Drafting, case: Case, why: str) -> str:
     if gas.pressure_route is not None:
         given = leaves.from_quantity(draft, case, "p_gauge", gas.pressure_route.get("pressure"), "gas.pressure_route")
         whole = draft.step(Step(relations.get("absolute_pressure"), {"p_b": barometer(draft, case), "p_g": given}, "p_absolute", _SHOWN))
-        if draft.value(whole) <= 0:
+        if not draft.is_above(whole, 0.0):
             raise OutOfRange("Barometer and gauge add up to no pressure at all.", hint="Check the sign and the unit of the gauge or static pressure.",
                              field="gas.pressure_route")
         return whole

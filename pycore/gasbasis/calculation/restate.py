@@ -273,17 +273,16 @@ class _Laying:
     def correct_oxygen(self, ambient: str, owed: Quantity) -> None:
         """From the measured oxygen to the owed one, as far as the rule lets it."""
         rule, measured = self.case.rule, matrix.oxygen_dry(self.draft, self.case)
-        oxygen = self.draft.value(measured)
-        if rule is not None and rule.one_sided and oxygen <= owed.si:
+        if rule is not None and rule.one_sided and not self.draft.is_above(measured, owed.si):
             self.draft.choose("No oxygen correction", f"the rule corrects only above its reference oxygen of {owed.number.text} %",
                               f"{rule.title}, {rule.clause}")
             return
-        if rule is not None and rule.diluent_cap is not None and oxygen > float(rule.diluent_cap.number) / 100:
+        if rule is not None and rule.diluent_cap is not None and self.draft.is_above(measured, float(rule.diluent_cap.number) / 100):
             cap = rule.diluent_cap
             self.draft.choose("Diluent cap", f"the measured oxygen is above the rule's cap; {cap.text} % is used in its place",
                               f"{rule.title}, {cap.locator}")
             measured = self.draft.leaf(Leaf("O_cap", float(cap.number) / 100, cap.text, "%", TABLE, f"{rule.title}, {cap.locator}"))
-        elif oxygen > self.draft.value(ambient) - NEAR_AMBIENT:
+        elif self.draft.value(measured) > self.draft.value(ambient) - NEAR_AMBIENT:
             self.draft.warnings.append("The measured oxygen is within 2 % of ambient: the correction multiplies every error in it.")
         self.oxygen_step("corrected_to_reference_oxygen", {"A": ambient, "O_ref": self.oxygen_leaf("owe"), "O": measured},
                          f"oxygen to {owed.number.text} %")
@@ -323,7 +322,8 @@ class _Laying:
             self.to_bases()
         return Path(self.draft.leaves, tuple(self.draft.steps), tuple(self.draft.choices), self.held, self.held_factor,
                     self.place.name,
-                    self.owed_shown, basis_words(case, self.place.water, self.draft), species_words(case, self.place.entity), tuple(self.draft.warnings))
+                    self.owed_shown, basis_words(case, self.place.water, self.draft), species_words(case, self.place.entity), tuple(self.draft.warnings),
+                    tuple(self.draft.decisions))
 
     def needs_basis_change(self) -> bool:
         hold, owe = self.case.hold, self.case.owe

@@ -32,7 +32,7 @@ def _with_droplets(draft: Drafting, case: Case, why: str) -> str:
     if case.gas.water_content is None and case.gas.water_route is None:
         return saturated
     measured = _measured(draft, case, why)
-    taken, words = (measured, "measured") if draft.value(measured) < draft.value(saturated) else (saturated, "saturated")
+    taken, words = (measured, "measured") if draft.is_above(saturated, measured) else (saturated, "saturated")
     draft.choose(f"Droplets: the {words} water content is taken", "droplets are caught with the vapour, so the lower of measured and saturated counts",
                  facts.source("us-epa-method-4").title)
     return taken
@@ -55,7 +55,7 @@ def residual_water(draft: Drafting, case: Case) -> str:
     if case.gas.water_content is None and case.gas.water_route is None:
         return left
     whole = water_content(draft, case, "")
-    if draft.value(whole) < draft.value(left):
+    if draft.is_above(left, whole):
         draft.choose("The cooler takes out no water", "the gas holds less water than it could hold at the cooler")
         return whole
     return left
@@ -63,7 +63,7 @@ def residual_water(draft: Drafting, case: Case) -> str:
 
 def _from_vapour(draft: Drafting, case: Case, vapour: str, pressure: Quantity | None, name: str = "h") -> str:
     total = leaves.from_quantity(draft, case, f"p_{name}", pressure, _FIELD) if pressure else gas_pressure(draft, case, "with a dew point, a humidity or a cooler")
-    if draft.value(total) > _HIGHEST:
+    if draft.is_above(total, _HIGHEST):
         raise OutOfRange("At this pressure the water content is not saturation pressure over total pressure: at 60 bar it would be a third too low.",
                          hint="Give the water content in percent, measured or from an equation made for line pressure.", field="gas.water_content")
     return draft.step(Step(relations.get("water_from_vapour_pressure"), {"e": vapour, "p": total}, name, _PERCENT))
@@ -74,7 +74,7 @@ def _saturation(draft: Drafting, case: Case, temperature: Quantity, field: str, 
     T = leaves.from_temperature(draft, case, f"T_{tag}", temperature, field)
     if over_ice:
         return _over_ice(draft, T, tag)
-    if temperature.si < _FREEZING:
+    if not draft.is_above(temperature, _FREEZING, or_equal=True):
         raise OutOfRange(f"{temperature.number.text} {temperature.unit.text} lies below freezing: over ice and over supercooled water the pressures differ.",
                          hint="If it was a frost point, say so: 'frost point -20 °C'.", field=field)
     equation = _equation("wagner-pruss")
@@ -119,13 +119,13 @@ def _saturated_at(draft: Drafting, case: Case, temperature: Quantity, pressure: 
 
 
 def _dew_point(draft: Drafting, case: Case, route: Route) -> str:
-    _refuse_above_gas(case, route.get("temperature"))
+    _refuse_above_gas(draft, case, route.get("temperature"))
     return _saturated_at(draft, case, route.get("temperature"), route.get("pressure"), _FIELD, "dew", route.id == "frost_point")
 
 
-def _refuse_above_gas(case: Case, dew: Quantity) -> None:
+def _refuse_above_gas(draft: Drafting, case: Case, dew: Quantity) -> None:
     gas = case.gas.temperature
-    if gas is not None and dew.si > gas.si:
+    if gas is not None and draft.is_above(dew, gas):
         raise OutOfRange(f"The dew point of {dew.number.text} {dew.unit.text} lies above the gas temperature of {gas.number.text} {gas.unit.text}.",
                          hint="A gas cannot be warmer at its dew point than it is; with droplets say 'saturated at' the gas temperature.", field=_FIELD)
 

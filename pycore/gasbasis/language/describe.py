@@ -73,6 +73,29 @@ GAS_CHOICES: Mapping[str, tuple[str, ...]] = {
 }
 GAS_EXAMPLES: Mapping[str, str] = {"temperature": "182 °C", "pressure": "1008 hPa", "oxygen": "9.2 % O2 dry"}
 
+# The parts of the page, each with what to do there; shown when somebody asks.
+PARTS: Mapping[str, str] = {
+    "hold": "Write or paste the concentration as it stands on the certificate, the display or the report, with all it says of its basis. Both 8,3 and "
+            "8.3 are read. What was understood appears below, piece by piece; tap a piece to correct it.",
+    "gas": "Write what is known of the gas the value was measured in: water, oxygen, the cooler, temperature, pressure, the carrier. Only what a step needs is "
+           "asked for, so this may stay empty.",
+    "owe": "Write the unit and the basis the figure has to be on, or take them from a rule-book and change what the permit says otherwise.",
+    "limit": "Write the limit with its own basis; what it leaves open is taken from what you owe. With nothing held, the limit itself is "
+             "read closely: all it could mean is shown.",
+    "figure": "One figure once nothing is open that would change it; until then the range of all that could have been meant.",
+    "doubts": "What the texts leave open and what would change the figure, the one that matters most first. Choose what was meant and note why; nothing is assumed "
+              "in silence. What has no visible effect is only listed.",
+    "steps": "By what factor each correction changed the figure. A correction that should not be there shows here first.",
+    "verdict": "The figure is restated onto the limit's basis and compared under the decision rule that was agreed; none is taken for granted. "
+               "Turned round: what the display shows when the figure stands at the limit.",
+    "working": "Every step with its formula, its numbers, where each comes from and the source, so that somebody else can redo it by hand.",
+    "budget": "How far the figure may be off, from the ± of the inputs, each carried through the whole path. The drawing checks the formula against chance itself.",
+    "pass-on": "The link holds the whole sheet. Who opens it sees your figure, then whether it comes to the same there. A phone reads the QR code with its camera.",
+    "kept": "Sheets stay on this device, under a name or under their figure. What you were working on is kept by itself whenever another sheet takes its place.",
+    "receive": "Paste a link or its code, or choose a file: a sheet, a record, or kept sheets. A record is checked: whether it was changed, and whether it comes to the same here.",
+    "record": "A record seals the sheet as it is now: date, texts, settled doubts, steps, sources, uncertainty and verdict. To correct one, amend it: the new record names the old.",
+    "compare": "Only what differs is listed. Each difference is carried from the other sheet into this one, alone, to see what it does to the figure; then all together.",
+}
 
 def fields_of(side: str) -> Mapping[str, Field]:
     """Every piece a side can have."""

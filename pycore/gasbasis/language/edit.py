@@ -20,7 +20,7 @@ def edit(text: str, side: str, field: str, to: str) -> str:
     known = fields_of(side)
     if field not in known:
         raise NotUnderstood(f"There is no piece '{field}'.", hint=f"Pieces: {', '.join(known)}.", field=side)
-    before, problems = _read(text, side)
+    before, problems = read_side(text, side)
     pieces = [piece for piece in before.pieces if piece.field == field]
     wanted = to.strip()
     changed = _replaced(text, pieces, wanted) if pieces else _appended(text, wanted)
@@ -28,7 +28,8 @@ def edit(text: str, side: str, field: str, to: str) -> str:
     return changed
 
 
-def _read(text: str, side: str) -> tuple[Statement | Gas, tuple[CoreError, ...]]:
+def read_side(text: str, side: str) -> tuple[Statement | Gas, tuple[CoreError, ...]]:
+    """The text of a side as its own reader takes it, with what it could not read."""
     return _READERS[side](text) if side in _READERS else read_statement(text, side)
 
 
@@ -62,7 +63,7 @@ def _appended(text: str, wanted: str) -> str:
 
 def _verify(text: str, side: str, field: str, wanted: str, problems_before: int) -> None:
     """The changed text has the piece, or has it no more, and nothing in it became unreadable."""
-    record, problems = _read(text, side)
+    record, problems = read_side(text, side)
     has = any(piece.field == field for piece in record.pieces)
     if bool(wanted) != has:
         described = fields_of(side)[field]

@@ -4,6 +4,7 @@ from __future__ import annotations
 from gasbasis import __version__, facts
 from gasbasis.errors import NotUnderstood
 from gasbasis.language import species
+from gasbasis.language.describe import PARTS
 from gasbasis.language.units import GROUPS, unit
 
 CAUTIONS = (
@@ -24,6 +25,7 @@ def catalogue() -> dict:
         "rule_books": [_rule_book(book) for book in facts.rule_books()],
         "sources": [{"id": source.id, "title": source.title, "edition": source.edition, "read": source.read} for source in facts.sources().values()],
         "cautions": list(CAUTIONS),
+        "help": dict(PARTS),
     }
 
 

@@ -9,22 +9,19 @@ import math
 from dataclasses import dataclass, replace
 from typing import Callable
 
-from gasbasis.calculation.case import WAYS
 from gasbasis.calculation.leaves import SIDE_TITLES
 from gasbasis.calculation.outcomes import QUICK_BOUND
 from gasbasis.calculation.rules import find_rule
 from gasbasis.errors import CoreError
 from gasbasis.language.basis import Gas, Number, Piece, Quantity, Statement
-from gasbasis.language.describe import FIELDS, GAS_TITLES
-from gasbasis.language.edit import edit
-from gasbasis.language.gas import read_gas
+from gasbasis.language.describe import GAS_TITLES, fields_of
+from gasbasis.language.edit import edit, read_side
 from gasbasis.language.numbers import significant
-from gasbasis.language.statement import read_statement
 from gasbasis.language.units import unit
 from gasbasis.records.restated import restated
 from gasbasis.records.sheet import Sheet
 
-_SIDES = ("hold", "gas", "owe", "limit")
+_SIDES = ("sample", "prepared", "hold", "gas", "emission", "owe", "limit")
 _DIGITS = 4
 _NOTHING = "not stated"
 _SAME = 1e-9                           # relative: below it a figure was not moved
@@ -59,7 +56,6 @@ def differences(mine: Sheet, theirs: Sheet) -> tuple[Difference, ...]:
     found: list[Difference] = []
     for side in _SIDES:
         found.extend(_side_differences(side, mine, theirs))
-    found.extend(_whole_line(side, mine, theirs) for side in WAYS if getattr(mine, side).strip() != getattr(theirs, side).strip())
     if mine.rule_book != theirs.rule_book:
         found.append(Difference("rule_book", "rule-book", _book(mine), _book(theirs), lambda sheet: replace(sheet, rule_book=theirs.rule_book)))
     for doubt in sorted({*mine.settled, *theirs.settled}):
@@ -73,7 +69,7 @@ def _side_differences(side: str, mine: Sheet, theirs: Sheet) -> list[Difference]
     one, other = getattr(mine, side), getattr(theirs, side)
     if one.strip() == other.strip():
         return []
-    before, after = _read(one, side), _read(other, side)
+    before, after = read_side(one, side), read_side(other, side)
     parts = _parts_of((before[0], after[0]))
     fields = [field for field in parts if _meaning(before[0], parts[field]) != _meaning(after[0], parts[field])]
     if not before[1] and not after[1]:
@@ -92,7 +88,8 @@ def _whole_line(side: str, mine: Sheet, theirs: Sheet) -> Difference:
 
 def _piece_difference(side: str, field: str, before: Statement | Gas, after: Statement | Gas) -> Difference:
     texts = [_text(record, field) for record in (before, after)]
-    title = GAS_TITLES.get(field, FIELDS[field].title) if side == "gas" else FIELDS[field].title
+    described = fields_of(side).get(field)
+    title = GAS_TITLES.get(field) if side == "gas" and field in GAS_TITLES else described.title if described else field.replace("_", " ")
 
     def carry(sheet: Sheet) -> Sheet:
         return replace(sheet, **{side: edit(getattr(sheet, side), side, field, texts[1])})
@@ -108,13 +105,9 @@ def _leads_there(found: list[Difference], mine: Sheet, side: str, wanted: Statem
             whole = difference.carry(whole)
     except CoreError:
         return False
-    record, problems = _read(getattr(whole, side), side)
+    record, problems = read_side(getattr(whole, side), side)
     fields = sorted({piece.field for piece in (*record.pieces, *wanted.pieces)})
     return not problems and _meaning(record, fields) == _meaning(wanted, fields)
-
-
-def _read(text: str, side: str) -> tuple[Statement | Gas, tuple[CoreError, ...]]:
-    return read_gas(text) if side == "gas" else read_statement(text, side)
 
 
 def _text(record: Statement | Gas, field: str) -> str:
@@ -169,7 +162,8 @@ def _settling(doubt: str, reading: str | None) -> Callable[[Sheet], Sheet]:
 
 def _doubt_title(doubt: str) -> str:
     side, _, field = doubt.partition(".")
-    title = FIELDS[field].title if field in FIELDS else field.replace("_", " ")
+    described = fields_of(side).get(field)
+    title = described.title if described else field.replace("_", " ")
     return f"{SIDE_TITLES.get(side, side)}: {title} settled as"
 
 

@@ -4,8 +4,6 @@ from __future__ import annotations
 import textwrap
 
 _WIDTH = 78
-_SIDE_TITLES = {"hold": "You hold", "gas": "It was in", "owe": "You owe", "limit": "Limit", "sample": "The sample", "prepared": "The prepared gas",
-                "emission": "The emission"}
 _READ = {"memory": "from memory, not from the document", "secondary": "read in a copy", "abstract": "abstract only", "convention": "", "primary": ""}
 
 
@@ -41,11 +39,9 @@ def _figure(record: dict) -> list[str]:
 
 def _texts(record: dict) -> list[str]:
     lines = ["AS TYPED, AND AS UNDERSTOOD"]
-    for side, title in _SIDE_TITLES.items():
-        text = record["sheet"].get(side, "")
-        if text.strip():
-            lines += _wrapped(f"{title}: {text}")
-            lines += _wrapped("; ".join(f"{piece['title']} = {piece['text']}" for piece in record["understood"][side]), "    ")
+    for line in record["texts"]:
+        lines += _wrapped(f"{line['title']}: {line['typed']}")
+        lines += _wrapped("; ".join(f"{piece['title']} = {piece['text']}" for piece in line["understood"]), "    ")
     if record["rule_book"]:
         book = record["rule_book"]
         lines += _wrapped(f"Rule-book: {', '.join(filter(None, (book['title'], book['clause'], _READ.get(book['read'], ''), book['note'])))}")
@@ -55,7 +51,7 @@ def _texts(record: dict) -> list[str]:
 def _doubts(record: dict) -> list[str]:
     lines = [line for doubt in record["settled"] for line in _wrapped(_settled(doubt), "  ")]
     lines += [line for doubt in record["left_open"] for line in _wrapped(f"left open: {doubt['side']}, {doubt['title']} ({doubt['effect']}): {'; '.join(doubt['readings'])}", "  ")]
-    lines += [line for doubt in record["no_visible_effect"] for line in _wrapped(f"no visible effect: {doubt['side']}, {doubt['title']}: {doubt.get('effect', '')}", "  ")]
+    lines += [line for doubt in record["no_visible_effect"] for line in _wrapped(_unseen(doubt), "  ")]
     return ["DOUBTS", *lines] if lines else []
 
 
@@ -63,6 +59,11 @@ def _settled(doubt: dict) -> str:
     because = f"usual: {doubt['usual_because']}" if doubt["usual_because"] else doubt["source"]
     note = f" - {doubt['note']}" if doubt["note"] else ""
     return f"settled: {doubt['side']}, {doubt['title']} = {doubt['reading']} ({because}){note}"
+
+
+def _unseen(doubt: dict) -> str:
+    computed = f"; computed as {doubt['computed_as']}" if doubt["computed_as"] else ""
+    return f"not asked: {doubt['side']}, {doubt['title']}: {doubt['effect']}{computed}"
 
 
 def _worth(record: dict) -> list[str]:

@@ -11,7 +11,7 @@ from gasbasis.records.sheet import read_sheet, write_sheet
 
 MOST_SHEETS = 1_000                    # in one portion of a file of kept sheets
 _FORMS = "a gasbasis link, its code, or the text of a record that was saved as a file"
-_LINK = re.compile(r"(?:#|%(?:25)*23)\s*[0-9]\s*[tz]|^\s*[0-9][tz][A-Za-z0-9_\-\s]{12,}\S*$")
+_LINK = re.compile(r"(?:^\s*|#|%(?:25)*23)[0-9][tz][A-Za-z0-9_-]{6}")
 _WRITTEN = re.compile(r"[0-9].*[A-Za-z%µ]")
 
 

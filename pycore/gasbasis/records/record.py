@@ -12,7 +12,7 @@ from datetime import datetime
 
 from gasbasis import __version__, facts
 from gasbasis.errors import CoreError, Missing, NotUnderstood
-from gasbasis.calculation.case import WAYS
+from gasbasis.calculation.leaves import SIDE_TITLES
 from gasbasis.calculation.rules import find_rule
 from gasbasis.calculation.verdict import RULES
 from gasbasis.records.catalogue import CAUTIONS
@@ -21,7 +21,7 @@ from gasbasis.records.restated import restated
 from gasbasis.records.sheet import Sheet, read_sheet, write_sheet
 
 KIND, SCHEMA = "gasbasis record", 1
-_SIDES = ("hold", "gas", "owe", "limit")
+_SIDES = ("sample", "prepared", "hold", "gas", "emission", "owe", "limit")
 _OPEN_SCHEMAS = (SCHEMA,)
 _LONGEST_NOTE = 4_000                  # characters
 _ALIKE = ("figure", "spread", "verdict")     # what a recomputation has to agree with, word for word
@@ -52,7 +52,7 @@ def make_record(sheet: Sheet, about: About, take_usual: bool = False) -> dict:
         "made_at": about.made_at, "made_by": about.made_by.strip(), "notes": about.notes.strip(),
         "amends": {"checksum": about.amends, "why": about.why.strip()} if about.amends else None,
         "sheet": write_sheet(whole), "link_code": _link_code(whole, found),
-        **_results(found), "understood": {side: _pieces(found[side]) for side in (*_SIDES, *WAYS) if side in found},
+        **_results(found), "texts": _texts(whole, found),
         "rule_book": _rule_book(whole), "settled": _doubts(found, "settled"), "left_open": _doubts(found, "open"),
         "no_visible_effect": _doubts(found, "calm"), "working": [_step(step) for step in found["working"]],
         "sources": _sources(found), "cautions": list(CAUTIONS)})
@@ -170,8 +170,11 @@ def _title(source: str) -> str:
     return ", ".join(filter(None, (known.title, known.edition))) if known else source
 
 
-def _pieces(side: dict) -> list[dict]:
-    return [{"title": piece["title"], "text": piece["text"], "state": piece["state"]} for piece in side["pieces"]]
+def _texts(sheet: Sheet, found: dict) -> list[dict]:
+    """Each line of the sheet as it was typed, with the pieces it was read into."""
+    return [{"side": side, "title": SIDE_TITLES[side], "typed": getattr(sheet, side),
+             "understood": [{"title": piece["title"], "text": piece["text"], "state": piece["state"]} for piece in found[side]["pieces"]]}
+            for side in _SIDES if getattr(sheet, side).strip()]
 
 
 def _rule_book(sheet: Sheet) -> dict | None:
@@ -180,15 +183,22 @@ def _rule_book(sheet: Sheet) -> dict | None:
 
 
 def _doubts(found: dict, state: str) -> list[dict]:
-    return [_doubt(doubt) for doubt in found["doubts"] if doubt["state"] == state]
+    return [_doubt(doubt, found) for doubt in found["doubts"] if doubt["state"] == state]
 
 
-def _doubt(doubt: dict) -> dict:
+def _doubt(doubt: dict, found: dict) -> dict:
     taken = next((reading for reading in doubt["readings"] if reading["id"] == doubt["chosen"]), None)
     row = {"side": doubt["side_title"], "title": doubt["title"], "question": doubt["question"]}
+    if doubt["state"] == "calm":
+        return row | {"effect": doubt["effect_text"], "computed_as": _computed_as(doubt["readings"]) if found["figure"] else ""}
     if taken is None:
         return row | {"effect": doubt["effect_text"], "readings": [" ".join(filter(None, (reading["label"], reading["text"]))) for reading in doubt["readings"]]}
     return row | {"reading": taken["label"], "source": _title(taken["source"]), "usual_because": taken["usual_because"], "note": doubt["note"]}
+
+
+def _computed_as(readings: list[dict]) -> str:
+    """The reading that a figure is computed with where none shows in it: the usual, else the first (see settle_calm)."""
+    return next((reading for reading in readings if reading["usual_because"]), readings[0])["label"]
 
 
 def _step(step: dict) -> dict:

@@ -5,11 +5,11 @@ import importlib
 import importlib.metadata
 import json
 import os
-import pkgutil
 import zipfile
 from pathlib import Path
 
 from compiled import DROP_DOCSTRINGS, KEEP_DOCSTRINGS, as_compiled, pack, record
+from rooms import modules_for_the_page
 
 SITE = Path("/lib/python3.14/site-packages")
 TAG = "cp314-none-any"
@@ -70,13 +70,11 @@ def _unmet_requirements(package: str) -> list[str]:
 def _unimportable(package: str) -> list[str]:
     """Each module of the package whose import fails, with the reason."""
     failures = []
-    for module in pkgutil.walk_packages(importlib.import_module(package).__path__, package + "."):
-        if module.name.endswith(".__main__"):
-            continue
+    for name in modules_for_the_page(package):
         try:
-            importlib.import_module(module.name)
+            importlib.import_module(name)
         except Exception as error:      # all failures belong into one list, whatever their kind
-            failures.append(f"import {module.name}: {error!r}")
+            failures.append(f"import {name}: {error!r}")
     return failures
 
 

@@ -9,9 +9,10 @@ import builtins
 import importlib
 import json
 import os
-import pkgutil
 import sys
 import zipfile
+
+from rooms import modules_for_the_page
 
 TRIMMED = "/lib/python314.zip"
 
@@ -30,9 +31,8 @@ def run_tests(argument: str) -> str:
 
 
 def _import_all(package: str) -> None:
-    for module in pkgutil.walk_packages(importlib.import_module(package).__path__, package + "."):
-        if not module.name.endswith(".__main__"):
-            importlib.import_module(module.name)
+    for name in modules_for_the_page(package):
+        importlib.import_module(name)
 
 
 def _append_rest(rest: str) -> None:

@@ -3,8 +3,9 @@ from __future__ import annotations
 
 import importlib
 import json
-import pkgutil
 import sys
+
+from rooms import modules_for_the_page
 
 STDLIB = "/lib/python314.zip/"
 
@@ -13,9 +14,8 @@ def trace(argument: str) -> str:
     """Import everything of the core, answer the requests, import the kept modules. Returns file names in the zip."""
     job = json.loads(argument)
     package = job["package"]
-    for module in pkgutil.walk_packages(importlib.import_module(package).__path__, package + "."):
-        if not module.name.endswith(".__main__"):
-            importlib.import_module(module.name)
+    for name in modules_for_the_page(package):
+        importlib.import_module(name)
     answer = importlib.import_module(f"{package}.answer").answer
     for request in job["requests"]:
         answer(json.dumps(request))

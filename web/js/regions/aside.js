@@ -7,9 +7,9 @@ export function mountAside(root, dispatch) {
   return ({ aside }) => {
     if (aside === shown) return;
     shown = aside;
-    root.hidden = !aside;
+    root.classList.toggle("hidden", !aside);        // out of sight, not out of the tree: what is said here later is read out
     say(part(root, "message"), aside?.text ?? "");
-    part(root, "actions").replaceChildren(...[...(aside?.actions ?? []), ["Close", { type: "aside" }]].map(([label, intention]) =>
+    part(root, "actions").replaceChildren(...(aside ? [...aside.actions, ["Close", { type: "aside" }]] : []).map(([label, intention]) =>
       button(label, () => { dispatch({ type: "aside" }); dispatch(intention); }, "bare")));
   };
 }

@@ -3,6 +3,7 @@ import { nameOf } from "../acts/kept.js";
 import { handOverFile } from "../hand-over.js";
 import { sameSheet } from "../kept-store.js";
 import { button, element, keyed, part, say } from "../page.js";
+import { isEmpty } from "../state.js";
 
 const SHOWN = 30;                      // more only when asked for: a thousand rows stay quick
 
@@ -53,7 +54,7 @@ export function mountKept(root, dispatch, { proposed, file }) {
     node.row = row;
     const [title, held, rest] = node.firstElementChild.children, about = node.children[1];
     say(title, nameOf(row).slice(1, -1));
-    say(held, [row.sheet.hold || row.sheet.limit, row.sheet.owe].filter(Boolean).join(" → "));
+    say(held, [row.sheet.hold || row.sheet.sample || row.sheet.prepared || row.sheet.limit, row.sheet.owe].filter(Boolean).join(" → "));
     say(rest, [row.sheet.title ? row.figure : "", new Date(row.changed).toLocaleString([], { dateStyle: "medium", timeStyle: "short" }), now?.row?.id === row.id ? "on the page" : ""].filter(Boolean).join(" · "));
     about.setAttribute("aria-label", `More about ${nameOf(row)}`);
     about.setAttribute("aria-expanded", String(open === row.id));
@@ -67,8 +68,7 @@ export function mountKept(root, dispatch, { proposed, file }) {
     name.placeholder = proposed();     // a sheet without a name is listed by its figure
     namedFor = of;
     if (root.hidden) { open = ""; return; }
-    const empty = !["hold", "gas", "owe", "limit"].some((side) => state.sheet[side].trim());
-    form.hidden = empty;
+    form.hidden = isEmpty(state.sheet);
     offer();
     say(part(root, "problem"), state.rowsProblem);
     part(root, "problem").hidden = !state.rowsProblem;
@@ -82,6 +82,6 @@ const texts = new WeakMap();
 
 /** All of a row that can be searched, made once. */
 function textOf(row) {
-  if (!texts.has(row)) texts.set(row, [row.sheet.title, row.sheet.hold, row.sheet.gas, row.sheet.owe, row.sheet.limit, row.figure].join(" ").toLowerCase());
+  if (!texts.has(row)) texts.set(row, [...Object.values(row.sheet).filter((text) => typeof text === "string"), row.figure].join(" ").toLowerCase());
   return texts.get(row);
 }

@@ -1,10 +1,10 @@
 /** A record on paper: one A4 for a plain sheet. Every word comes from the record; the formulas are drawn where the page has them. */
-import { equation } from "../formula.js";
+import { equation, placeEquation } from "../formula.js";
 import { linkOf } from "../link.js";
 import { element } from "../page.js";
 import { qrCode } from "./qr.js";
 
-const SIDES = [["hold", "You hold"], ["gas", "It was in"], ["owe", "You owe"], ["limit", "Limit"]];
+const COLUMNS = ["input", "value", "u", "sensitivity", "contribution", "share"];
 const READ = { memory: "from memory, not from the document", secondary: "read in a copy", abstract: "abstract only" };
 
 /** @param {HTMLElement} paper @param {any} record @param {any[]} working the steps with their formula trees */
@@ -49,13 +49,12 @@ function figure({ figure: found, spread, warnings, verdict, challenge }) {
   return node;
 }
 
-function typed({ sheet, understood, rule_book }) {
+function typed({ texts, rule_book }) {
   const list = element("dl");
-  for (const [side, title] of SIDES) {
-    if (!sheet[side]?.trim()) continue;
+  for (const line of texts) {
     const words = element("dd");
-    words.append(element("span", sheet[side], "typed"), element("small", understood[side].map((piece) => `${piece.title} = ${piece.text}`).join("; ")));
-    list.append(element("dt", title), words);
+    words.append(element("span", line.typed, "typed"), element("small", line.understood.map((piece) => `${piece.title} = ${piece.text}`).join("; ")));
+    list.append(element("dt", line.title), words);
   }
   if (rule_book) list.append(element("dt", "Rule-book"), element("dd", joined(rule_book.title, rule_book.clause, READ[rule_book.read], rule_book.note)));
   return block("As typed, and as understood", list);
@@ -65,18 +64,22 @@ function doubts({ settled, left_open, no_visible_effect }) {
   const entries = [
     ...settled.map((one) => [`${one.side}, ${one.title}`, `${one.reading} (${one.usual_because ? `usual: ${one.usual_because}` : one.source})${one.note ? ` - ${one.note}` : ""}`]),
     ...left_open.map((one) => [`${one.side}, ${one.title}`, `left open${one.effect ? `, ${one.effect}` : ""}: ${one.readings.join("; ")}`]),
-    ...no_visible_effect.map((one) => [`${one.side}, ${one.title}`, one.effect]),
+    ...no_visible_effect.map((one) => [`${one.side}, ${one.title}`, [one.effect, one.computed_as && `computed as ${one.computed_as}`].filter(Boolean).join("; ")]),
   ];
   return entries.length ? [block("Doubts", rows(entries))] : [];
 }
 
 function worth({ uncertainty }) {
   if (!uncertainty) return [];
-  const { standard_text, unit_text, expanded_text, coverage_text, relative_text } = uncertainty, table = element("table"), body = element("tbody"), top = element("tr");
-  top.append(...["input", "value", "u", "sensitivity", "contribution", "share"].map((name) => { const cell = element("th", name); cell.scope = "col"; return cell; }));
+  const { standard_text, unit_text, expanded_text, coverage_text, relative_text } = uncertainty, table = element("table", "", "stacks"), body = element("tbody"), top = element("tr");
+  top.append(...COLUMNS.map((name) => { const cell = element("th", name); cell.scope = "col"; return cell; }));
   for (const row of uncertainty.rows) {
     const line = element("tr");
-    line.append(...[row.input, row.value_text, `${row.standard_text} (${row.distribution})`, row.sensitivity_text, row.contribution_text, row.share_text].map((text) => element("td", text)));
+    line.append(...[row.input, row.value_text, `${row.standard_text} (${row.distribution})`, row.sensitivity_text, row.contribution_text, row.share_text].map((text, index) => {
+      const cell = element("td", text);
+      cell.dataset.label = COLUMNS[index];
+      return cell;
+    }));
     body.append(line);
   }
   const topped = element("thead");
@@ -111,7 +114,7 @@ function formulas(...drawn) {
 
 function formula(symbol, tree, text) {
   const node = element("div", "", "formula");
-  node.append(equation(symbol, tree, text));
+  placeEquation(node, equation(symbol, tree, text));
   return node;
 }
 

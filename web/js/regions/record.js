@@ -11,6 +11,7 @@ export function mountRecord(root, dispatch) {
   const tell = async (doing) => say(told, await doing);
   let shown = null, files = null, amending = null;
   by.value = keptBy();
+  root.querySelector('[data-action="print-record"]').hidden = !("print" in globalThis);      // some browsers inside other apps cannot
   form.addEventListener("submit", (event) => { event.preventDefault(); dispatch({ type: "record", by: by.value, notes: notes.value, why: why.value }); });
   act("print-record", () => print());
   act("save-record", () => tell(handOverFile(files.json, `${files.name}.json`, "application/json")));

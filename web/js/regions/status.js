@@ -36,13 +36,20 @@ function offlineWords(offline) {
 function detail(offline) {
   if (!offline) return "";
   const when = offline.checkedAt ? `, checked ${new Date(offline.checkedAt).toLocaleString()}` : "";
-  if (offline.phase === "ready" && !offline.message) return `Ready offline: ${offline.done} of ${offline.of} files kept and verified${when}.`;
+  const promise = offline.persistent === null ? "" : offline.persistent ? " The browser promised not to clear them." : " The browser may clear them when space is short: installing the page helps.";
+  if (offline.phase === "ready" && !offline.message) return `Ready offline, version ${offline.version}: ${offline.done} of ${offline.of} files kept and verified${when}.${promise}`;
   return offline.message;
+}
+
+/** What the waiting version changes that this one does not know: whether numbers do stands first. */
+function news(changes, version) {
+  const index = changes.findIndex((entry) => entry.version === version);
+  return changes.slice(0, index < 0 ? 1 : index).map((entry) => `${entry.version}: ${entry.numbers}; ${entry.text}. `).join("");
 }
 
 function noticeWords({ core, offline, notice }) {
   if (core.phase === "failed") return { message: `The core could not start. ${core.message} What you typed is kept.`, actions: [["Try again", { type: "restart" }]] };
   if (notice) return { message: notice, actions: [["Close", { type: "notice", text: "" }]] };
-  if (offline?.update) return { message: "A newer version is ready. Your inputs stay.", actions: [["Change to it", { type: "update" }], ["Later", { type: "later" }]] };
+  if (offline?.update) return { message: `A newer version is ready. ${news(offline.changes, core.version)}Your inputs stay.`, actions: [["Change to it", { type: "update" }], ["Later", { type: "later" }]] };
   return { message: "", actions: [] };
 }

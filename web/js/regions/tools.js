@@ -13,6 +13,7 @@ export function mountTools(top, more, dispatch) {
   for (const opens of more.querySelectorAll("[data-panel]")) opens.addEventListener("click", () => { show(false); dispatch({ type: "panel", name: /** @type {any} */ (opens).dataset.panel }); });
   act(more, "clear", () => { show(false); dispatch({ type: "clear" }); });
   act(more, "print", () => print());
+  more.querySelector('[data-action="print"]').hidden = !("print" in globalThis);
   more.addEventListener("keydown", (event) => { if (event.key === "Escape") { show(false); toggle.focus(); } });
   mountTheme(part(more, "theme"));
   const back = button("Back to the sheet before", () => { show(false); dispatch({ type: "back" }); });

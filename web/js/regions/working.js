@@ -1,5 +1,5 @@
 /** Every step from held to owed, so that a checker can redo it by hand; drawn, and as text to copy. */
-import { equation, symbol } from "../formula.js";
+import { equation, placeEquation, symbol } from "../formula.js";
 import { clonedElement, element, keyed, part, say } from "../page.js";
 
 /** @param {HTMLElement} root */
@@ -35,8 +35,8 @@ function draw(step) {
   say(node.querySelector(".factor"), step.factor_text);
   const result = part(node, "result");
   if (step.formula) {
-    part(node, "formula").append(equation(step.result.symbol, step.formula, step.formula_text));
-    part(node, "substitution").append(equation(step.result.symbol, step.substitution, step.substitution_text));
+    placeEquation(part(node, "formula"), equation(step.result.symbol, step.formula, step.formula_text));
+    placeEquation(part(node, "substitution"), equation(step.result.symbol, step.substitution, step.substitution_text));
     result.hidden = false;
     result.append("= ", step.result.text);
   } else {

@@ -22,6 +22,12 @@ FROZEN = [
     ("1z00g3CA7lMwNlUAGuiXawyUyQGK5eWXKOTmF6UqlGQk5oGsBzoRKAUyAeTYpEoFqP90lEAhkloan5mXnJmXWpQIijAlqIWY8QpxrLcu2KlAlwJVYonZYJCjawEv8e6cr0",
      {"schema": 1, "hold": "SO2 35 mg/Nm3", "owe": "ppm by volume", "limit": "not more than 20 ppm", "rule_book": "eu_incineration",
       "settled": {"hold.conditions": "273.15K-101.3kPa", "hold.reported_as": "SO2"}}, ""),
+    ("1z00q1ZKBpJA5xga6Zkq5KUrHNqoYKqgqqOQmwr0KVDUwARooA8ofg2NjUz0LBR8dBQiFQz1DAyNYIqMTCBOS0osyoeIWFoA4x_mCqBNIGvBPgI7F9MnSrUAaqhhdk1",
+     {"schema": 1, "sample": "Hg 12.5 ng ± 5 %, meter 1204.3 L to 1324.8 L, Y 1.012, meter 24 °C, barometer 98.2 kPa, dry", "owe": "µg/m3 at 0 °C, 101.325 kPa"}, ""),
+    ("1z00q1ZKBZJpOfnlQL1AoJBrrJ-BxUyIjWBTgTpBBgC9BdKigMsVqDpAFmen62co1QIA2ks7t00",
+     {"schema": 1, "hold": "NOx 100 mg/m3 at 273.15 K, 101.325 kPa, dry", "owe": "kg/h", "emission": "flow 10000 m3/h at 273.15 K, 101.325 kPa, dry"}, ""),
+    ("1z00gwiBbE-qVIA6WEepACiWXJmTmZeSWgR0k4KlpQXIhToKRqYGCrk--rnAVAG0F9NJOgpAGRNzAqqUagEcvjbkj2",
+     {"schema": 1, "prepared": "cylinder NO 998 ppm, 250 mL/min at 0 °C, 101.325 kPa, in 4750 mL/min at 0 °C, 101.325 kPa", "owe": "ppm by volume"}, ""),
     ("1z0eMS4wMDAgcGcvTAg3AMFfJAZgHF8kCqUPxekFqkUJKRCozrvJKixOQSHYXknMTS4lQFE5CpIAML0vV9gFpLgEyfzLxUBSNgjJeWlObmKdUCAAu04aoc1",
      {"schema": 1, "hold": "1 ng/m3", "owe": "pg/L", "title": "Line 2, autumn", "notes": {"hold.water": "per the contract, clause 4"}}, "1.000 pg/L"),
 ]

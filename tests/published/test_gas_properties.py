@@ -89,3 +89,9 @@ def test_a_column_as_hot_as_the_gas_is_refused() -> None:
 def test_the_components_are_sent_for_editing() -> None:
     piece = next(piece for piece in restate(gas="by mass: CH4 90,5; N2 9")["gas"]["pieces"] if piece["field"] == "matrix_gas")
     assert piece["components"] == [{"name": "CH4", "text": "90,5"}, {"name": "N2", "text": "9"}] and piece["by_mass"] and piece["total_text"] == "99.5"
+
+
+@pytest.mark.parametrize("gas", ["CH4 93, Xq 7", "CH4 93, C2H6 5, foo 2", "CH4 93 %, C2H6 5 %, foo 2 %, real gas"])
+def test_an_unknown_component_is_named(gas: str) -> None:
+    problems = restate("Hg 100 ppb by mass", "ug/m3 at 20 °C, 1 atm", gas=gas)["problems"]
+    assert len(problems) == 1 and ("'Xq'" in problems[0]["message"] or "'foo'" in problems[0]["message"]) and "no component" in problems[0]["message"], problems

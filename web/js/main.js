@@ -39,8 +39,8 @@ const first = { ways: [], sheet: { ...emptySheet(), ...typedAlready(sheetInHand(
   notice: "", aside: null, panel: "", rows: null, rowsProblem: "", passed: null, received: null, record: null, amends: null, compared: null,
   core: { phase: "loading", stage: "waiting", done: 0, of: 0, version: "", message: "" }, offline: null };
 const state = createState(first);
-const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); if (now.phase === "failed") mendCopy(); } });
 let mending = false, offline = null, resting = 0, ready = false, focusNext = null;
+const core = createCore({ onState: (now) => { state.change({ core: now }); if (now.phase === "ready") onReady(); if (now.phase === "failed") mendCopy(); } });
 
 /** What was typed before this script ran counts; where nothing was, what was kept. */
 function typedAlready(kept) {

@@ -74,6 +74,13 @@ def _composition(reader) -> bool:
         species, quantity, end = component
         parts.append((species, quantity))
         place = _SEPARATOR.match(reader.text, end).end()
+    stranger = _STRANGER.match(reader.text, place) if parts and end > begin and any(species.id not in _FLUE for species, _ in parts) else None
+    if stranger and stranger["name"] not in _OTHER_LETTERS:
+        reader.refuse(NotUnderstood(f"'{stranger['name']}' in the composition is no component that is known.",
+                                    hint="Type its formula, e.g. C3H8, or its usual name."),
+                      stranger.start("name"), stranger.end())
+        reader.place = stranger.end()
+        return True
     if len(parts) < 2 or all(species.id in _FLUE for species, _ in parts):
         return False
     behind = re.compile(r"[\s,(]*" + _BY_MASS.pattern + r"\)?", re.IGNORECASE).match(reader.text, end)
@@ -91,6 +98,11 @@ def _composition(reader) -> bool:
     else:
         reader.take("matrix_gas", MatrixGas("composition", composition=tuple(parts), by_mass=by_mass), start, end)
     return True
+
+
+# A word with a bare share behind it, in the row of components; Y, A and M have clauses of their own.
+_STRANGER = re.compile(r"(?P<name>[A-Za-z][A-Za-z0-9-]{0,20})\s?[:=]?\s?\d+(?:[.,]\d+)?\s?%?\s*(?=[,;]|$)")
+_OTHER_LETTERS = ("Y", "A", "M")
 
 
 def _component(reader, place: int) -> tuple[Species, Quantity, int] | None:

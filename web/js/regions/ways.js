@@ -26,7 +26,7 @@ export function mountWays(root, sectionOf, dispatch) {
     words.append(element("b", title), " ", element("span", of, "quiet"));
     node.append(words);
     box.append(node);
-    sectionOf(side).querySelector("header").append(button("Take it out", () => { dispatch({ type: "leave-way", side }); opens.focus(); }, "bare"));
+    part(sectionOf(side), "pieces").append(button("Take it out", () => { dispatch({ type: "leave-way", side }); opens.focus(); }, "bare"));
     return [side, node];
   }));
   box.addEventListener("keydown", (event) => { if (event.key === "Escape") { show(false); opens.focus(); } });

@@ -5,7 +5,6 @@ import json
 
 import pytest
 
-from gasbasis.__main__ import main
 from gasbasis.answer import answer
 from gasbasis.language.emission import read_emission
 from gasbasis.language.prepared import read_prepared
@@ -162,7 +161,9 @@ def test_the_answer_has_these_sides_only_where_they_are_wanted() -> None:
     assert {"blank", "recovery", "leak"} <= {entry["field"] for entry in side["adds"]}
 
 
+@pytest.mark.native    # the page has no command line
 def test_from_a_terminal(capsys, tmp_path) -> None:
+    from gasbasis.__main__ import main
     assert main(["restate", "--sample", SHEET.sample, "--owe", "ug/m3 at 20 °C, 101.325 kPa, dry"]) == 0
     assert capsys.readouterr().out.startswith("Hg 0.1076 µg/m³")          # 12.4/120.5 x 101.325/98.2 x 297.15/293.15
     file = tmp_path / "sheet.json"
